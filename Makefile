@@ -1,0 +1,24 @@
+# Two commands from nothing: `make demo` and `make test`. Both set up what they need first.
+SETUP_INPUTS := pyproject.toml .ci/setup $(wildcard hatch_build.py package.json package-lock.json)
+
+.PHONY: help demo test selftest clean
+help:
+	@echo "make demo      check and build the demo region, serve the app, booklet and desk here"
+	@echo "make test      run every test"
+	@echo "make selftest  lint, types, tests, two builds compared"
+	@echo "make clean     remove what was built; tables and records stay"
+
+demo: .venv/.ready-demo
+	@exec .venv/bin/beltbook desk --demo
+
+test: .venv/.ready-test
+	@exec .venv/bin/python -m pytest
+
+selftest: .venv/.ready-test
+	@exec .venv/bin/python -m builder selftest
+
+clean:
+	find site_out -mindepth 1 -not -name README.md -delete
+
+.venv/.ready-%: $(SETUP_INPUTS)
+	@.ci/setup $*

@@ -1,0 +1,7 @@
+"""Runs the command line as `python -m builder`."""
+
+import sys
+
+from builder.cli import main
+
+sys.exit(main())
