@@ -1,0 +1,1 @@
+"""Pure arithmetic: numbers in, numbers out, each with its source."""
