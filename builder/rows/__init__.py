@@ -1,0 +1,29 @@
+"""Reads YAML and CSV into rows that know their file, line and column, strictly.
+
+Nothing here raises on a wrong file: every function hands back what could be read and a list of
+problems. Refused are double keys, anchors and aliases, tags, deep or huge files, and plain words
+that YAML turns into something else (yes, no, on, off, dates, 012, 1:30, 1_000, 0x1F, ~).
+"""
+
+from builder.rows.csv_rows import Sheet, csv_text, parse_csv, read_csv
+from builder.rows.files import read_text
+from builder.rows.nodes import Items, Node, Row, Scalar, Value, descend, plain
+from builder.rows.yaml_rows import is_turned, parse_yaml, read_yaml
+
+__all__ = [
+    "Items",
+    "Node",
+    "Row",
+    "Scalar",
+    "Sheet",
+    "Value",
+    "csv_text",
+    "descend",
+    "is_turned",
+    "parse_csv",
+    "parse_yaml",
+    "plain",
+    "read_csv",
+    "read_text",
+    "read_yaml",
+]
