@@ -38,21 +38,22 @@ const IN_USE = 'tables_in_use ';
  *
  * @param {import('./schema.js').Store} store
  * @param {RegionOffer} offer
- * @param {{fetchText: (path: string) => Promise<string>,
- *          checkProbes: (pack: object) => {agreed: boolean}}} means
+ * @param {{readFile: (path: string) => Promise<string>,
+ *          checkProbes: (pack: object) => object[]}} means  readFile of files.js; checkProbes of core
  * @returns {Promise<AtStart>}
  */
 export async function tablesAtStart(store, offer, means) {
   const inUse = await tablesInUse(store, offer.id);
   const done = (state, more = {}) => ({ state, tables: inUse, offered: null, fault: null, unproved: null, ...more });
   if (inUse && inUse.hash === offer.pack.hash) {
-    await addLanguages(store, inUse, offer, means.fetchText);
+    await addLanguages(store, inUse, offer, means.readFile);
     return done('ready');
   }
   let fresh = null;
   try {
-    fresh = (await loadTables(store, offer.pack.hash)) ?? (await fetchTables(offer, means.fetchText));
-    if (!means.checkProbes(fresh.pack).agreed) throw new Fault('probes');
+    fresh = (await loadTables(store, offer.pack.hash)) ?? (await fetchTables(offer, means.readFile));
+    const differences = means.checkProbes(fresh.pack);
+    if (differences.length > 0) throw new Fault('probes', { cause: differences });
     await keepTables(store, fresh);
   } catch (error) {
     const fault = error instanceof Fault ? error : new Fault('unread', { cause: error });
@@ -84,17 +85,17 @@ export function tablesOf(store, site) {
 }
 
 /** Fetches pack and texts and compares each with its hash. @param {RegionOffer} offer */
-export async function fetchTables(offer, fetchText) {
-  const pack = JSON.parse(await fetchWhole(offer.pack, fetchText));
+export async function fetchTables(offer, readFile) {
+  const pack = JSON.parse(await fetchWhole(offer.pack, readFile));
   const texts = {};
   for (const [language, part] of Object.entries(offer.texts)) {
-    texts[language] = JSON.parse(await fetchWhole(part, fetchText));
+    texts[language] = JSON.parse(await fetchWhole(part, readFile));
   }
   return { hash: offer.pack.hash, region_id: offer.id, edition: offer.edition, date: offer.date, pack, texts };
 }
 
-async function fetchWhole(part, fetchText) {
-  const text = await fetchText(part.path);
+async function fetchWhole(part, readFile) {
+  const text = await readFile(part.path);
   // Web Cryptography exists only on https and loopback; elsewhere only the probes speak.
   if (globalThis.crypto?.subtle) {
     const digest = await crypto.subtle.digest('SHA-256', new TextEncoder().encode(text));
@@ -104,11 +105,11 @@ async function fetchWhole(part, fetchText) {
 }
 
 /** A later app version may know another language for the same edition. */
-async function addLanguages(store, inUse, offer, fetchText) {
+async function addLanguages(store, inUse, offer, readFile) {
   const missing = Object.keys(offer.texts).filter((language) => !(language in inUse.texts));
   if (missing.length === 0) return;
   for (const language of missing) {
-    inUse.texts[language] = JSON.parse(await fetchWhole(offer.texts[language], fetchText));
+    inUse.texts[language] = JSON.parse(await fetchWhole(offer.texts[language], readFile));
   }
   await keepTables(store, inUse);
 }

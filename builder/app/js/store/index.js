@@ -3,14 +3,15 @@
  * on the disk, or with a Fault whose `.code` has its sentence in words under `store`.
  *
  *   const store = await openStore();                    // Fault 'none' where nothing can be stored
- *   const site = newSite(tables, { observer });          // tables: {region_id, edition, pack_hash}
+ *   const site = newSite(tables, { observer });          // tables as in tables.js
  *   const writer = siteWriter(store, site, { onSaved, onFault });
  *   writer.write({ ...site, name: 'Pad 7' });            // at each change; writer.unsaved, writer.flush()
  *   await listSites(store); await loadSite(store, id); await removeSite(store, id);
  *   await listSides(store, id); await settleSide(store, key, 'mine' | 'theirs');
  *   await addPhoto(store, site.id, { bytes, type });     // photosOf, captionPhoto, removePhoto, photoUrl
  *   await getSetting(store, 'mode'); await setSetting(store, 'mode', 'sun');
- *   const start = await tablesAtStart(store, offer, { fetchText, checkProbes });   // see editions.js
+ *   const [offer] = await readRegions(); await readWords('en');
+ *   const start = await tablesAtStart(store, offer, { readFile, checkProbes });   // see editions.js
  *   await useTables(store, start.offered);               // the person decided
  *   await tablesOf(store, site);                         // the edition that scored an old record
  *   const versions = await watchVersions({ onWaiting, onReplaced, onOffline });    // versions.use()
@@ -21,6 +22,7 @@ import { opened } from './tx.js';
 
 export { fetchTables, tablesAtStart, tablesInUse, tablesOf, useTables } from './editions.js';
 export { Fault, faultOf } from './faults.js';
+export { readFile, readRegions, readWords } from './files.js';
 export { newId } from './ids.js';
 export { addPhoto, captionPhoto, photosOf, photoUrl, removePhoto } from './photos.js';
 export { askForRoom, storageLasts } from './room.js';

@@ -11,7 +11,7 @@ export const FORMAT = 1;
 /**
  * A new, unsaved site check with nothing answered. Saving it gives revision 1.
  *
- * @param {{region_id: string, edition: string, pack_hash: string}} tables  what will score it
+ * @param {{region_id: string, edition: string, hash: string}} tables  what will score it
  * @param {object} [start]  fields to start from: name, observer, unit_id, role …
  */
 export function newSite(tables, start = {}) {
@@ -22,7 +22,7 @@ export function newSite(tables, start = {}) {
     revision: 0,
     region_id: tables.region_id,
     edition: tables.edition,
-    pack_hash: tables.pack_hash,
+    pack_hash: tables.hash,
     unit_id: null,
     unit_name: '',
     role: 'inside',

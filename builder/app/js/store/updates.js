@@ -12,7 +12,7 @@
  */
 export async function watchVersions(tell) {
   const workers = globalThis.navigator?.serviceWorker;
-  if (!workers || !globalThis.isSecureContext) return null;
+  if (!workers || !globalThis.isSecureContext || !location.protocol.startsWith('http')) return null;
   const wasControlled = Boolean(workers.controller);
   workers.addEventListener('controllerchange', () => (wasControlled ? tell.onReplaced() : tell.onOffline?.()));
   const registration = await workers.register(workerUrl(), { updateViaCache: 'none' });
@@ -33,7 +33,11 @@ export async function watchVersions(tell) {
   };
 }
 
-/** sw.js lies at the root of the site, three folders above this module. */
+/**
+ * sw.js lies beside the page, at the root of the site. The page's policy lets a script address pass
+ * only through a named policy.
+ */
 function workerUrl() {
-  return new URL('../../../sw.js', import.meta.url);
+  const url = new URL('sw.js', document.baseURI).href;
+  return globalThis.trustedTypes?.createPolicy('beltbook', { createScriptURL: () => url }).createScriptURL('') ?? url;
 }

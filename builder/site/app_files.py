@@ -1,0 +1,105 @@
+"""Reads the field app's sources and makes of them the files a browser gets."""
+
+from __future__ import annotations
+
+import json
+import posixpath
+import re
+from collections.abc import Iterable, Mapping
+from pathlib import Path
+
+from builder.rows import plain, read_yaml
+from builder.site.icons import icons
+from builder.site.slim import slim_script, slim_style
+from builder.site.specifiers import imports_of, relative_imports
+
+APP = Path(__file__).resolve().parent.parent / "app"
+MAIN = "app/js/main.js"
+FONT_URL = re.compile(r"""url\(\s*["']?([^"')]+\.woff2)["']?\s*\)""")
+
+
+def app_files(app: Path = APP) -> dict[str, bytes]:
+    """Path in the site → content, for everything under app/.
+
+    app  the source folder: js, css, words, vendor
+
+    Raises FileNotFoundError where the libraries have not been fetched, KeyError for an import of a
+    library that is not among them, ValueError for a words file with problems.
+    """
+    libraries = _libraries(app)
+    scripts = {
+        f"app/{path.relative_to(app).as_posix()}": slim_script(path.read_text("utf-8"))
+        for path in sorted((app / "js").rglob("*.js"))
+    }
+    needed = _needed(scripts.values(), app, libraries)
+    scripts.update({path: (app / path.removeprefix("app/")).read_text("utf-8") for path in needed})
+    files = {
+        path: relative_imports(text, path, libraries).encode() for path, text in scripts.items()
+    }
+    for path in sorted((app / "css").glob("*.css")):
+        style = slim_style(path.read_text("utf-8"))
+        files[f"app/css/{path.name}"] = style.encode()
+        files.update(_fonts(style, app))
+    files.update({f"app/words/{name}": text for name, text in _words(app).items()})
+    files.update({f"app/icons/{name}": picture for name, picture in icons().items()})
+    files["app/vendor/licences.txt"] = (app / "vendor" / "licences.txt").read_bytes()
+    return files
+
+
+def loaded_at_start(files: Mapping[str, bytes], first: str = MAIN) -> list[str]:
+    """Every script the first one needs before it runs, each after those that need it."""
+    order: list[str] = []
+    waiting = [first]
+    while waiting:
+        path = waiting.pop(0)
+        if path in order or path not in files:
+            continue
+        order.append(path)
+        text = files[path].decode()
+        here = posixpath.dirname(path)
+        for name in imports_of(re.sub(r"import\s*\(", "later(", text)):
+            waiting.append(posixpath.normpath(posixpath.join(here, name)))
+    return order
+
+
+def _libraries(app: Path) -> dict[str, str]:
+    """Library name → its path in the site."""
+    listed = app / "vendor" / "imports.json"
+    if not listed.is_file():
+        raise FileNotFoundError(
+            f"the app's libraries are not in {listed.parent}; python hatch_build.py fetches them"
+        )
+    names: dict[str, str] = json.loads(listed.read_text("utf-8"))
+    return {name: f"app/vendor/{file}" for name, file in names.items()}
+
+
+def _needed(scripts: Iterable[str], app: Path, libraries: Mapping[str, str]) -> list[str]:
+    """Paths of the libraries that the scripts import, and that those import in turn."""
+    found: list[str] = []
+    texts = list(scripts)
+    while texts:
+        for name in imports_of(texts.pop()):
+            path = None if name.startswith(".") else libraries[name]
+            if path and path not in found:
+                found.append(path)
+                texts.append((app / path.removeprefix("app/")).read_text("utf-8"))
+    return sorted(found)
+
+
+def _fonts(style: str, app: Path) -> dict[str, bytes]:
+    """The font files a style sheet names."""
+    names = {posixpath.basename(url) for url in FONT_URL.findall(style)}
+    folder = app / "vendor" / "fonts"
+    return {f"app/vendor/fonts/{name}": (folder / name).read_bytes() for name in sorted(names)}
+
+
+def _words(app: Path) -> dict[str, bytes]:
+    """The words of each language as JSON."""
+    files = {}
+    for path in sorted((app / "words").glob("*.yaml")):
+        root, problems = read_yaml(path, path.name)
+        if root is None or problems:
+            raise ValueError(f"{path.name}: {problems[0].wrong if problems else 'empty'}")
+        text = json.dumps(plain(root), ensure_ascii=False, sort_keys=True, separators=(",", ":"))
+        files[f"{path.stem}.json"] = text.encode()
+    return files

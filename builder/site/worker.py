@@ -1,0 +1,30 @@
+"""Writes the service worker's first line: the version and every file of it with its hash."""
+
+from __future__ import annotations
+
+import hashlib
+import json
+from collections.abc import Mapping
+
+LOADED_WHEN_ASKED = (".pdf",)  # large, and a phone can do without: not part of the installed version
+NEVER_CACHED = ("sw.js", "field.html")
+
+
+def worker_script(source: str, files: Mapping[str, bytes]) -> str:
+    """sw.js with its list.
+
+    source  sw.js as written by hand, first line a placeholder
+    files   the whole site, path → content
+    """
+    first, rest = source.split("\n", 1)
+    if not first.startswith("const BUILD = "):
+        raise ValueError("sw.js must start with the line the builder replaces: const BUILD = …")
+    hashes = {
+        path: hashlib.sha256(content).hexdigest()
+        for path, content in sorted(files.items())
+        if path not in NEVER_CACHED and not path.endswith(LOADED_WHEN_ASKED)
+    }
+    # The worker's own text counts: a failed install may then never touch the cache in use.
+    version = hashlib.sha256(json.dumps(hashes).encode() + rest.encode()).hexdigest()[:16]
+    build = json.dumps({"version": version, "files": hashes}, separators=(",", ":"))
+    return f"const BUILD = {build};\n{rest}"
