@@ -3,7 +3,7 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
-from dataclasses import dataclass
+from dataclasses import dataclass, field
 from typing import Any
 
 from builder.problems import Place
@@ -20,18 +20,18 @@ class Value:
     text: str
     span: tuple[int, int] = (0, 0)
     quoted: bool = False
-    parent: Row | Items | None = None
+    parent: Row | Items | None = field(default=None, repr=False)
 
 
 @dataclass(slots=True, eq=False)
 class Items:
     """A list of nodes."""
 
-    nodes: list[Node]
+    nodes: list[Node] = field(repr=False)
     at: Place
     span: tuple[int, int] = (0, 0)
     flow: bool = False
-    parent: Row | Items | None = None
+    parent: Row | Items | None = field(default=None, repr=False)
 
     def __iter__(self) -> Iterator[Node]:
         return iter(self.nodes)
@@ -44,12 +44,12 @@ class Items:
 class Row:
     """Named nodes in the order of the file; `keys` holds the place of each name."""
 
-    nodes: dict[str, Node]
-    keys: dict[str, Value]
+    nodes: dict[str, Node] = field(repr=False)
+    keys: dict[str, Value] = field(repr=False)
     at: Place
     span: tuple[int, int] = (0, 0)
     flow: bool = False
-    parent: Row | Items | None = None
+    parent: Row | Items | None = field(default=None, repr=False)
 
     def __contains__(self, name: str) -> bool:
         return name in self.nodes

@@ -8,7 +8,7 @@ from dataclasses import dataclass, field
 from pathlib import Path
 from typing import Any
 
-import yaml
+import yaml  # type: ignore[import-untyped]
 
 from builder.problems import CAUTION, Place, Problem, problem_at
 from builder.rows.files import CHECK, read_text

@@ -1,0 +1,332 @@
+"""A region: all its tables as records, and how they are brought in from a folder."""
+
+from __future__ import annotations
+
+from dataclasses import dataclass, field
+from pathlib import Path
+from typing import Any, TypeVar
+
+from builder.problems import Place, Problem, in_order, nearest, problem_at
+from builder.rows import Items, Node, Row, Sheet, Value, read_csv, read_yaml
+from builder.tables.climate import Month
+from builder.tables.languages import Words
+from builder.tables.occurrence import Occurrence, OccurrenceFile
+from builder.tables.plants import Caution, Group, Plant, PlantsFile
+from builder.tables.production import Production, ProductionFile
+from builder.tables.questions import Question, QuestionsFile, Rule
+from builder.tables.reading import Reader
+from builder.tables.reclaim import ReclaimFile
+from builder.tables.region import CoverScale, Disturbance, RegionHead, SuccessRule
+from builder.tables.seed import Mix, SeedFile
+from builder.tables.shape import Record
+from builder.tables.soils import Soil, SoilsFile
+from builder.tables.sources import Provenance, Source, SourcesFile, provenance_of
+from builder.tables.zones import Zone, ZonesFile
+
+YAML_TABLES: dict[str, type[Record]] = {
+    "region": RegionHead,
+    "zones": ZonesFile,
+    "plants": PlantsFile,
+    "occurrence": OccurrenceFile,
+    "questions": QuestionsFile,
+    "production": ProductionFile,
+    "soils": SoilsFile,
+    "reclaim": ReclaimFile,
+    "seed": SeedFile,
+    "sources": SourcesFile,
+}
+CLIMATE_COLUMNS = ("zone_id", "elevation_m", "month", "tmax_c", "tmin_c", "precip_mm")
+
+
+Named = TypeVar("Named", Zone, Plant, Group, Question)
+
+
+@dataclass(frozen=True)
+class Region:
+    """Everything a region's tables say."""
+
+    head: RegionHead
+    zones: tuple[Zone, ...]
+    plants: tuple[Plant, ...]
+    groups: tuple[Group, ...]
+    occurrence: dict[tuple[str, str], Occurrence]
+    questions: tuple[Question, ...]
+    rules: tuple[Rule, ...]
+    production: dict[str, Production]
+    soils: dict[str, Soil]
+    climate: dict[str, tuple[Month, ...]]
+    reclaim: ReclaimFile
+    mixes: dict[str, Mix]
+    sources: dict[str, Source]
+    words: dict[str, Words]
+    files: dict[str, Any] = field(repr=False)
+
+    @property
+    def id(self) -> str:
+        """The region's stable name."""
+        return self.head.id
+
+    @property
+    def name(self) -> str:
+        """The region's name for people."""
+        return self.head.name
+
+    @property
+    def edition(self) -> str:
+        """The edition every record keeps."""
+        return self.head.edition
+
+    @property
+    def date(self) -> str:
+        """The edition's date, year-month-day."""
+        return self.head.date
+
+    @property
+    def latitude_deg(self) -> float:
+        """Latitude of the region's middle. [degrees]"""
+        return self.head.latitude_deg
+
+    @property
+    def elevation_m(self) -> tuple[float, float]:
+        """Lowest and highest ground. [m]"""
+        return self.head.elevation_m
+
+    @property
+    def units(self) -> str:
+        """Units shown first: metric or us."""
+        return self.head.units
+
+    @property
+    def invented(self) -> bool:
+        """Whether the region is made up."""
+        return self.head.invented
+
+    @property
+    def cover_scale(self) -> CoverScale:
+        """The region's cover scale."""
+        return self.head.cover_scale
+
+    @property
+    def disturbances(self) -> tuple[Disturbance, ...]:
+        """Kinds of disturbance in table order."""
+        return self.head.disturbances
+
+    @property
+    def success_rule(self) -> SuccessRule:
+        """When reclaimed ground counts as done."""
+        return self.head.success_rule
+
+    @property
+    def seeding_methods(self) -> dict[str, float | None]:
+        """Rate factor by method; None where the method is not used."""
+        return self.head.seeding_methods
+
+    @property
+    def cautions(self) -> tuple[Caution, ...]:
+        """The region's own cautions."""
+        return self.head.cautions
+
+    @property
+    def zone_ids(self) -> tuple[str, ...]:
+        """Zone ids in table order."""
+        return tuple(zone.id for zone in self.zones)
+
+    @property
+    def plant_ids(self) -> tuple[str, ...]:
+        """Plant ids in table order."""
+        return tuple(plant.id for plant in self.plants)
+
+    def zone(self, zone_id: str) -> Zone:
+        """The zone of an id. KeyError when there is none."""
+        return _by_id(self.zones, zone_id)
+
+    def plant(self, plant_id: str) -> Plant:
+        """The plant of an id. KeyError when there is none."""
+        return _by_id(self.plants, plant_id)
+
+    def group(self, group_id: str) -> Group:
+        """The group of an id. KeyError when there is none."""
+        return _by_id(self.groups, group_id)
+
+    def question(self, question_id: str) -> Question:
+        """The ground question of an id. KeyError when there is none."""
+        return _by_id(self.questions, question_id)
+
+    def groups_of(self, plant_id: str) -> tuple[Group, ...]:
+        """The groups a plant belongs to, in table order."""
+        return tuple(group for group in self.groups if plant_id in group.members)
+
+    def source_of(self, record: Record | Row, *path: str | int) -> Provenance | None:
+        """Where the figure at a path below a record comes from; the nearest source wins."""
+        return provenance_of(record.row if isinstance(record, Record) else record, *path)
+
+    def source_of_occurrence(self, zone_id: str, plant_id: str) -> Provenance | None:
+        """Where a constancy and cover come from."""
+        return provenance_of(self.files["occurrence"].row, "occurrence", plant_id, zone_id)
+
+
+def _by_id(rows: tuple[Named, ...], wanted: str) -> Named:
+    for row in rows:
+        if row.id == wanted:
+            return row
+    raise KeyError(wanted)
+
+
+@dataclass
+class Loaded:
+    """A region as far as it could be read, and every problem met on the way."""
+
+    folder: Path
+    shown: str
+    region: Region | None
+    problems: list[Problem]
+    roots: dict[str, Row | None] = field(default_factory=dict, repr=False)
+    climate_sheet: Sheet | None = field(default=None, repr=False)
+
+    def declared(self, table: str) -> set[str]:
+        """Ids that stand in a table, read or not, so that one bad row brings no second problem."""
+        return set(declared_ids(self.roots, table))
+
+
+def declared_ids(roots: dict[str, Row | None], table: str) -> dict[str, Place]:
+    """Ids of a table as written, with the first place of each."""
+    found: dict[str, Place] = {}
+    file = "region" if table == "disturbances" else "plants" if table == "groups" else table
+    root = roots.get(file)
+    node: Node | None = root.get(table) if root is not None else None
+    if isinstance(node, Row):
+        return {key: value.at for key, value in node.keys.items() if key != "source"}
+    for row in node if isinstance(node, Items) else ():
+        written = row.get("id") if isinstance(row, Row) else None
+        if isinstance(written, Value) and isinstance(written.value, str):
+            found.setdefault(written.value, written.at)
+    return found
+
+
+def load_region(folder: Path | str) -> Loaded:
+    """Reads a region's folder: records where the tables allow it, and all problems."""
+    folder = Path(folder)
+    shown = str(folder)
+    reader = Reader()
+    roots: dict[str, Row | None] = {}
+    files: dict[str, Any] = {}
+    if not folder.is_dir():
+        wrong = "this is not a folder" if folder.exists() else "there is no such folder"
+        problem = problem_at(
+            Place(shown, 1, 1), "readable", wrong, "A region is a folder of tables under keydata/."
+        )
+        return Loaded(folder, shown, None, [problem])
+    for name, made in YAML_TABLES.items():
+        path = folder / f"{name}.yaml"
+        root, problems = read_yaml(path, str(path), folder)
+        reader.problems += problems
+        roots[name] = root
+        files[name] = reader.record(made, root, f"{name}.yaml") if root is not None else None
+    path = folder / "climate.csv"
+    sheet, problems = read_csv(path, str(path), folder)
+    reader.problems += problems
+    climate = _climate(sheet, reader) if sheet is not None else {}
+    words = _languages(folder, reader)
+    region = None
+    if all(record is not None for record in files.values()) and sheet is not None:
+        region = _assembled(files, climate, words, reader)
+    return Loaded(folder, shown, region, in_order(reader.problems), roots, sheet)
+
+
+def _assembled(
+    files: dict[str, Any],
+    climate: dict[str, tuple[Month, ...]],
+    words: dict[str, Words],
+    reader: Reader,
+) -> Region:
+    return Region(
+        head=files["region"],
+        zones=files["zones"].zones,
+        plants=files["plants"].plants,
+        groups=files["plants"].groups,
+        occurrence=_occurrences(files["occurrence"], files["region"], reader),
+        questions=files["questions"].questions,
+        rules=files["questions"].rules,
+        production=files["production"].production,
+        soils=files["soils"].soils,
+        climate=climate,
+        reclaim=files["reclaim"],
+        mixes=files["seed"].mixes,
+        sources=files["sources"].sources,
+        words=words,
+        files=files,
+    )
+
+
+def _climate(sheet: Sheet, reader: Reader) -> dict[str, tuple[Month, ...]]:
+    missing = [name for name in CLIMATE_COLUMNS if name not in sheet.columns]
+    if missing:
+        reader.problems.append(
+            problem_at(
+                sheet.at,
+                "missing-field",
+                f"climate.csv has no column {', '.join(missing)}",
+                "The columns are " + ",".join(CLIMATE_COLUMNS) + ".",
+            )
+        )
+        return {}
+    notes = Row(dict(sheet.notes), {}, sheet.at)
+    months: dict[str, list[Month]] = {}
+    for row in sheet.rows:
+        row.parent = notes
+        month = reader.record(Month, row, "climate.csv")
+        if month is not None:
+            months.setdefault(month.zone_id, []).append(month)
+    return {zone: tuple(sorted(rows, key=lambda each: each.month)) for zone, rows in months.items()}
+
+
+def _languages(folder: Path, reader: Reader) -> dict[str, Words]:
+    found: dict[str, Words] = {}
+    for path in sorted((folder / "words").glob("*.yaml")):
+        root, problems = read_yaml(path, str(path), folder)
+        reader.problems += problems
+        words = reader.record(Words, root, path.name) if root is not None else None
+        if words is not None:
+            found[path.stem] = words
+    return found
+
+
+def _occurrences(
+    table: OccurrenceFile, head: RegionHead, reader: Reader
+) -> dict[tuple[str, str], Occurrence]:
+    """Percent pairs, or class codes turned into the middle of their class."""
+    constancy = {each.code: (each.low_pct + each.high_pct) / 2 for each in head.constancy_classes}
+    cover = {each.code: each.mid_pct for each in head.cover_scale.classes}
+    found = {}
+    for plant_id, zones in table.occurrence.items():
+        for zone_id, pair in zones.items():
+            path = ("occurrence", plant_id, zone_id)
+            numbers = [
+                _number(written, codes, table.place(*path, position), what, reader)
+                for position, (written, codes, what) in enumerate(
+                    zip(pair, (constancy, cover), ("constancy", "cover"), strict=True)
+                )
+            ]
+            if numbers[0] is not None and numbers[1] is not None:
+                found[zone_id, plant_id] = Occurrence(
+                    zone_id, plant_id, numbers[0] / 100, numbers[1], table.place(*path)
+                )
+    return found
+
+
+def _number(
+    written: float | str, codes: dict[str, float], place: Place, what: str, reader: Reader
+) -> float | None:
+    if not isinstance(written, str):
+        return written
+    if written in codes:
+        return codes[written]
+    reader.problems.append(
+        problem_at(
+            place,
+            "known-word",
+            f'"{written}" is no {what} class of this region',
+            nearest(written, codes),
+        )
+    )
+    return None
