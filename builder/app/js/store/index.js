@@ -4,7 +4,7 @@
  *
  *   const store = await openStore();                    // Fault 'none' where nothing can be stored
  *   const site = newSite(tables, { observer });          // tables as in tables.js
- *   const writer = siteWriter(store, site, { onSaved, onFault });
+ *   const writer = siteWriter(store, site, { onSaved, onFault, onLittleRoom });
  *   writer.write({ ...site, name: 'Pad 7' });            // at each change; writer.unsaved, writer.flush()
  *   await listSites(store); await loadSite(store, id); await removeSite(store, id);
  *   await listSides(store, id); await settleSide(store, key, 'mine' | 'theirs');
@@ -15,7 +15,7 @@
  *   await useTables(store, start.offered);               // the person decided
  *   await tablesOf(store, site);                         // the edition that scored an old record
  *   const versions = await watchVersions({ onWaiting, onReplaced, onOffline });    // versions.use()
- *   await askForRoom();                                  // {persisted, nearly_full, …}
+ *   await askForRoom(store);                             // {persisted, nearly_full}, once at start
  */
 import { connections } from './schema.js';
 import { opened } from './tx.js';
