@@ -1,0 +1,210 @@
+"""Ground questions, soil by feel, cover hoops, cautions and sources as finished text."""
+
+from dataclasses import dataclass
+
+from markupsafe import Markup
+
+from builder.drawings.hoops import hoop
+from builder.formulas.soil_by_feel import FEEL_PATH, feel_water
+from builder.formulas.soil_water import layer_water_mm
+from builder.tables import Question
+from builder.tables.sources import stated_sources
+from builder.views.look import Look
+from builder.views.plants import Warn, plant_warns, warn
+
+ORGANIC_PCT = 2.5
+"""Organic matter assumed for water held by a hand texture; the source's own middle value."""
+
+
+@dataclass(frozen=True)
+class AnswerView:
+    """One answer and the belts it speaks for and against, strongest first."""
+
+    label: str
+    speaks_for: str
+    speaks_against: str
+
+
+@dataclass(frozen=True)
+class QuestionView:
+    """One ground question."""
+
+    id: str
+    ask: str
+    digs: str
+    why: str
+    act: str
+    answers: tuple[AnswerView, ...]
+
+
+@dataclass(frozen=True)
+class FeelStep:
+    """One question of the hand test and where its answers lead."""
+
+    number: str
+    ask: str
+    ways: tuple[tuple[str, str, bool], ...]
+
+
+@dataclass(frozen=True)
+class TextureRow:
+    """A texture class and the water it holds."""
+
+    name: str
+    held: str
+
+
+@dataclass(frozen=True)
+class HoopView:
+    """One cover class and its hoop."""
+
+    code: str
+    label: str
+    hoop: Markup
+
+
+@dataclass(frozen=True)
+class PlantWarn:
+    """A plant with a caution for people."""
+
+    name: str
+    latin: str
+    warns: tuple[Warn, ...]
+
+
+@dataclass(frozen=True)
+class SourceView:
+    """One source and how it was read."""
+
+    text: str
+    read: str
+
+
+def question_view(look: Look, question: Question) -> QuestionView:
+    """A ground question's view."""
+    words = look.region.words.get(look.phrases.language)
+    own = words.questions.get(question.id) if words is not None else None
+    labels = own.answers if own is not None else {}
+    return QuestionView(
+        id=question.id,
+        ask=own.ask if own is not None else question.ask,
+        digs=(
+            look.phrases.say("questions.digs", depth=look.figures.depth(question.digs_cm))
+            if question.digs_cm
+            else ""
+        ),
+        why=(own.why if own is not None else "") or question.why,
+        act=(own.act if own is not None else "") or question.act,
+        answers=tuple(
+            AnswerView(
+                labels.get(answer.value, answer.label),
+                _letters(look, answer.zone_log_odds, 1),
+                _letters(look, answer.zone_log_odds, -1),
+            )
+            for answer in question.answers
+        ),
+    )
+
+
+def _letters(look: Look, log_odds: dict[str, float], sign: int) -> str:
+    """Letters of the zones an answer speaks for (sign 1) or against, strongest first."""
+    order = {zone.id: place for place, zone in enumerate(look.region.zones)}
+    chosen = [(zone, nats) for zone, nats in log_odds.items() if nats * sign > 0]
+    chosen.sort(key=lambda each: (-abs(each[1]), order[each[0]]))
+    return " ".join(look.zones[zone].letter for zone, _ in chosen)
+
+
+def questions(look: Look) -> list[QuestionView]:
+    """All ground questions that are asked, in table order."""
+    return [question_view(look, each) for each in look.region.questions if each.asked]
+
+
+def feel_steps(look: Look) -> list[FeelStep]:
+    """The hand test as numbered steps; an answer leads to a step or to a texture."""
+    numbers = {name: str(place) for place, name in enumerate(FEEL_PATH, start=1)}
+    steps = []
+    for name, ways in FEEL_PATH.items():
+        rows = []
+        for answer, there in ways.items():
+            label = look.phrases.say(f"feel.{name}.{answer}")
+            ends = there.startswith("=")
+            goal = (
+                look.phrases.named("texture", there[1:].replace(" ", "_"))
+                if ends
+                else numbers[there]
+            )
+            rows.append((label, goal, ends))
+        steps.append(FeelStep(numbers[name], look.phrases.say(f"feel.{name}.ask"), tuple(rows)))
+    return steps
+
+
+def texture_rows(look: Look) -> list[TextureRow]:
+    """Water that 10 cm of each texture holds for plants, without stones."""
+    classes = [
+        there[1:] for ways in FEEL_PATH.values() for there in ways.values() if there[0] == "="
+    ]
+    rows = []
+    for name in classes:
+        held = layer_water_mm(10, feel_water(name, ORGANIC_PCT).available)
+        rows.append(
+            TextureRow(
+                look.phrases.named("texture", name.replace(" ", "_")), look.figures.rain(held)
+            )
+        )
+    return rows
+
+
+def hoops(look: Look, size: float = 12) -> list[HoopView]:
+    """The region's cover classes with a hoop of the middle of each."""
+    words = look.region.words.get(look.phrases.language)
+    labels = words.cover_classes if words is not None else {}
+    return [
+        HoopView(
+            each.code,
+            labels.get(each.code, each.label),
+            Markup(hoop(each.mid_pct / 100, each.label, look.palette, size)),
+        )
+        for each in look.region.cover_scale.classes
+    ]
+
+
+def people_warns(look: Look) -> list[PlantWarn]:
+    """Plants that can hurt people, deadly ones first."""
+    rows = []
+    for place, plant in enumerate(look.region.plants):
+        own = [each for each in plant_warns(look, plant) if each.people]
+        if own:
+            worst = min(_rank(each) for each in plant.cautions if each.who == "people")
+            name = look.plant_name(plant.id)
+            rows.append((worst, place, PlantWarn(name, plant.scientific, tuple(own))))
+    return [row for _, _, row in sorted(rows, key=lambda each: each[:2])]
+
+
+def _rank(caution: object) -> int:
+    return ("deadly", "harm", "care").index(getattr(caution, "level", "care"))
+
+
+def region_warns(look: Look) -> list[Warn]:
+    """The region's own cautions, worst first."""
+    words = look.region.words.get(look.phrases.language)
+    texts = words.region_cautions if words is not None else {}
+    ordered = sorted(enumerate(look.region.cautions), key=lambda each: (_rank(each[1]), each[0]))
+    return [warn(look, each, texts.get(each.id or "", "")) for _, each in ordered]
+
+
+def sources(look: Look) -> list[SourceView]:
+    """Every source the tables name, by key."""
+    return [
+        SourceView(each.text, look.phrases.named("read", each.read.replace(" ", "_")))
+        for _, each in sorted(look.region.sources.items())
+    ]
+
+
+def demo_share(look: Look) -> tuple[int, int]:
+    """How many statements of source say demo, and how many there are in all."""
+    stated = [
+        str(value.value)
+        for record in look.region.files.values()
+        for value in stated_sources(record.row)
+    ]
+    return sum(text == "demo" for text in stated), len(stated)

@@ -1,0 +1,470 @@
+"""A zone's page as finished text and drawings."""
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+
+from markupsafe import Markup
+
+from builder.drawings.bars import constancy_bar, range_bar
+from builder.drawings.slope import heights
+from builder.drawings.year import months, year
+from builder.formulas.seeding import pls_kg_ha
+from builder.formulas.soil_water import profile_water
+from builder.formulas.texture import texture_class
+from builder.formulas.year import SiteYear, site_year
+from builder.tables import Plant, Record, Zone
+from builder.tables.shape import columns
+from builder.views.figures import MINUS
+from builder.views.look import Look
+
+PLANTS_SHOWN = 13
+WEEDS_SHOWN = 14
+COMMON_FROM = 0.4
+
+
+@dataclass(frozen=True)
+class PlantRow:
+    """One plant of a zone: how often, how much."""
+
+    plant_id: str
+    name: str
+    latin: str
+    form: Markup
+    bar: Markup
+    in_100: str
+    hoop: Markup
+    cover: str
+    weed: bool
+
+
+@dataclass(frozen=True)
+class Kin:
+    """A neighbour and how to tell it apart."""
+
+    zone_id: str
+    tab: Markup
+    short: str
+    tell: str
+
+
+@dataclass(frozen=True)
+class Line:
+    """A run-in heading and its text."""
+
+    head: str
+    text: str
+
+
+@dataclass(frozen=True)
+class Damage:
+    """What to do after one kind of disturbance."""
+
+    name: str
+    do: str
+    avoid: str
+    unlikely: bool
+
+
+@dataclass(frozen=True)
+class MixRow:
+    """One plant of a mix."""
+
+    name: str
+    seeds: str
+    weight: str
+
+
+@dataclass(frozen=True)
+class MixView:
+    """A zone's seed mix."""
+
+    method: str
+    rows: tuple[MixRow, ...]
+    total_seeds: str
+    total_weight: str
+    seeds_head: str
+    weight_head: str
+    other_method: str
+    planted: tuple[str, ...]
+    none: bool
+
+
+@dataclass(frozen=True)
+class ZoneView:
+    """Everything the pages say about one zone."""
+
+    id: str
+    letter: str
+    name: str
+    short: str
+    one_line: str
+    tab: Markup
+    heights: Markup
+    band: str
+    why_here: str
+    limits: str
+    kin: tuple[Kin, ...]
+    plants: tuple[PlantRow, ...]
+    more_plants: str
+    growth: Markup
+    growth_unit: str
+    growth_rule: str
+    year: Markup
+    year_line: str
+    rain_unit: str
+    soil: tuple[str, ...]
+    after: tuple[Line, ...]
+    life: tuple[Line, ...]
+    weeds: str
+    cautions: str
+    work: tuple[Line, ...]
+    months: Markup
+    months_line: str
+    damage: tuple[Damage, ...]
+    mix: MixView
+
+
+def zone_view(look: Look, zone_id: str) -> ZoneView:
+    """A zone's view."""
+    zone = look.zones[zone_id]
+    say = look.phrases.say
+    notes = look.region.reclaim.zones[zone_id]
+    rows = plant_rows(look, zone_id)
+    growth, growth_rule = _growth(look, zone)
+    year_picture, year_line = _year(look, zone)
+    strip, strip_line = _months(look, zone)
+    return ZoneView(
+        id=zone.id,
+        letter=zone.letter,
+        name=look.zone_name(zone_id),
+        short=look.zone_short(zone_id),
+        one_line=look.zone_line(zone_id),
+        tab=look.tab(zone_id, 13),
+        heights=Markup(
+            heights(
+                look.region.zones,
+                look.region.elevation_m,
+                say("zone.heights_title", name=zone.short, band=look.figures.heights(*zone.band_m)),
+                zone_id,
+                look.palette,
+            )
+        ),
+        band=band_line(look, zone),
+        why_here=zone.why_here,
+        limits=say("zone.limits", list=", ".join(zone.limits)) if zone.limits else "",
+        kin=tuple(
+            Kin(other, look.tab(other), look.zone_short(other), tell)
+            for other, tell in zone.told_from.items()
+        ),
+        plants=tuple(rows[:PLANTS_SHOWN]),
+        more_plants=_more(look, zone_id, rows[PLANTS_SHOWN:]),
+        growth=growth,
+        growth_unit=say("zone.growth_unit", unit=look.figures.yield_unit),
+        growth_rule=growth_rule,
+        year=year_picture,
+        year_line=year_line,
+        rain_unit=look.figures.rain_unit,
+        soil=_soil(look, zone_id),
+        after=(
+            Line(say("zone.remnants"), zone.remnant_clues),
+            Line(say("zone.absence"), zone.what_absence_means),
+        ),
+        life=tuple(
+            Line(look.phrases.named(f"life.{kind}", name), text)
+            for kind, group in (("wildlife", notes.wildlife), ("soil", notes.soil_life))
+            for name, text in group.items()
+        ),
+        weeds=_weeds(look, zone_id),
+        cautions=notes.cautions,
+        work=tuple(
+            Line(say(f"work.{name}"), getattr(notes, name))
+            for name in ("topsoil", "seedbed", "method", "protection", "fertiliser", "fails")
+            if getattr(notes, name)
+        ),
+        months=strip,
+        months_line=strip_line,
+        damage=_damage(look, zone_id),
+        mix=mix_view(look, zone_id),
+    )
+
+
+def band_line(look: Look, zone: Zone) -> str:
+    """The band and how slopes shift it, in one sentence."""
+    say, figures = look.phrases.say, look.figures
+    parts = [figures.heights(*zone.band_m) + "."]
+    for name, shift in (
+        ("north", zone.north_shift_m),
+        ("south", zone.south_shift_m),
+        ("exposed", zone.exposed_shift_m),
+    ):
+        if shift:
+            way = "lower" if shift < 0 else "higher"
+            parts.append(say(f"zone.{name}_{way}", metres=figures.height(abs(shift))))
+    return " ".join(parts)
+
+
+def plant_rows(look: Look, zone_id: str) -> list[PlantRow]:
+    """The zone's plants, most constant first; ties keep the order of the plant table."""
+    belt = look.belts[zone_id]
+    found = look.region.occurrence
+    order = {plant.id: place for place, plant in enumerate(look.region.plants)}
+    here = [each for (zone, _), each in found.items() if zone == zone_id]
+    here.sort(key=lambda each: (-each.constancy, order[each.plant_id]))
+    rows = []
+    for each in here:
+        plant = look.plants[each.plant_id]
+        in_100 = look.figures.plain(each.constancy * 100)
+        rows.append(
+            PlantRow(
+                plant_id=plant.id,
+                name=look.plant_name(plant.id),
+                latin=plant.scientific,
+                form=look.form(plant.form),
+                bar=Markup(
+                    constancy_bar(
+                        each.constancy, belt, look.phrases.say("zone.of_100", count=in_100),
+                        look.palette,
+                    )
+                ),
+                in_100=in_100,
+                hoop=look.hoop(each.cover_pct),
+                cover=look.figures.short(each.cover_pct, 1),
+                weed=plant.weed in ("ruderal", "invasive"),
+            )
+        )  # fmt: skip
+    return rows
+
+
+def _more(look: Look, zone_id: str, rest: list[PlantRow]) -> str:
+    """The plants after the chart's last, by name, as far as they stand in a fifth of the plots."""
+    found = look.region.occurrence
+    names = [
+        row.name
+        for row in rest
+        if found[zone_id, row.plant_id].constancy >= COMMON_FROM and not row.weed
+    ]
+    return look.phrases.say("zone.also", list=", ".join(names)) if names else ""
+
+
+def _growth(look: Look, zone: Zone) -> tuple[Markup, str]:
+    """The expected range and the rule of thumb for a dry or wet year."""
+    made = look.region.production[zone.id]
+    figures, say = look.figures, look.phrases.say
+    three = (made.low_kg_ha, made.normal_kg_ha, made.high_kg_ha)
+    highest = max(each.high_kg_ha for each in look.region.production.values())
+    top = figures.yield_number(highest) * 1.08
+    labels = tuple(figures.yields(value) for value in three)
+    title = say(
+        "zone.growth_title", low=labels[0], normal=labels[1], high=labels[2],
+        unit=figures.yield_unit,
+    )  # fmt: skip
+    drawing = range_bar(
+        tuple(figures.yield_number(value) for value in three),  # type: ignore[arg-type]
+        top,
+        labels,  # type: ignore[arg-type]
+        look.belts[zone.id],
+        title,
+        palette=look.palette,
+        height=14,
+    )
+    parts = []
+    if made.rain_response:
+        way = "less" if made.rain_response > 0 else "more"
+        parts.append(
+            say(
+                f"zone.rain_rule_{way}",
+                percent=figures.short(abs(made.rain_response) * 10, 1),
+                months=figures.months(made.rain_months),
+            )
+        )
+    if made.warmth_response_per_c:
+        way = "more" if made.warmth_response_per_c > 0 else "less"
+        parts.append(
+            say(
+                f"zone.warmth_rule_{way}",
+                percent=figures.short(abs(made.warmth_response_per_c) * 100, 1),
+                months=figures.months(made.warmth_months),
+            )
+        )
+    if made.clip.every > 1:
+        parts.append(say("zone.clip", area=figures.short(made.clip.area_m2), every=made.clip.every))
+    return Markup(drawing), " ".join(parts)
+
+
+def zone_year(look: Look, zone_id: str) -> SiteYear:
+    """The year at the zone's own height, from its climate and soil."""
+    normals = look.region.climate[zone_id]
+    return site_year(
+        look.region.latitude_deg,
+        [month.tmax_c for month in normals],
+        [month.tmin_c for month in normals],
+        [month.precip_mm for month in normals],
+        held_mm(look, zone_id),
+        water_table_cm(look, zone_id),
+    )
+
+
+def water_table_cm(look: Look, zone_id: str) -> float | None:
+    """Usual depth to ground water; 0 where the zone's roots always reach it. [cm]"""
+    table = look.region.soils[zone_id].water_table_cm
+    if table is not None:
+        return table[1]
+    return 0.0 if look.zones[zone_id].ground_water_in_reach else None
+
+
+def held_mm(look: Look, zone_id: str) -> float:
+    """Water the soil holds within reach of roots. [mm]"""
+    soil = look.region.soils[zone_id]
+    return sum(
+        layer.mm
+        for layer in profile_water(
+            [_plain(layer) for layer in soil.layers],
+            soil.rooting_depth_cm,
+            [_plain(each) for each in look.region.files["soils"].peat_classes],
+        )
+    )
+
+
+def _plain(record: Record) -> dict[str, object]:
+    """A record's fields by name, for the formulas."""
+    return {item.name: getattr(record, item.name) for _, _, item in columns(type(record))}
+
+
+def _year(look: Look, zone: Zone) -> tuple[Markup, str]:
+    normals = look.region.climate[zone.id]
+    figures, say = look.figures, look.phrases.say
+    growing = zone_year(look, zone.id).growing
+    total = sum(month.precip_mm for month in normals)
+    names = figures.months(growing) if growing else say("months.none")
+    line = say("zone.year_line", rain=figures.rain(total), months=names, days=zone.frost_free_days)
+    drawing = year(
+        [figures.rain_scale(month.precip_mm) for month in normals],
+        [figures.warmth(month.mean_c) for month in normals],
+        growing,
+        look.belts[zone.id],
+        look.phrases.words("months.initials"),
+        line,
+        look.palette,
+        height=24,
+    )
+    return Markup(drawing), line
+
+
+def _soil(look: Look, zone_id: str) -> tuple[str, ...]:
+    """The soil in a sentence or two: what it is, how deep, how much water it holds."""
+    soil = look.region.soils[zone_id]
+    figures, say = look.figures, look.phrases.say
+    held = held_mm(look, zone_id)
+    parts = [
+        say(
+            "zone.soil",
+            summary=soil.summary[:1].upper() + soil.summary[1:],
+            depth=figures.depth(soil.rooting_depth_cm),
+            held=figures.rain(held),
+        )
+    ]
+    parts.append(say("zone.restriction", text=soil.restriction))
+    top = soil.layers[0]
+    if top.kind == "mineral" and top.sand_pct is not None:
+        name = texture_class(top.sand_pct, top.silt_pct or 0, top.clay_pct or 0)
+        parts.append(
+            say(
+                "zone.topsoil",
+                texture=look.phrases.named("texture", name.replace(" ", "_")),
+                depth=figures.depth(top.bottom_cm),
+                ph=figures.short(top.ph, 1),
+            )
+        )
+    return tuple(parts)
+
+
+def _weeds(look: Look, zone_id: str) -> str:
+    """Weeds whose table range reaches this zone or a neighbour, most constant first."""
+    zone = look.zones[zone_id]
+    near = [zone_id, *zone.neighbours]
+    found = look.region.occurrence
+    scored = []
+    for place, plant in enumerate(look.region.plants):
+        if plant.weed not in ("ruderal", "invasive"):
+            continue
+        here = [found[each, plant.id].constancy for each in near if (each, plant.id) in found]
+        if here:
+            own = found[zone_id, plant.id].constancy if (zone_id, plant.id) in found else 0.0
+            scored.append((-own, -max(here), place, plant))
+    scored.sort(key=lambda each: each[:3])
+    names = [_weed_name(look, plant, -own) for own, _, _, plant in scored[:WEEDS_SHOWN]]
+    return ", ".join(names) if names else look.phrases.say("zone.no_weeds")
+
+
+def _weed_name(look: Look, plant: Plant, here: float) -> str:
+    name = look.plant_name(plant.id)
+    if plant.weed == "invasive":
+        name = look.phrases.say("zone.invasive", name=name)
+    return name if here else look.phrases.say("zone.from_neighbour", name=name)
+
+
+def _months(look: Look, zone: Zone) -> tuple[Markup, str]:
+    notes = look.region.reclaim.zones[zone.id]
+    windows = notes.windows
+    chosen = set(windows.sow_months) | set(windows.plant_months)
+    say = look.phrases.say
+    title = say("zone.months_title", months=look.figures.months(chosen))
+    drawing = months(
+        chosen, look.belts[zone.id], look.phrases.words("months.initials"), title, look.palette
+    )
+    return Markup(drawing), notes.season
+
+
+def _damage(look: Look, zone_id: str) -> tuple[Damage, ...]:
+    notes = look.region.reclaim.zones[zone_id].by_disturbance
+    return tuple(
+        Damage(
+            look.disturbance_name(each.id, each.name),
+            notes[each.id].do,
+            notes[each.id].avoid,
+            notes[each.id].expect == "unlikely",
+        )
+        for each in look.region.disturbances
+        if each.id in notes
+    )
+
+
+def mix_view(look: Look, zone_id: str) -> MixView:
+    """A zone's mix with live seeds and pure live seed by weight."""
+    mix = look.region.mixes[zone_id]
+    figures, say = look.figures, look.phrases.say
+    rows, weight, seeds = [], 0.0, 0.0
+    for plant_id, live in mix.plants.items():
+        count = look.plants[plant_id].seeds_per_g
+        kg_ha = pls_kg_ha(live, count) if count is not None else None
+        seeds += live
+        weight += kg_ha or 0.0
+        shown = figures.seed_weight(kg_ha) if kg_ha is not None else MINUS
+        rows.append(MixRow(look.plant_name(plant_id), figures.seeds(live), shown))
+    planted = list(mix.live_plants)
+    for each in mix.propagules:
+        rate = ""
+        if each.rate_low is not None and each.rate_high is not None:
+            unit = look.phrases.named("rates", each.rate_unit)
+            rate = f", {figures.span(each.rate_low, each.rate_high)} {unit}"
+        planted.append(f"{each.what}{rate} ({figures.months(each.months)})")
+    return MixView(
+        method=look.phrases.named("methods", mix.method),
+        rows=tuple(rows),
+        total_seeds=figures.seeds(seeds),
+        total_weight=figures.seed_weight(weight),
+        seeds_head=figures.seeds_unit,
+        weight_head=say("mix.weight", unit=figures.yield_unit),
+        other_method=mix.other_method,
+        planted=tuple(planted),
+        none=not rows,
+    )
+
+
+def zone_views(look: Look, chosen: Mapping[str, object] | None = None) -> list[ZoneView]:
+    """Views of all zones, or of those chosen, in the order of the table."""
+    return [
+        zone_view(look, zone.id)
+        for zone in look.region.zones
+        if chosen is None or zone.id in chosen
+    ]
