@@ -94,12 +94,18 @@ def _fonts(style: str, app: Path) -> dict[str, bytes]:
 
 
 def _words(app: Path) -> dict[str, bytes]:
-    """The words of each language as JSON."""
-    files = {}
+    """The words of each language as JSON, and the list of languages with their own names."""
+    files, languages = {}, {}
     for path in sorted((app / "words").glob("*.yaml")):
         root, problems = read_yaml(path, path.name)
         if root is None or problems:
             raise ValueError(f"{path.name}: {problems[0].wrong if problems else 'empty'}")
-        text = json.dumps(plain(root), ensure_ascii=False, sort_keys=True, separators=(",", ":"))
-        files[f"{path.stem}.json"] = text.encode()
+        words = plain(root)
+        languages[path.stem] = words["language"]
+        files[f"{path.stem}.json"] = _json(words)
+    files["languages.json"] = _json(languages)
     return files
+
+
+def _json(data: object) -> bytes:
+    return json.dumps(data, ensure_ascii=False, sort_keys=True, separators=(",", ":")).encode()

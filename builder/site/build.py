@@ -134,7 +134,7 @@ def region_list(regions: Sequence[SiteRegion], files: Mapping[str, bytes]) -> by
 
 def manifest(files: Mapping[str, bytes]) -> bytes:
     """The web app manifest, so that a phone can keep the app on its home screen."""
-    said = json.loads(files["app/words/en.json"])["site"]
+    said = json.loads(files["app/words/en.json"])["app"]
     icon = "app/icons/icon"
     return _json(
         {

@@ -39,7 +39,12 @@ def put_in_place(out: Path, files: Mapping[str, bytes], keeps: Callable[[str], b
             _same_file(out / path, target)
     if out.exists():
         out.rename(before)
-    beside.rename(out)
+    try:
+        beside.rename(out)
+    except OSError:
+        if before.exists():
+            before.rename(out)
+        raise
     shutil.rmtree(before, ignore_errors=True)
     return sorted(changed | gone)
 
