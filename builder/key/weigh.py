@@ -14,11 +14,12 @@ import numpy as np
 from numpy.typing import ArrayLike, NDArray
 
 from builder.key.cover import cover_shares_from_counts, cover_shares_from_means
+from builder.key.rounding import NATS_PER_CENTIBAN, round_half_up
 
 Floats = NDArray[np.float64]
 Ints = NDArray[np.int32]
 
-CENTIBANS_PER_NAT = 100.0 / np.log(10.0)
+CENTIBANS_PER_NAT = 1.0 / NATS_PER_CENTIBAN
 STEPS = 4
 """Coarse cover classes that carry evidence: under 1 %, 1-5 %, 5-25 %, 25 % and more."""
 V_STEPS = (0.25, 0.5, 0.75, 1.0)
@@ -191,11 +192,6 @@ def centred_nats(chance: Floats, prior: Floats) -> Floats:
     chance [..., zone] in (0, 1]; prior [zone] adds to 1
     """
     return np.asarray(np.log(chance) - np.log(chance @ prior)[..., None])
-
-
-def round_half_up(values: ArrayLike) -> Ints:
-    """Whole numbers, halves up: the one rounding rule of builder and phone."""
-    return np.floor(np.asarray(values, float) + 0.5).astype(np.int32)
 
 
 def _cover(

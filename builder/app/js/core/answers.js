@@ -26,7 +26,7 @@ export function readAnswers(key, site) {
   const answers = [
     ...[...findings.plants].map(([p, finding]) => plantAnswer(key, context, p, finding)),
     ...[...findings.groups].map(([g, finding]) => groupAnswer(key, context, findings, g, finding)),
-    ...questionAnswers(key, site),
+    ...questionAnswers(key, site, context),
     ...rules.filter((rule) => rule.evidence).map((rule) => ({
       kind: 'rule', id: rule.id, answer: 'true', found: false, at: -1, step: -1, v: 4,
       plain: false, points: Int32Array.from(rule.evidence),
@@ -46,19 +46,21 @@ export function readFindings(key, site) {
   const plants = new Map();
   const groups = new Map();
   const open = new Set();
+  const unsureGroups = new Set();
   (site.findings ?? []).forEach((finding) => {
     const at = finding.plant_id ? key.plantAt.get(finding.plant_id) : key.groupAt.get(finding.group_id);
     if (at === undefined) return;
     const into = finding.plant_id ? plants : groups;
+    const unsure = finding.plant_id ? open : unsureGroups;
     into.delete(at);
-    if (finding.plant_id) open.delete(at);
-    if (finding.state === 'cant_tell') {
-      if (finding.plant_id) open.add(at);
-    } else into.set(at, finding);
+    unsure.delete(at);
+    if (finding.state === 'cant_tell') unsure.add(at);
+    else into.set(at, finding);
   });
   groups.forEach((finding, g) => {
-    if (finding.state !== 'not_found') key.pack.groups[g].members.forEach((p) => open.add(p));
+    if (finding.state !== 'not_found') unsureGroups.add(g);
   });
+  unsureGroups.forEach((g) => key.pack.groups[g].members.forEach((p) => open.add(p)));
   const named = [...plants].filter(([, one]) => one.state === 'found' && one.named).map(([p]) => p);
   if (site.whole_plot_searched) {
     key.pack.plants.forEach((plant, p) => {
@@ -153,15 +155,16 @@ function groupAnswer(key, context, findings, g, finding) {
   };
 }
 
-function questionAnswers(key, site) {
+function questionAnswers(key, site, context) {
   const given = site.questions ?? {};
   return key.pack.questions.map((question, at) => {
     const answer = question.answers.find((one) => one.value === given[question.id]);
     if (!answer?.evidence) return null;
+    const weight = context.questionWeight.get(question.id) ?? 4;
     return {
       kind: 'question', id: question.id, answer: answer.value, found: false, at,
-      step: question.answers.indexOf(answer), v: 4, plain: true,
-      points: Int32Array.from(answer.evidence),
+      step: question.answers.indexOf(answer), v: 4, plain: weight === 4,
+      points: Int32Array.from(answer.evidence, (one) => quarters(one, weight)),
     };
   });
 }

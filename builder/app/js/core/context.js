@@ -11,6 +11,7 @@ import { roundHalfUp } from './rounding.js';
  * @property {Uint8Array} coverWeight quarters of cover that count
  * @property {number} newcomer level of newcomers, -1 for none
  * @property {number} azonalWeight quarters of what speaks for azonal ground
+ * @property {Map<string, number>} questionWeight quarters of a ground answer that count
  */
 
 /** @returns {Context} */
@@ -48,14 +49,25 @@ function blank(key, site, effects) {
     seeded: has('sown'),
     newcomer: effects.reduce((level, effect) => Math.max(level, effect.newcomer ?? -1), -1),
     azonalWeight: Math.min(4, ...quarters),
+    questionWeight: questionWeights(effects),
     disturbed:
-      Boolean(disturbanceOf(key, site)) ||
+      Boolean(disturbanceOf(key, site)?.disturbs) ||
       effects.some((one) => one.newcomer !== undefined || one.sown || one.layers_gone),
     heightOff: has('height_off'),
     elevationShift: effects.reduce((sum, effect) => sum + (effect.elevation_shift_m ?? 0), 0),
     secondCall: has('second_call'),
     movePlot: has('move_plot'),
   };
+}
+
+function questionWeights(effects) {
+  const weights = new Map();
+  effects.forEach((effect) =>
+    Object.entries(effect.question_weight ?? {}).forEach(([id, weight]) =>
+      weights.set(id, Math.min(weight, weights.get(id) ?? 4)),
+    ),
+  );
+  return weights;
 }
 
 /** Is a plant recognisable in the month: 2 now, 1 known when dry, 0 gone. No month: 2. */
@@ -105,22 +117,20 @@ function effectArrays(key, effect) {
   return arrays;
 }
 
-/** Value of the nearest trait: a group before fate, response, form and layer, those before any. */
+/** Share of the plant's own groups, else the lowest of its other traits. */
 function traitValue(plant, shares, groups) {
   if (!shares) return undefined;
-  const inGroups = plant.groups.map((g) => shares[`group:${groups[g].id}`]);
-  const own = Object.entries(shares)
-    .filter(([trait]) => hasTrait(plant, trait))
-    .map(([, share]) => share);
-  for (const found of [inGroups, own, [shares.any], [shares.other]]) {
-    const given = found.filter((share) => share !== undefined);
-    if (given.length) return Math.min(...given);
-  }
-  return undefined;
+  const grouped = plant.groups
+    .map((g) => shares[`group:${groups[g].id}`])
+    .filter((share) => share !== undefined);
+  if (grouped.length) return Math.min(...grouped);
+  const own = Object.entries(shares).filter(([trait]) => hasTrait(plant, trait));
+  return own.length ? Math.min(...own.map(([, share]) => share)) : undefined;
 }
 
 function hasTrait(plant, trait) {
   return (
+    trait === 'any' ||
     plant.fate === trait ||
     plant.response === trait ||
     plant.layer === trait ||

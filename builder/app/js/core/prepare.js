@@ -31,8 +31,7 @@ function build(pack) {
   const Z = pack.zones.length;
   const P = pack.plants.length;
   const { evidence } = pack;
-  const presence = Float64Array.from(evidence.expected.flat(), (share) => share / 10000);
-  const found = Int16Array.from(evidence.found.flat(2));
+  const { found, absent, implied, presence } = plantTables(evidence.plants, P, Z);
   const cover = coverShares(pack, found, P, Z);
   return {
     pack,
@@ -40,8 +39,8 @@ function build(pack) {
     P,
     settings: pack.settings,
     found,
-    absent: Int16Array.from(evidence.absent.flat(2)),
-    implied: Int16Array.from(evidence.implied.flat(2)),
+    absent,
+    implied,
     presence,
     cover,
     lowered: loweredCover(cover, P, Z, pack.settings.mosaic_lower),
@@ -50,7 +49,7 @@ function build(pack) {
     groupAt: indexById(pack.groups),
     questionAt: indexById(pack.questions),
     classAt: new Map(pack.cover.classes.map((one, at) => [one.code, at])),
-    newcomer: newcomerRows(evidence.newcomer),
+    newcomer: newcomerRows(evidence.newcomer, Z),
     pairs: zonePairs(pack.zones),
     neutral: new Int32Array(Z),
     effects: new Map(),
@@ -96,11 +95,46 @@ function loweredCover(cover, P, Z, share) {
   return lowered;
 }
 
-/** Row of the newcomer tables by plant, level and whether the plant is only half visible. */
-function newcomerRows(newcomer) {
+/** Rows of the newcomer tables by plant, level and half; points per v, then per zone. */
+function newcomerRows({ rows, tables }, Z) {
   const at = new Map();
-  newcomer.rows.forEach(([plant, level, half], row) => at.set(`${plant}/${level}/${half}`, row));
-  return { at, found: newcomer.found, absent: newcomer.absent };
+  rows.forEach(([plant, level, half], row) => at.set(`${plant}/${level}/${half}`, row));
+  const found = [];
+  const absent = [];
+  tables.forEach((short) => {
+    const steps = short[0].length / 2;
+    const read = (from) => Array.from({ length: steps }, (none, v) => rowOf(short, from + v, Z));
+    found.push(read(0));
+    absent.push(read(steps));
+  });
+  return { at, found, absent };
+}
+
+/** One row of a table in short: [rest, zones, here] (builder/key/sparse.py). */
+function rowOf([rest, zones, here], row, Z) {
+  const points = new Int32Array(Z).fill(rest[row]);
+  zones.forEach((z, at) => { points[z] = here[at][row]; });
+  return points;
+}
+
+/** Rows 0..3 found by cover step less row 4, 4 found, 5..8 absent, 9..11 implied, 12 expected. */
+function plantTables(tables, P, Z) {
+  const found = new Int16Array(P * 5 * Z);
+  const absent = new Int16Array(P * 4 * Z);
+  const implied = new Int16Array(P * 3 * Z);
+  const presence = new Float64Array(P * Z);
+  tables.forEach((short, p) => {
+    const rows = short[0].map((rest, row) => rowOf(short, row, Z));
+    for (let z = 0; z < Z; z += 1) {
+      for (let s = 0; s < 5; s += 1) {
+        found[(p * 5 + s) * Z + z] = rows[s][z] + (s < 4 ? rows[4][z] : 0);
+      }
+      for (let v = 0; v < 4; v += 1) absent[(p * 4 + v) * Z + z] = rows[5 + v][z];
+      for (let k = 0; k < 3; k += 1) implied[(p * 3 + k) * Z + z] = rows[9 + k][z];
+      presence[p * Z + z] = rows[12][z] / 10000;
+    }
+  });
+  return { found, absent, implied, presence };
 }
 
 function zonePairs(zones) {

@@ -61,7 +61,7 @@ function coverHolds(members, when, key, findings) {
   const wanted = when.cover_at_least_pct ?? 0;
   if (wanted === 0) return found ? 1 : most === 0 ? 0 : UNKNOWN;
   if (least >= wanted) return 1;
-  return most <= wanted ? truth(most === wanted && least === most) : UNKNOWN;
+  return most > wanted ? UNKNOWN : 0;
 }
 
 function questionHolds(site, when) {
