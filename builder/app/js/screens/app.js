@@ -1,0 +1,52 @@
+/** The page that the address asks for. Moves focus to its heading and says where one has come. */
+import { html } from 'htm/preact';
+import { useEffect, useRef } from 'preact/hooks';
+import { t } from './words.js';
+import { region, route, site, spoken } from './state.js';
+import { Patterns } from './parts/patterns.js';
+import { Trouble } from './parts/trouble.js';
+import { Later } from './parts/later.js';
+import { Sites } from './sites.js';
+import { Place } from './place.js';
+import { Plants } from './plants.js';
+import { Zone } from './zone.js';
+
+const here = (name) => (props) => html`<${name} ...${props}/>`;
+const SITE_PAGES = {
+  place: here(Place), plants: here(Plants), zone: here(Zone),
+  production: Later(() => import('./production.js'), 'Production'),
+  reclaim: Later(() => import('./reclaim.js'), 'Reclaim'),
+};
+const PAGES = {
+  sites: here(Sites),
+  book: Later(() => import('./book.js'), 'Book'),
+  hand: Later(() => import('./hand.js'), 'Hand'),
+  setup: Later(() => import('./setup.js'), 'Setup'),
+};
+
+/** @returns the whole page for the present address */
+export function App() {
+  const { page, parts } = route.value;
+  const top = useRef(null);
+  const address = [page, ...parts].join('/');
+  useEffect(() => {
+    const heading = top.current.querySelector('h1');
+    document.title = t('app.title', { page: heading?.textContent ?? '' });
+    heading?.focus({ preventScroll: true });
+  }, [address]);
+  return html`<div class="whole" ref=${top}>
+    <${Patterns} zones=${region.value.zones}/>
+    ${pageFor(page, parts)}
+    <${Trouble}/>
+    <p class="spoken" role="status" aria-live="polite">${spoken.value}</p></div>`;
+}
+
+function pageFor(page, parts) {
+  if (page === 'site') {
+    if (!site.value || site.value.id !== parts[0]) return null;
+    const Tab = SITE_PAGES[parts[1]] ?? SITE_PAGES.place;
+    return html`<${Tab} parts=${parts.slice(2)}/>`;
+  }
+  const Page = PAGES[page] ?? PAGES.sites;
+  return html`<${Page} parts=${parts}/>`;
+}

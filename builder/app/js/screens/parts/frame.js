@@ -1,0 +1,25 @@
+/** The frame of a site check page: head, the edge in sight, the page, the five tabs.
+ *  Where there is room, the open edge and its reasons stand beside the page instead. */
+import { html } from 'htm/preact';
+import { t } from '../words.js';
+import { call, region, site } from '../state.js';
+import { wide } from '../wide.js';
+import { heightMark } from '../height_mark.js';
+import { ZonePane } from '../zone_pane.js';
+import { Bar } from './bar.js';
+import { EdgeAjar } from './edge_ajar.js';
+import { Foot } from './foot.js';
+
+/** @param {{tab: string, line: string, edge?: boolean, class?: string, back?: string, title?: string, children: unknown}} props
+ *  edge: show the belt column (Place and Plants) */
+export function Frame({ tab, line, edge = true, class: shape = '', back = '#/sites', title, children }) {
+  const here = region.value;
+  const record = site.value;
+  const two = wide.value;
+  return html`<div class=${`page p-${tab} ${two ? 'two' : ''}`}>
+    <${Bar} title=${title ?? (record.name || t('sites.unnamed'))} line=${line} back=${back}/>
+    ${two && html`<aside class="left" aria-label=${t('zone.title')}><${ZonePane}/></aside>`}
+    ${!two && edge && html`<${EdgeAjar} region=${here} call=${call.value} mark=${heightMark(here, record)} href=${`#/site/${record.id}/zone`}/>`}
+    <main class=${shape}>${children}</main>
+    <${Foot} current=${tab} siteId=${record.id}/></div>`;
+}

@@ -1,0 +1,90 @@
+/** Site checks and units around the open one: start, open under the right tables, list, remove. */
+import { call as callOf, unitZone } from '../core/index.js';
+import { listSites, listUnits, newSite, newUnit, removeSite, saveSite, saveUnit, tablesOf } from '../store/index.js';
+import { makeRegion } from './region.js';
+import { observer } from './settings.js';
+import { fetchSite, go, home, openSite, region, site, sites, store, tables, trouble, units } from './state.js';
+import { language, t } from './words.js';
+
+/** Reads every record and unit of this phone. */
+export async function readAll() {
+  sites.value = await listSites(store.value);
+  units.value = await listUnits(store.value);
+}
+
+/** Starts a site check and goes to its Place. @param {object} [start] fields to begin with */
+export async function startSite(start = {}) {
+  const first = { observer: observer.value, name: t('sites.default_name', { n: sites.value.length + 1 }), ...start };
+  try {
+    const kept = await saveSite(store.value, newSite(tables.value, first));
+    sites.value = [kept, ...sites.value];
+    go(`#/site/${kept.id}/place`);
+  } catch (fault) {
+    trouble.value = { code: fault.code };
+  }
+}
+
+/** Another look from the same place: keeps where, who and which unit; asks the plants again. */
+export function startBeside(role, name, more = {}) {
+  const { unit_id, unit_name, place, disturbance, observer: who } = site.value;
+  return startSite({ unit_id, unit_name, place: { ...place, latitude_deg: null, longitude_deg: null, accuracy_m: null }, disturbance, role, name, observer: who, ...more });
+}
+
+/** Opens the record an address names, under the edition that scored it. */
+export async function openById(id) {
+  if (site.value?.id === id) return;
+  const record = sites.value.find((one) => one.id === id) ?? await fetchSite(id);
+  if (!record) {
+    go('#/sites', true);
+    return;
+  }
+  region.value = await regionFor(record);
+  openSite(record);
+}
+
+async function regionFor(record) {
+  if (record.pack_hash === tables.value.hash) return home.value;
+  const older = await tablesOf(store.value, record);
+  return older ? makeRegion(older.pack, older.texts[language.value] ?? older.texts.en) : home.value;
+}
+
+/** Leaves the open record; the pages outside use the tables in use. */
+export function closeSite() {
+  openSite(null);
+  region.value = home.value;
+}
+
+/** Removes a site check and its photos for good. */
+export async function dropSite(id) {
+  closeSite();
+  await removeSite(store.value, id);
+  sites.value = sites.value.filter((one) => one.id !== id);
+  go('#/sites', true);
+}
+
+const calls = new WeakMap();
+
+/** The call of a listed record, scored once for each stored version. */
+export function rowCall(here, row) {
+  if (!calls.has(row)) calls.set(row, row.pack_hash === tables.value.hash ? callOf(here.pack, row) : row.call);
+  return calls.get(row);
+}
+
+/** A unit by name: the one there is, or a new one. @returns {Promise<object>} */
+export async function unitNamed(name) {
+  const there = units.value.find((unit) => unit.name.toLowerCase() === name.toLowerCase());
+  if (there) return there;
+  const unit = await saveUnit(store.value, newUnit(name, home.value.pack.region.id));
+  units.value = [...units.value, unit];
+  return unit;
+}
+
+/** All checks of a unit, the open one as it now stands. */
+export function checksOf(unitId) {
+  return sites.value.filter((row) => row.unit_id === unitId && row.id !== site.value?.id).concat(site.value?.unit_id === unitId ? [site.value] : []);
+}
+
+/** The zone carried into a unit from its edges. */
+export function carriedZone(here, unitId) {
+  return unitZone(here.pack, checksOf(unitId));
+}

@@ -1,0 +1,48 @@
+/** Figures as words: odds, shares, cover classes, heights and lengths in the person's own units. */
+import { t, number } from './words.js';
+import { units } from './settings.js';
+import { coverBounds } from './region.js';
+
+const METRES_PER_FOOT = 0.3048;
+
+/** A share as a whole number in 100, never "0" or "100". @param {number} share 0..1 */
+export function percentWords(share) {
+  if (share < 0.01) return t('share.under');
+  if (share > 0.99) return t('share.over');
+  return String(Math.round(share * 100));
+}
+
+/** "about 9 in 10". @param {number} share 0..1 */
+export function oddsWords(share) {
+  if (share > 0.95) return t('odds.nearly');
+  return t('odds.about', { tenths: Math.max(1, Math.round(share * 10)) });
+}
+
+/** A height in metres or feet. @param {number} metres */
+export function heightWords(metres) {
+  return units.value === 'us' ? t('unit.ft', { n: Math.round(metres / METRES_PER_FOOT) }) : t('unit.m', { n: Math.round(metres) });
+}
+
+/** A cover class of the region's scale: "1–5 %". @param {object} region  @param {string} code */
+export function coverWords(region, code, sign = true) {
+  const { key, low, high } = coverBounds(region, code);
+  const words = t(`cover.${key}`, { low: plain(low), high: plain(high) });
+  return sign ? t('cover.pct', { words }) : words;
+}
+
+const plain = (value) => number(value, Number.isInteger(value) ? 0 : 1);
+
+/** What was answered for a plant: "none", "1–5 %", "can’t tell". */
+export function findingWords(region, finding) {
+  if (finding.state === 'not_found') return t('finding.none');
+  if (finding.state === 'cant_tell') return t('finding.cant_tell');
+  return finding.cover ? coverWords(region, finding.cover) : t('finding.there');
+}
+
+/** A stored height in the person's unit, for a box. @param {number} metres */
+export const heightShown = (metres) => Math.round(units.value === 'us' ? metres / METRES_PER_FOOT : metres);
+
+/** A typed height in metres. @param {number|null} typed */
+export const heightFrom = (typed) => (typed === null ? null : Math.round(units.value === 'us' ? typed * METRES_PER_FOOT : typed));
+
+export const heightUnit = () => t(units.value === 'us' ? 'unit.ft_sign' : 'unit.m_sign');

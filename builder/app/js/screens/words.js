@@ -1,0 +1,53 @@
+/** Every sentence of the screens comes from one words file; this looks it up and fills its places.
+ *  A key that is missing throws: a page with a hole in it must not pass a test. */
+import { signal } from '@preact/signals';
+
+export const words = signal({});
+export const language = signal('en');
+
+/** @param {object} table nested words, as in words/en.yaml  @param {string} code language tag */
+export function setWords(table, code) {
+  words.value = table;
+  language.value = code;
+}
+
+/** The words under a dotted key, with {places} filled; a plural entry {one, other} is chosen by `n`.
+ *  @param {string} key  @param {Record<string, string|number>} [places] */
+export function t(key, places = {}) {
+  let entry = words.value;
+  for (const part of key.split('.')) entry = entry?.[part];
+  if (entry === undefined) throw new Error(`no words for ${key}`);
+  if (typeof entry === 'object') entry = entry[new Intl.PluralRules(language.value).select(places.n)] ?? entry.other;
+  return entry.replace(/\{(\w+)\}/g, (_, name) => {
+    if (!(name in places)) throw new Error(`${key} wants {${name}}`);
+    const value = places[name];
+    return typeof value === 'number' ? number(value) : value;
+  });
+}
+
+/** True where the words file holds the key. @param {string} key */
+export function has(key) {
+  return key.split('.').reduce((entry, part) => entry?.[part], words.value) !== undefined;
+}
+
+/** A figure as people write it. @param {number} value  @param {number} [decimals] digits after the point */
+export function number(value, decimals = 0) {
+  return new Intl.NumberFormat(language.value, { minimumFractionDigits: decimals, maximumFractionDigits: decimals }).format(value);
+}
+
+/** "a, b and c". @param {string[]} parts */
+export function listed(parts) {
+  return new Intl.ListFormat(language.value, { type: 'conjunction' }).format(parts);
+}
+
+/** Friday 11 July, from "2026-07-11". @param {string} iso */
+export function dayName(iso) {
+  const [year, month, day] = iso.split('-').map(Number);
+  return new Intl.DateTimeFormat(language.value === 'en' ? 'en-GB' : language.value, { weekday: 'long', day: 'numeric', month: 'long' })
+    .format(new Date(year, month - 1, day));
+}
+
+/** July, from 7. @param {number} month  @param {'long'|'short'|'narrow'} [style] */
+export function monthName(month, style = 'long') {
+  return new Intl.DateTimeFormat(language.value === 'en' ? 'en-GB' : language.value, { month: style }).format(new Date(2000, month - 1, 1));
+}
