@@ -2,6 +2,7 @@
 
 from dataclasses import dataclass
 from html import escape
+from urllib.parse import quote
 
 SANS = "Source Sans 3"
 SERIF = "Source Serif 4"
@@ -124,3 +125,19 @@ def text(
 def polyline(points: list[tuple[float, float]], close: bool = False) -> str:
     """Path data through the points, in order."""
     return "M" + "L".join(f"{num(x)} {num(y)}" for x, y in points) + ("z" if close else "")
+
+
+def uri(drawing: str) -> str:
+    """A drawing as an address that style sheets and pictures can hold."""
+    return "data:image/svg+xml," + quote(drawing, safe="/:=,; ()")
+
+
+def picture(drawing: str) -> str:
+    """A drawing as a picture of its own, its title as the words for it.
+
+    On paper many drawings share names of patterns, which one document must not hold twice.
+    """
+    title = drawing.partition("<title>")[2].partition("</title>")[0]
+    name = drawing.partition(' class="')[2].partition('"')[0]
+    label = f' class="{name}"' if drawing.startswith("<svg class=") else ""
+    return f'<img{label} alt="{title}" src="{escape(uri(drawing))}">'

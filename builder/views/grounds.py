@@ -30,6 +30,7 @@ class QuestionView:
     """One ground question."""
 
     id: str
+    short: str
     ask: str
     digs: str
     why: str
@@ -43,7 +44,16 @@ class FeelStep:
 
     number: str
     ask: str
-    ways: tuple[tuple[str, str, bool], ...]
+    ways: tuple["FeelWay", ...]
+
+
+@dataclass(frozen=True)
+class FeelWay:
+    """One answer of the hand test: the next step's number, or a texture."""
+
+    answer: str
+    goal: str
+    ends: bool
 
 
 @dataclass(frozen=True)
@@ -87,6 +97,7 @@ def question_view(look: Look, question: Question) -> QuestionView:
     labels = own.answers if own is not None else {}
     return QuestionView(
         id=question.id,
+        short=look.phrases.named("question_names", question.id),
         ask=own.ask if own is not None else question.ask,
         digs=(
             look.phrases.say("questions.digs", depth=look.figures.depth(question.digs_cm))
@@ -133,7 +144,7 @@ def feel_steps(look: Look) -> list[FeelStep]:
                 if ends
                 else numbers[there]
             )
-            rows.append((label, goal, ends))
+            rows.append(FeelWay(label, goal, ends))
         steps.append(FeelStep(numbers[name], look.phrases.say(f"feel.{name}.ask"), tuple(rows)))
     return steps
 
@@ -162,7 +173,7 @@ def hoops(look: Look, size: float = 12) -> list[HoopView]:
         HoopView(
             each.code,
             labels.get(each.code, each.label),
-            Markup(hoop(each.mid_pct / 100, each.label, look.palette, size)),
+            look.show(hoop(each.mid_pct / 100, each.label, look.palette, size)),
         )
         for each in look.region.cover_scale.classes
     ]

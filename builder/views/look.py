@@ -8,7 +8,7 @@ from markupsafe import Markup
 from builder.drawings.belts import Belt, belts_of, in_stack_order, tab
 from builder.drawings.forms import form
 from builder.drawings.hoops import hoop
-from builder.drawings.ink import PRINT, Palette
+from builder.drawings.ink import PRINT, Palette, picture
 from builder.tables import Plant, Region, Zone
 from builder.views.figures import Figures
 from builder.views.phrases import Phrases, phrases
@@ -89,18 +89,22 @@ class Look:
         words = self.region.words.get(self.phrases.language)
         return (words.disturbances.get(disturbance_id) if words is not None else None) or name
 
+    def show(self, drawing: str) -> Markup:
+        """A drawing for the page: inline on a screen, a picture of its own on paper."""
+        return Markup(picture(drawing) if self.palette.inline else drawing)
+
     def tab(self, zone_id: str, side: float = 5.6) -> Markup:
         """A zone's square mark."""
-        return Markup(tab(self.belts[zone_id], self.palette, side))
+        return self.show(tab(self.belts[zone_id], self.palette, side))
 
     def hoop(self, cover_pct: float, size: float = 4.6) -> Markup:
         """The hoop of the class a cover falls into."""
         each = self.region.cover_scale.class_of(cover_pct)
-        return Markup(hoop(each.mid_pct / 100, each.label, self.palette, size))
+        return self.show(hoop(each.mid_pct / 100, each.label, self.palette, size))
 
     def form(self, name: str, size: float = 4.6) -> Markup:
         """A growth form's pictogram."""
-        return Markup(form(name, self.phrases.named("forms.one", name), self.palette, size))
+        return self.show(form(name, self.phrases.named("forms.one", name), self.palette, size))
 
     def shares(self, plant_id: str) -> list[float]:
         """A plant's constancy in each zone, in the order of in_columns. [0..1]"""

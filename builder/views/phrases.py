@@ -37,6 +37,15 @@ class Phrases:
         """Whether a sentence of this name exists."""
         return self._find(name) is not None
 
+    def is_group(self, name: str) -> bool:
+        """Whether the name stands for a group of sentences."""
+        return isinstance(self._find(name), dict)
+
+    def count(self, number: int) -> str:
+        """A small number in words at the head of a sentence, else in figures."""
+        words = self.words("numbers")
+        return words[number] if number < len(words) else str(number)
+
     def named(self, group: str, word: str) -> str:
         """The text for one of a table's set words; the word itself where the file has none."""
         name = f"{group}.{word}"

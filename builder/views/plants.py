@@ -112,13 +112,13 @@ def plant_view(look: Look, plant: Plant) -> PlantView:
         form_name=look.phrases.named("forms.one", plant.form),
         marks=plant.marks,
         when=say("plant.when_dry" if plant.known_when_dry else "plant.when", months=when),
-        season=Markup(
+        season=look.show(
             months(
                 inside, look.belts[look.column_ids[0]], look.phrases.words("months.initials"),
                 say("plant.season_title", months=when), look.palette, 30, 2.6,
             )
         ),
-        amplitude=Markup(
+        amplitude=look.show(
             amplitude(
                 shares, look.in_columns, say("plant.amplitude_title", zones=_home(look, shares)),
                 look.palette,
@@ -224,7 +224,7 @@ def chart(look: Look, width: float = 50, least: float = 0.0) -> Chart:
         KiteRow(
             plant.id,
             look.plant_name(plant.id),
-            Markup(
+            look.show(
                 kite_row(
                     look.shares(plant.id), look.in_columns,
                     look.phrases.say("chart.row_title", name=look.plant_name(plant.id),
@@ -235,4 +235,4 @@ def chart(look: Look, width: float = 50, least: float = 0.0) -> Chart:
         )
         for plant in chosen
     )  # fmt: skip
-    return Chart(Markup(kite_head(look.in_columns, look.palette, width)), rows)
+    return Chart(look.show(kite_head(look.in_columns, look.palette, width)), rows)

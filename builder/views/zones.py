@@ -140,7 +140,7 @@ def zone_view(look: Look, zone_id: str) -> ZoneView:
         short=look.zone_short(zone_id),
         one_line=look.zone_line(zone_id),
         tab=look.tab(zone_id, 13),
-        heights=Markup(
+        heights=look.show(
             heights(
                 look.region.zones,
                 look.region.elevation_m,
@@ -220,7 +220,7 @@ def plant_rows(look: Look, zone_id: str) -> list[PlantRow]:
                 name=look.plant_name(plant.id),
                 latin=plant.scientific,
                 form=look.form(plant.form),
-                bar=Markup(
+                bar=look.show(
                     constancy_bar(
                         each.constancy, belt, look.phrases.say("zone.of_100", count=in_100),
                         look.palette,
@@ -288,7 +288,7 @@ def _growth(look: Look, zone: Zone) -> tuple[Markup, str]:
         )
     if made.clip.every > 1:
         parts.append(say("zone.clip", area=figures.short(made.clip.area_m2), every=made.clip.every))
-    return Markup(drawing), " ".join(parts)
+    return look.show(drawing), " ".join(parts)
 
 
 def zone_year(look: Look, zone_id: str) -> SiteYear:
@@ -347,7 +347,7 @@ def _year(look: Look, zone: Zone) -> tuple[Markup, str]:
         look.palette,
         height=24,
     )
-    return Markup(drawing), line
+    return look.show(drawing), line
 
 
 def _soil(look: Look, zone_id: str) -> tuple[str, ...]:
@@ -412,7 +412,7 @@ def _months(look: Look, zone: Zone) -> tuple[Markup, str]:
     drawing = months(
         chosen, look.belts[zone.id], look.phrases.words("months.initials"), title, look.palette
     )
-    return Markup(drawing), notes.season
+    return look.show(drawing), notes.season
 
 
 def _damage(look: Look, zone_id: str) -> tuple[Damage, ...]:

@@ -1,0 +1,269 @@
+"""What stands in the booklet, in order, as finished text and drawings."""
+
+from collections.abc import Mapping
+from dataclasses import dataclass
+from pathlib import Path
+
+from markupsafe import Markup
+
+from builder.booklet.style import Trim
+from builder.drawings.ink import PRINT, rect, svg
+from builder.drawings.rule import cm_rule, inch_rule
+from builder.drawings.slope import contours, strata
+from builder.tables import Region
+from builder.views import grounds, plants
+from builder.views.look import Look
+from builder.views.phrases import Phrases, phrases
+from builder.views.zones import ZoneView, zone_views
+
+WORDS = Path(__file__).parent / "words"
+RULE_STRIP_MM = 7.0
+COVER_PAPER = "#f6f1e4"
+FORM_PLANTS = 23
+FORM_CLIPS = 10
+
+
+@dataclass(frozen=True)
+class Entry:
+    """One line of the contents."""
+
+    tab: Markup
+    name: str
+    note: str
+    anchor: str
+    page: str
+
+
+@dataclass(frozen=True)
+class Cover:
+    """The front."""
+
+    art: Markup
+    region: str
+    sub: str
+    edition: str
+    note: str
+
+
+@dataclass(frozen=True)
+class FormView:
+    """The blank site check: the record's fields in the phone's order."""
+
+    fields: tuple[str, ...]
+    roles: tuple[str, ...]
+    damages: tuple[str, ...]
+    codes: str
+    verdicts: tuple[str, ...]
+    plant_rows: tuple[str, ...]
+    clip_rows: tuple[str, ...]
+
+
+@dataclass(frozen=True)
+class BookletView:
+    """Everything the templates need."""
+
+    words: "Words"
+    language: str
+    title: str
+    cover: Cover
+    about: tuple[str, ...]
+    belts: tuple[Entry, ...]
+    rest: tuple[Entry, ...]
+    steps: tuple[str, ...]
+    hoops: tuple[grounds.HoopView, ...]
+    signs: tuple[tuple[Markup, str], ...]
+    region_warns: tuple[plants.Warn, ...]
+    people_warns: tuple[grounds.PlantWarn, ...]
+    zones: tuple[ZoneView, ...]
+    year_note: str
+    chart: plants.Chart
+    forms: tuple[plants.FormGroup, ...]
+    questions: tuple[grounds.QuestionView, ...]
+    feel: tuple[grounds.FeelStep, ...]
+    textures: tuple[grounds.TextureRow, ...]
+    form: "FormView"
+    sources: tuple[grounds.SourceView, ...]
+    cautions_of_build: tuple[str, ...]
+
+
+class Words:
+    """The booklet's own sentences, asked for by name in the templates."""
+
+    def __init__(self, own: Phrases, prefix: str = "") -> None:
+        """Keep the phrases; prefix is the path walked so far."""
+        self._own = own
+        self._prefix = prefix
+
+    def __getattr__(self, name: str) -> "Words | str":
+        """The sentence of a name, or the group of sentences under it."""
+        if name.startswith("__"):
+            raise AttributeError(name)
+        path = f"{self._prefix}{name}"
+        if self._own.has(path) and not self._own.is_group(path):
+            return self._own.say(path)
+        if self._own.has(path):
+            return Words(self._own, f"{path}.")
+        raise AttributeError(f'words/en.yaml of the booklet has no "{path}"')
+
+
+def booklet_view(
+    look: Look,
+    trim: Trim,
+    mark: str,
+    pages: Mapping[str, int],
+    chosen: Mapping[str, object] | None = None,
+    build_cautions: tuple[str, ...] = (),
+) -> BookletView:
+    """The whole booklet.
+
+    mark     hash of the pack the tables make
+    pages    page number by anchor, as last laid out
+    chosen   zones to print; None for all
+    """
+    own = phrases(look.phrases.language, WORDS)
+    region = look.region
+    zones = tuple(zone_views(look, chosen))
+    return BookletView(
+        words=Words(own),
+        language=look.phrases.language,
+        title=own.say("title", region=region.name),
+        cover=cover(look, trim, own),
+        about=about(look, own, mark),
+        belts=_belts(look, zones, pages),
+        rest=_rest(own, pages),
+        steps=_steps(own, pages),
+        hoops=tuple(grounds.hoops(look, 11.5)),
+        signs=_signs(look, own),
+        region_warns=tuple(grounds.region_warns(look)),
+        people_warns=tuple(grounds.people_warns(look)),
+        zones=zones,
+        year_note=own.say("zone.year_note", unit=look.figures.rain_unit),
+        chart=plants.chart(look),
+        forms=tuple(plants.by_form(look)),
+        questions=tuple(grounds.questions(look)),
+        feel=tuple(grounds.feel_steps(look)),
+        textures=tuple(grounds.texture_rows(look)),
+        form=form_view(look, own),
+        sources=tuple(grounds.sources(look)),
+        cautions_of_build=build_cautions,
+    )
+
+
+def cover(look: Look, trim: Trim, own: Phrases) -> Cover:
+    """The front: the region's own slope between two rules."""
+    region = look.region
+    width, height = trim.width, trim.height
+    strip = RULE_STRIP_MM
+    paper = "#ffffff"
+    body = (
+        rect(0, 0, width, height, f'fill="{COVER_PAPER}"')
+        + contours(width, height)
+        + strata(region.zones, region.elevation_m, width, height * 0.315, height * 0.965)
+        + rect(0, 0, strip, height, f'fill="{paper}"')
+        + rect(width - strip, 0, strip, height, f'fill="{paper}"')
+        + f'<path d="M{strip} 0V{height}M{width - strip} 0V{height}" stroke="{PRINT.ink}"'
+        ' stroke-width=".35"/>'
+        + inch_rule(0, height, 1, own.say("unit_in"))
+        + cm_rule(width, height, -1, own.say("unit_cm"))
+    )
+    return Cover(
+        look.show(svg(width, height, own.say("cover_alt", region=region.name), body, PRINT)),
+        region.name,
+        own.say("subtitle", count=look.phrases.count(len(region.zones))),
+        own.say("edition", edition=region.edition),
+        own.say("demo_short") if region.invented else region.date,
+    )
+
+
+def about(look: Look, own: Phrases, mark: str) -> tuple[str, ...]:
+    """What this copy is: edition, mark, who answers, what is demo."""
+    region = look.region
+    demo, every = grounds.demo_share(look)
+    lines = [
+        own.say("about.edition", edition=region.edition, date=region.date, hash=mark),
+        own.say("about.same_mark"),
+        own.say("about.answers_for", name=region.head.answers_for),
+    ]
+    if region.invented:
+        lines.append(own.say("about.invented"))
+    lines.append(own.say("about.demo", demo=demo, all=every))
+    if region.head.address:
+        lines.append(own.say("about.app", address=region.head.address))
+    return tuple(lines)
+
+
+def _belts(look: Look, zones: tuple[ZoneView, ...], pages: Mapping[str, int]) -> tuple[Entry, ...]:
+    """The belts from the top down, as they lie on the edge."""
+    shown = {zone.id: zone for zone in zones}
+    return tuple(
+        Entry(
+            look.tab(zone_id, 5.2),
+            shown[zone_id].short,
+            look.figures.heights(*look.zones[zone_id].band_m),
+            f"zone-{zone_id}",
+            _page(pages, f"zone-{zone_id}"),
+        )
+        for zone_id in reversed(look.stack)
+        if zone_id in shown
+    )
+
+
+def _rest(own: Phrases, pages: Mapping[str, int]) -> tuple[Entry, ...]:
+    names = ("cautions", "use", "chart", "plants", "questions", "feel", "form", "sources")
+    return tuple(
+        Entry(Markup(""), own.say(f"{name}.title"), "", name, _page(pages, name))
+        for name in names
+    )
+
+
+def _page(pages: Mapping[str, int], anchor: str) -> str:
+    """A page number as last laid out; a blank of the same width before the first time."""
+    return str(pages.get(anchor, "000"))
+
+
+def _steps(own: Phrases, pages: Mapping[str, int]) -> tuple[str, ...]:
+    fourth = (
+        own.say("use.fourth", key=pages["key"]) if "key" in pages else own.say("use.fourth_no_key")
+    )
+    return (
+        own.say("use.first"),
+        own.say("use.second"),
+        own.say("use.third"),
+        fourth,
+        own.say("use.fifth"),
+        own.say("use.sixth"),
+    )
+
+
+def _signs(look: Look, own: Phrases) -> tuple[tuple[Markup, str], ...]:
+    """Samples of the booklet's signs, drawn from the region's first zone."""
+    first = next(iter(zone_views(look, {look.region.zones[0].id: None})))
+    row = first.plants[0]
+    return ((row.bar, own.say("use.bar")), (row.hoop, own.say("use.hoop")))
+
+
+def form_view(look: Look, own: Phrases) -> FormView:
+    """The blank site check of a region."""
+    fields = (
+        "unit", "name", "observer", "date", "latitude", "longitude", "accuracy", "height",
+        "slope", "aspect", "photos",
+    )  # fmt: skip
+    return FormView(
+        fields=tuple(own.say(f"form.head.{name}") for name in fields),
+        roles=tuple(own.words("form.roles")),
+        damages=tuple(
+            look.disturbance_name(each.id, each.name) for each in look.region.disturbances
+        ),
+        codes=", ".join(
+            f"{each.code} {look.figures.span(each.low_pct, each.high_pct)}"
+            for each in look.region.cover_scale.classes
+        ),
+        verdicts=tuple(own.words("form.verdicts")),
+        plant_rows=tuple(str(number) for number in range(1, FORM_PLANTS + 1)),
+        clip_rows=tuple(str(number) for number in range(1, FORM_CLIPS + 1)),
+    )
+
+
+def mark_of(region: Region) -> str:
+    """A short mark of the tables, until a pack is at hand: edition and date."""
+    return f"{region.id}-{region.edition}"
