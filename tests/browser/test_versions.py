@@ -110,31 +110,35 @@ def test_a_new_version_waits_until_the_person_puts_it_to_use(phone, serve):
     assert len(phone.page.evaluate("caches.keys()")) == 1
 
 
-@pytest.mark.parametrize("fault", ["torn", "missing"])
-@pytest.mark.parametrize("path", SHELL)
-def test_an_update_torn_at_any_file_leaves_the_old_version(phone, serve, path, fault):
-    server = serve(version("one"))
+TRY_UPDATE = """async () => {
+  const registration = await navigator.serviceWorker.ready;
+  const seen = new Promise((resolve) => registration.addEventListener('updatefound', () => {
+    const worker = registration.installing;
+    worker.addEventListener('statechange', () => resolve(worker.state));
+  }, { once: true }));
+  await registration.update().catch(() => {});
+  return seen;
+}"""
+
+
+def test_an_update_torn_at_any_file_leaves_the_old_version(phone, serve):
+    """One phone, one try after another: Chromium takes 5 s over the first update of each phone."""
+    old, new = version("one"), version("two")
+    server = serve(old)
     installed(phone, server)
-    new = version("two")
-    server.source = {**new, path: new[path][:-3]} if fault == "torn" else {
-        name: content for name, content in new.items() if name != path
-    }
-    ended = phone.page.evaluate(
-        """async () => {
-          const registration = await navigator.serviceWorker.ready;
-          const seen = new Promise((resolve) => registration.addEventListener('updatefound', () => {
-            const worker = registration.installing;
-            worker.addEventListener('statechange', () => resolve(worker.state));
-          }, { once: true }));
-          await registration.update().catch(() => {});
-          return seen;
-        }"""
-    )
-    assert ended == "redundant"
-    assert len(phone.page.evaluate("caches.keys()")) == 1
+    tried = 0
+    for path in [name for name in new if name not in ("sw.js", "booklet.pdf")]:
+        if old[path] == new[path]:
+            continue
+        for broken in (new[path][:-3], None):
+            server.source = {**new, path: broken}
+            assert phone.page.evaluate(TRY_UPDATE) == "redundant", path
+            assert len(phone.page.evaluate("caches.keys()")) == 1
+            assert texts(phone) == [old[name].decode() for name in SHELL]
+            tried += 1
+    assert tried == 2 * len(SHELL)
     cut(phone, server)
     assert title(phone) == "one"
-    assert texts(phone) == [version("one")[name].decode() for name in SHELL]
     mend(phone, server)
     server.source = new
     phone.page.reload()
