@@ -8,6 +8,7 @@ that YAML turns into something else (yes, no, on, off, dates, 012, 1:30, 1_000, 
 from builder.rows.csv_rows import Sheet, csv_text, parse_csv, read_csv
 from builder.rows.files import read_text
 from builder.rows.nodes import Items, Node, Row, Scalar, Value, descend, plain
+from builder.rows.writing import block_text, flow_text, scalar_text, wrapped
 from builder.rows.yaml_rows import is_turned, parse_yaml, read_yaml
 
 __all__ = [
@@ -17,8 +18,10 @@ __all__ = [
     "Scalar",
     "Sheet",
     "Value",
+    "block_text",
     "csv_text",
     "descend",
+    "flow_text",
     "is_turned",
     "parse_csv",
     "parse_yaml",
@@ -26,4 +29,6 @@ __all__ = [
     "read_csv",
     "read_text",
     "read_yaml",
+    "scalar_text",
+    "wrapped",
 ]

@@ -25,6 +25,7 @@ class Sheet:
     columns: list[str]
     rows: list[Row]
     at: Place
+    separator: str = ","
 
 
 def read_csv(
@@ -60,7 +61,8 @@ def parse_csv(text: str, shown: str) -> tuple[Sheet | None, list[Problem]]:
         ]
     separator = max(",;\t", key=lines[first].count)
     problems: list[Problem] = []
-    records = _records("\n".join(lines[first:]), separator, first + 1, shown, problems)
+    skipped = sum(len(line) + 1 for line in lines[:first])
+    records = _records(text, skipped, separator, first + 1, shown, problems)
     header = next(records, [])
     columns = [cell.text.strip() for cell in header]
     for position, cell in enumerate(header):
@@ -95,7 +97,7 @@ def parse_csv(text: str, shown: str) -> tuple[Sheet | None, list[Problem]]:
         for cell in record:
             cell.parent = row
         rows.append(row)
-    return Sheet(notes, columns, rows, start), problems
+    return Sheet(notes, columns, rows, start, separator), problems
 
 
 def _note(line: str, at: Place, notes: dict[str, Value]) -> None:
@@ -105,11 +107,11 @@ def _note(line: str, at: Place, notes: dict[str, Value]) -> None:
 
 
 def _records(
-    text: str, separator: str, line: int, shown: str, problems: list[Problem]
+    text: str, position: int, separator: str, line: int, shown: str, problems: list[Problem]
 ) -> Iterator[list[Value]]:
     """Cells line by line; quoted cells may hold separators, quotes and line ends."""
     decimal_comma = separator == ";"
-    position, line_start, size = 0, 0, len(text)
+    line_start, size = position, len(text)
     record: list[Value] = []
     while position <= size:
         at = Place(shown, line, position - line_start + 1)

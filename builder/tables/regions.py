@@ -174,7 +174,12 @@ def _by_id(rows: tuple[Named, ...], wanted: str) -> Named:
 
 @dataclass
 class Loaded:
-    """A region as far as it could be read, and every problem met on the way."""
+    """A region as far as it could be read, and every problem met on the way.
+
+    region   the whole region, None while a table cannot be read
+    partial  what could be read, with empty tables for the rest, for the checks
+    read     names of the tables that could be read
+    """
 
     folder: Path
     shown: str
@@ -182,6 +187,8 @@ class Loaded:
     problems: list[Problem]
     roots: dict[str, Row | None] = field(default_factory=dict, repr=False)
     climate_sheet: Sheet | None = field(default=None, repr=False)
+    partial: Region | None = field(default=None, repr=False)
+    read: frozenset[str] = frozenset()
 
     def declared(self, table: str) -> set[str]:
         """Ids that stand in a table, read or not, so that one bad row brings no second problem."""
@@ -227,10 +234,21 @@ def load_region(folder: Path | str) -> Loaded:
     reader.problems += problems
     climate = _climate(sheet, reader) if sheet is not None else {}
     words = _languages(folder, reader)
-    region = None
-    if all(record is not None for record in files.values()) and sheet is not None:
-        region = _assembled(files, climate, words, reader)
-    return Loaded(folder, shown, region, in_order(reader.problems), roots, sheet)
+    read = {name for name, record in files.items() if record is not None}
+    partial = _assembled(files, climate, words, reader)
+    if sheet is not None:
+        read.add("climate")
+    whole = len(read) == len(YAML_TABLES) + 1
+    return Loaded(
+        folder,
+        shown,
+        partial if whole else None,
+        in_order(reader.problems),
+        roots,
+        sheet,
+        partial,
+        frozenset(read),
+    )
 
 
 def _assembled(
@@ -239,20 +257,26 @@ def _assembled(
     words: dict[str, Words],
     reader: Reader,
 ) -> Region:
+    def of(table: str, name: str, empty: Any) -> Any:
+        return empty if files[table] is None else getattr(files[table], name)
+
+    occurrence = {}
+    if files["occurrence"] is not None and files["region"] is not None:
+        occurrence = _occurrences(files["occurrence"], files["region"], reader)
     return Region(
         head=files["region"],
-        zones=files["zones"].zones,
-        plants=files["plants"].plants,
-        groups=files["plants"].groups,
-        occurrence=_occurrences(files["occurrence"], files["region"], reader),
-        questions=files["questions"].questions,
-        rules=files["questions"].rules,
-        production=files["production"].production,
-        soils=files["soils"].soils,
+        zones=of("zones", "zones", ()),
+        plants=of("plants", "plants", ()),
+        groups=of("plants", "groups", ()),
+        occurrence=occurrence,
+        questions=of("questions", "questions", ()),
+        rules=of("questions", "rules", ()),
+        production=of("production", "production", {}),
+        soils=of("soils", "soils", {}),
         climate=climate,
         reclaim=files["reclaim"],
-        mixes=files["seed"].mixes,
-        sources=files["sources"].sources,
+        mixes=of("seed", "mixes", {}),
+        sources=of("sources", "sources", {}),
         words=words,
         files=files,
     )
