@@ -52,6 +52,7 @@ SENTENCES = {
     "mix_empty": "The mix is empty.",
     "method_not_usable": "This region gives no rate for {value}.",
     "double_allowance": "The share {value} was already taken off this standard; it counts once.",
+    "one_standard": "Give a standard or the plots of a reference area, one of the two.",
     "confidence": "{field} must lie between 0 and 1, ends left out; this is {value}.",
     "probabilities_empty": "There is no zone to weigh.",
     "not_whole": "{field} must be a whole number; this is {value}.",

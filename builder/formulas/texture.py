@@ -1,11 +1,4 @@
-"""Texture class of mineral soil, from the laboratory or from the hand.
-
-Classes after the Soil Survey Manual (USDA Handbook 18, chapter 3); the path by
-feel after Thien (1979). A hand cannot tell silt from silt loam, so the path never
-ends in silt.
-"""
-
-from collections.abc import Mapping
+"""Texture class of mineral soil after the Soil Survey Manual (USDA Handbook 18, chapter 3)."""
 
 from builder.formulas.refusal import RefusedError, need_percent
 
@@ -41,18 +34,6 @@ _CENTRE = {
     "sandy clay": (50, 40),
     "clay": (25, 50),
 }
-
-FEEL_PATH: Mapping[str, Mapping[str, str]] = {
-    "ball": {"no": "=sand", "yes": "ribbon"},
-    "ribbon": {"none": "=loamy sand", "short": "feel_short", "middle": "feel_middle",
-               "long": "feel_long"},
-    "feel_short": {"gritty": "=sandy loam", "smooth": "=silt loam", "neither": "=loam"},
-    "feel_middle": {"gritty": "=sandy clay loam", "smooth": "=silty clay loam",
-                    "neither": "=clay loam"},
-    "feel_long": {"gritty": "=sandy clay", "smooth": "=silty clay", "neither": "=clay"},
-}  # fmt: skip
-"""Question -> answer -> next question, or "=class". A short ribbon breaks before 2.5 cm,
-a middle one before 5 cm."""
 
 
 def checked_soil(sand_pct: float, silt_pct: float, clay_pct: float) -> tuple[float, float, float]:
@@ -111,24 +92,3 @@ def class_centre(texture: str) -> tuple[float, float]:
         raise RefusedError("unknown_choice", field="texture", value=texture)
     sand, clay = _CENTRE[texture]
     return float(sand), float(clay)
-
-
-def feel_step(answers: Mapping[str, str]) -> tuple[str | None, str | None]:
-    """Where the hand test stands: (next question or None, class or None).
-
-    answers  answer by question: "ball" yes/no, "ribbon" none/short/middle/long,
-             "feel_short", "feel_middle", "feel_long" gritty/smooth/neither
-
-    Refused: an answer the question does not have.
-    Source: thien_1979; golden: texture.json
-    """
-    question = "ball"
-    while question in answers:
-        choices = FEEL_PATH[question]
-        if answers[question] not in choices:
-            raise RefusedError("unknown_choice", field=question, value=answers[question])
-        there = choices[answers[question]]
-        if there.startswith("="):
-            return None, there[1:]
-        question = there
-    return question, None

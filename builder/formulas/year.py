@@ -21,7 +21,7 @@ from builder.formulas.water_balance import (
 
 @dataclass(frozen=True)
 class SeasonRule:
-    """When a month counts as warm, moist and free of snow, and how the cold slows use.
+    """When a month counts as warm, moist and free of snow, and when a limit is named.
 
     Thresholds are demo. `cool_share` cuts potential use in months below `warm_c`.
     """
@@ -31,6 +31,10 @@ class SeasonRule:
     snow_free_mm: float = 60.0
     cool_share: float = 0.35
     near_water_cm: float = 30.0
+    little_water_mm: float = 50.0
+    unmet_share: float = 0.5
+    short_season_months: int = 5
+    wet_surplus_share: float = 0.5
     snow: Snow = field(default_factory=Snow)
 
 
@@ -160,37 +164,33 @@ class Limit:
     values: dict[str, float]
 
 
-LITTLE_WATER_MM = 50.0
-UNMET_SHARE = 0.5
-SHORT_SEASON_MONTHS = 5
-WET_SURPLUS_SHARE = 0.5
-
-
 def limits(
-    year: SiteYear, capacity_mm: float, water_table_cm: float | None = None,
-    near_water_cm: float = 30.0,
-) -> list[Limit]:  # fmt: skip
+    year: SiteYear,
+    capacity_mm: float,
+    water_table_cm: float | None = None,
+    rule: SeasonRule | None = None,
+) -> list[Limit]:
     """What holds plants back on a site, the strongest first. [word keys and figures]
 
-    wetness  ground water within near_water_cm: {depth_cm}
-    water    half or more of what the warm months could use is missing, or two or more
+    wetness  ground water within rule.near_water_cm: {depth_cm}
+    water    rule.unmet_share of what the warm months could use is missing, or two or more
              warm months are too dry to grow: {missing_mm, dry_months, warm_months}
-    warmth   five warm months or fewer: {warm_months, warmest_c}
-    soil     the rooted ground holds under 50 mm and is not wet: {held_mm}
-    surplus  more than half of the year's rain runs through: {surplus_mm, rain_mm}
+    warmth   rule.short_season_months warm months or fewer: {warm_months, warmest_c}
+    soil     the rooted ground holds under rule.little_water_mm: {held_mm}
+    surplus  more than rule.wet_surplus_share of the rain runs through: {surplus_mm, rain_mm}
 
-    The thresholds are demo; nothing listed means none of these was found.
+    Nothing listed means that none of these was found.
     Source: beltbook_rule; golden: year.json
     """
-    found = []
-    fed = is_fed(water_table_cm, near_water_cm)
+    found, season = [], rule or SeasonRule()
+    fed = is_fed(water_table_cm, season.near_water_cm)
     if fed and water_table_cm is not None:
         found.append(Limit("wetness", {"depth_cm": water_table_cm}))
     wanted = math.fsum(year.potential_mm[month - 1] for month in year.warm)
     missing = math.fsum(year.deficit_mm[month - 1] for month in year.warm)
     idle = len(year.warm) - len(year.growing)
-    short = len(year.warm) <= SHORT_SEASON_MONTHS
-    dry = wanted > 0 and (missing / wanted >= UNMET_SHARE or idle >= 2)
+    short = len(year.warm) <= season.short_season_months
+    dry = wanted > 0 and (missing / wanted >= season.unmet_share or idle >= 2)
     water = Limit(
         "water",
         {"missing_mm": missing, "dry_months": idle, "warm_months": len(year.warm)},
@@ -200,9 +200,9 @@ def limits(
         found.append(water)
     if short:
         found.append(warmth)
-    if need_not_negative("capacity_mm", capacity_mm) < LITTLE_WATER_MM and not fed:
+    if need_not_negative("capacity_mm", capacity_mm) < season.little_water_mm and not fed:
         found.append(Limit("soil", {"held_mm": capacity_mm}))
     surplus, rain = math.fsum(year.surplus_mm), math.fsum(year.rain_mm)
-    if rain > 0 and surplus / rain > WET_SURPLUS_SHARE:
+    if rain > 0 and surplus / rain > season.wet_surplus_share:
         found.append(Limit("surplus", {"surplus_mm": surplus, "rain_mm": rain}))
     return found
