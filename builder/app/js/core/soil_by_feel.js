@@ -1,0 +1,36 @@
+/** Texture by hand: a short path of questions after Thien (1979), to a class and its water. */
+import { refuse } from './refusal.js';
+import { mineralWater } from './soil_water.js';
+import { classCentre } from './texture.js';
+
+/**
+ * Question -> answer -> next question, or "=class". A short ribbon breaks before 2.5 cm, a
+ * middle one before 5 cm.
+ *
+ * @type {Record<string, Record<string, string>>}
+ */
+export const FEEL_PATH = {
+  ball: { no: '=sand', yes: 'ribbon' },
+  ribbon: { none: '=loamy sand', short: 'feel_short', middle: 'feel_middle', long: 'feel_long' },
+  feel_short: { gritty: '=sandy loam', smooth: '=silt loam', neither: '=loam' },
+  feel_middle: { gritty: '=sandy clay loam', smooth: '=silty clay loam', neither: '=clay loam' },
+  feel_long: { gritty: '=sandy clay', smooth: '=silty clay', neither: '=clay' },
+};
+
+/** Where the test stands: [next question or null, class or null]. @param {{answers: Record<string, string>}} of */
+export function feelStep({ answers }) {
+  let question = 'ball';
+  while (answers[question] !== undefined) {
+    const there = FEEL_PATH[question][answers[question]];
+    if (!there) refuse('unknown_choice', { field: question, value: answers[question] });
+    if (there.startsWith('=')) return [null, there.slice(1)];
+    question = there;
+  }
+  return [question, null];
+}
+
+/** Water held by a layer whose class was felt. @param {{texture: string, organic_matter_pct: number}} of */
+export function feelWater({ texture, organic_matter_pct }) {
+  const [sand_pct, clay_pct] = classCentre({ texture });
+  return mineralWater({ sand_pct, clay_pct, organic_matter_pct });
+}
