@@ -36,9 +36,8 @@ def app_files(app: Path = APP) -> dict[str, bytes]:
     files = {
         path: relative_imports(text, path, libraries).encode() for path, text in scripts.items()
     }
-    for path in sorted((app / "css").glob("*.css")):
-        style = slim_style(path.read_text("utf-8"))
-        files[f"app/css/{path.name}"] = style.encode()
+    for name, style in _styles(app).items():
+        files[f"app/css/{name}"] = style.encode()
         files.update(_fonts(style, app))
     files.update({f"app/words/{name}": text for name, text in _words(app).items()})
     files.update({f"app/icons/{name}": picture for name, picture in icons().items()})
@@ -60,6 +59,15 @@ def loaded_at_start(files: Mapping[str, bytes], first: str = MAIN) -> list[str]:
         for name in imports_of(re.sub(r"import\s*\(", "later(", text)):
             waiting.append(posixpath.normpath(posixpath.join(here, name)))
     return order
+
+
+def _styles(app: Path) -> dict[str, str]:
+    """The style sheets: the app's as one, the Book's apart, the tokens for both."""
+    read = {path.stem: path.read_text("utf-8") for path in sorted((app / "css").glob("*.css"))}
+    book, tokens = read.pop("book"), read.pop("tokens")
+    first, last = read.pop("app", ""), read.pop("shapes", "")
+    whole = slim_style("\n".join([tokens, first, *read.values(), last]))
+    return {"app.css": whole, "book.css": slim_style(tokens + "\n" + book)}
 
 
 def _libraries(app: Path) -> dict[str, str]:

@@ -97,7 +97,7 @@ def site_files(regions: Sequence[SiteRegion], app: Path = APP) -> dict[str, byte
         env,
         "index.html",
         policy=app_policy(),
-        styles=STYLES,
+        style=STYLE,
         scripts=loaded_at_start(files),
         **names,
     )
@@ -169,7 +169,7 @@ def _field_page(
     """field.html. Inside a page JSON is written a little differently, so its hashes are its own."""
     inside = {**files, **inert_files(files)}
     inside["regions.json"] = region_list(regions, inside)
-    part = inline(inside, STYLES)
+    part = inline(inside, STYLE)
     safe = {
         "imports": Markup(part.imports),
         "style": Markup(part.style),

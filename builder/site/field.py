@@ -42,11 +42,11 @@ class Inline:
     icon: str
 
 
-def inline(files: Mapping[str, bytes], styles: list[str]) -> Inline:
+def inline(files: Mapping[str, bytes], sheet: str) -> Inline:
     """Everything of the site that the single file needs.
 
-    files   the site's files
-    styles  paths of the style sheets in the order the page names them
+    files  the site's files
+    sheet  path of the app's style sheet
     """
     modules = {
         path: _address("text/javascript", named_imports(content.decode(), path).encode())
@@ -54,7 +54,7 @@ def inline(files: Mapping[str, bytes], styles: list[str]) -> Inline:
         if path.endswith(".js") and path not in (FIRST_SCRIPT, "sw.js")
     }
     imports = json.dumps({"imports": modules}, separators=(",", ":"))
-    style = "\n".join(_with_fonts(files[path].decode(), path, files) for path in styles)
+    style = _with_fonts(files[sheet].decode(), sheet, files)
     before = files[FIRST_SCRIPT].decode()
     start = f'import "{MAIN}";'
     return Inline(

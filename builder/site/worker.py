@@ -4,10 +4,13 @@ from __future__ import annotations
 
 import hashlib
 import json
+import re
 from collections.abc import Mapping
 
-LOADED_WHEN_ASKED = (".pdf",)  # large, and a phone can do without: not part of the installed version
-NEVER_CACHED = ("sw.js", "field.html")
+NOT_INSTALLED = re.compile(
+    r"sw\.js|field\.html"  # the worker itself; the edition without a server
+    r"|regions/[^/]+/(?:booklet\.pdf|book/.*)"  # large, and the app shows the Book itself
+)
 
 
 def worker_script(source: str, files: Mapping[str, bytes]) -> str:
@@ -22,7 +25,7 @@ def worker_script(source: str, files: Mapping[str, bytes]) -> str:
     hashes = {
         path: hashlib.sha256(content).hexdigest()
         for path, content in sorted(files.items())
-        if path not in NEVER_CACHED and not path.endswith(LOADED_WHEN_ASKED)
+        if not NOT_INSTALLED.fullmatch(path)
     }
     # The worker's own text counts: a failed install may then never touch the cache in use.
     version = hashlib.sha256(json.dumps(hashes).encode() + rest.encode()).hexdigest()[:16]

@@ -28,7 +28,7 @@ def version(mark):
       const tell = (name) => () => {{ window.told.push(name); document.documentElement.dataset.told = window.told.join(' '); }};
       window.versions = await watchVersions({{ onWaiting: tell('waiting'), onReplaced: tell('replaced'), onOffline: tell('offline') }});
     """.encode()
-    files["booklet.pdf"] = b"large and not kept"
+    files["regions/r/booklet.pdf"] = b"large and not kept"
     files["sw.js"] = worker_script((APP / "sw.js").read_text("utf-8"), files).encode()
     return files
 
@@ -127,7 +127,7 @@ def test_an_update_torn_at_any_file_leaves_the_old_version(phone, serve):
     server = serve(old)
     installed(phone, server)
     tried = 0
-    for path in [name for name in new if name not in ("sw.js", "booklet.pdf")]:
+    for path in [name for name in new if name not in ("sw.js", "regions/r/booklet.pdf")]:
         if old[path] == new[path]:
             continue
         for broken in (new[path][:-3], None):
