@@ -59,38 +59,45 @@ def read_answers(key: Key, site: Site) -> Reading:
     findings = read_findings(key, site)
     rules = fired_rules(key, site, findings)
     context = context_of(key, site, tuple(rule["effect"] for rule in rules if rule.get("effect")))
-    answers = [plant_answer(key, context, p, one) for p, one in findings.plants.items()]
-    answers += [
+    answers = [_finding_answer(key, context, p, one) for p, one in findings.plants.items()]
+    others = [
         _group_answer(key, context, findings, g, one)
         for g, one in findings.groups.items()
         if key.pack["groups"][g]["use"] == "answer"
     ]
-    answers += _question_answers(key, site, context)
-    answers += [
+    others += _question_answers(key, site, context)
+    others += [
         Answer("rule", rule["id"], "true", False, -1, -1, 4, False, np.array(rule["evidence"]))
         for rule in rules
         if rule.get("evidence")
     ]
-    shared = [replace(one, points=_azonal_share(key, context, one.points)) for one in answers]
-    return Reading(shared, context, findings, rules)
+    answers += [replace(one, points=azonal_share(key, context, one.points)) for one in others]
+    return Reading(answers, context, findings, rules)
 
 
-def plant_answer(key: Key, context: Context, p: int, finding: Finding) -> Answer:
-    """The answer for one plant under a context."""
-    found = finding["state"] == "found"
-    step = step_of(key, finding.get("cover")) if found else NOT_FOUND
+def plant_answer(key: Key, context: Context, p: int, step: int, word: str) -> Answer:
+    """The answer for one plant under a context; step -1 not found, 0..3 cover, 4 not given."""
+    found = step != NOT_FOUND
     row = newcomer_row(key, context, p, found)
+    points = found_points(key, context, p, step) if found else absent_points(key, context, p)
     return Answer(
         "plant",
         key.pack["plants"][p]["id"],
-        (finding.get("cover") or "found") if found else "not_found",
+        word,
         found,
         p,
         step,
         int(context.v[p]),
         row is None and not context.sown[p],
-        found_points(key, context, p, step) if found else absent_points(key, context, p),
+        azonal_share(key, context, points),
     )
+
+
+def _finding_answer(key: Key, context: Context, p: int, finding: Finding) -> Answer:
+    if finding["state"] != "found":
+        return plant_answer(key, context, p, NOT_FOUND, "not_found")
+    cover = finding.get("cover")
+    return plant_answer(key, context, p, step_of(key, cover), cover or "found")
 
 
 def newcomer_row(key: Key, context: Context, p: int, found: bool) -> int | None:
@@ -169,7 +176,7 @@ def _question_answers(key: Key, site: Site, context: Context) -> list[Answer]:
     return answers
 
 
-def _azonal_share(key: Key, context: Context, points: Ints) -> Ints:
+def azonal_share(key: Key, context: Context, points: Ints) -> Ints:
     """Water led in by people feeds azonal plants: what speaks for azonal ground counts in part."""
     if context.azonal_weight == 4:
         return points

@@ -115,19 +115,29 @@ def disturbance_of(key: Key, site: Site) -> dict[str, Any] | None:
     return None
 
 
-def _active_effects(key: Key, site: Site) -> list[dict[str, Any]]:
-    """Of the disturbance and of state answers, the site's before the disturbance's."""
-    disturbance = disturbance_of(key, site) or {}
+def told_answers(key: Key, site: Site) -> dict[str, str]:
+    """Ground answers by question: the site's own, else what its disturbance answers beforehand."""
+    states = (disturbance_of(key, site) or {}).get("states") or {}
     given = site.get("questions") or {}
-    effects = [disturbance["effect"]] if disturbance.get("effect") else []
+    told = {}
     for question in key.pack["questions"]:
-        by_value = {answer["value"]: answer for answer in question["answers"]}
-        value = given.get(question["id"])
-        if value not in by_value:
-            value = (disturbance.get("states") or {}).get(question["id"])
-        effect = by_value.get(value, {}).get("effect")
-        if effect:
-            effects.append(effect)
+        values = [answer["value"] for answer in question["answers"]]
+        for value in (given.get(question["id"]), states.get(question["id"])):
+            if value in values:
+                told[question["id"]] = value
+                break
+    return told
+
+
+def _active_effects(key: Key, site: Site) -> list[dict[str, Any]]:
+    """Of the disturbance, then of every answer told."""
+    own = (disturbance_of(key, site) or {}).get("effect")
+    effects = [own] if own else []
+    told = told_answers(key, site)
+    for question in key.pack["questions"]:
+        for answer in question["answers"]:
+            if answer.get("effect") and answer["value"] == told.get(question["id"]):
+                effects.append(answer["effect"])
     return effects
 
 

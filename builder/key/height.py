@@ -8,7 +8,7 @@ from typing import Any
 import numpy as np
 
 from builder.key.context import Context
-from builder.key.prepare import Ints, Key, Site
+from builder.key.prepare import Floats, Ints, Key, Site
 from builder.key.rounding import NATS_PER_CENTIBAN, round_half_up
 
 
@@ -20,21 +20,24 @@ def height_points(key: Key, site: Site, context: Context) -> Ints:
     height = (site.get("place") or {}).get("height_m")
     if height is None or context.height_off:
         return np.zeros(key.zones, np.int32)
-    return height_points_at(key, height + context.elevation_shift_m, heat_share(key, site))
+    at = np.array([height + context.elevation_shift_m], float)
+    return height_points_at(key, at, np.array([heat_share(key, site)]))[0]
 
 
-def height_points_at(key: Key, height_m: float, heat: float) -> Ints:
-    """Points per zone at a height [m] with a heat share -1..1."""
+def height_points_at(key: Key, height_m: Floats, heat: Floats) -> Ints:
+    """Points [site, zone] at heights [m] with heat shares -1..1, both [site]."""
     settings = key.settings["height"]
-    points = np.zeros(key.zones, np.int32)
-    for z, (zone, band) in enumerate(zip(key.pack["zones"], bands_at(key, heat), strict=True)):
-        if band is None:
+    points = np.zeros((len(height_m), key.zones), np.int32)
+    for z, zone in enumerate(key.pack["zones"]):
+        if not zone["band_m"]:
             continue
-        low, high = band
-        outside = max(low - height_m, height_m - high, 0.0) / zone["soft_edge_m"]
-        nats = min(0.5 * outside * outside, settings["cap_nats"])
-        points[z] = -round_half_up(nats / NATS_PER_CENTIBAN)
-    return np.maximum(points, points.max() - settings["most_cb"])
+        low, high = zone["band_m"]
+        shift = np.where(heat >= 0, heat * zone["south_shift_m"], -heat * zone["north_shift_m"])
+        outside = np.maximum(low + shift - height_m, height_m - (high + shift))
+        steps = np.maximum(outside, 0.0) / zone["soft_edge_m"]
+        nats = np.minimum(0.5 * steps * steps, settings["cap_nats"])
+        points[:, z] = -round_half_up(nats / NATS_PER_CENTIBAN)
+    return np.maximum(points, points.max(axis=1, keepdims=True) - settings["most_cb"])
 
 
 def bands_at(key: Key, heat: float) -> list[tuple[float, float] | None]:

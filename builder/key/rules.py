@@ -8,6 +8,7 @@ from __future__ import annotations
 import math
 from typing import Any
 
+from builder.key.context import told_answers
 from builder.key.findings import Findings
 from builder.key.prepare import Key, Site
 
@@ -37,9 +38,8 @@ def holds(key: Key, site: Site, findings: Findings, when: dict[str, Any]) -> flo
     if "group" in when:
         return _group_holds(key, findings, when)
     if "question" in when:
-        value = (site.get("questions") or {}).get(when["question"])
-        return _is(None if value == "cant_tell" else value, when)
-    return _fact_holds(site, when)
+        return is_value(told_answers(key, site).get(when["question"]), when)
+    return holds_fact(site, when)
 
 
 def _group_holds(key: Key, findings: Findings, when: dict[str, Any]) -> float:
@@ -80,19 +80,21 @@ def _cover_holds(
     return UNKNOWN if most > wanted else FALSE
 
 
-def _is(value: Any, when: dict[str, Any]) -> float:
+def is_value(value: Any, when: dict[str, Any]) -> float:
+    """Is a known value the one, or one of those, the condition names."""
     if value is None:
         return UNKNOWN
     wanted = when["is"]
     return float(value in wanted if isinstance(wanted, list) else value == wanted)
 
 
-def _fact_holds(site: Site, when: dict[str, Any]) -> float:
+def holds_fact(site: Site, when: dict[str, Any]) -> float:
+    """Does a fact of the site lie between the condition's limits."""
     value = (site.get("place") or {}).get(when["fact"])
     if value is None:
         value = site.get(when["fact"])
     if value is None or "is" in when:
-        return _is(value, when)
+        return is_value(value, when)
     if "at_least" in when and value < when["at_least"]:
         return FALSE
     return float("at_most" not in when or value <= when["at_most"])
