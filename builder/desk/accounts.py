@@ -11,6 +11,7 @@ from werkzeug.security import check_password_hash, generate_password_hash
 from werkzeug.wrappers import Response
 
 from builder.desk.guards import Patience
+from builder.desk.phrases import read_phrases
 
 SHORTEST_PASSWORD = 12
 # Compared when the name is unknown, so that the answer takes as long as for a known one.
@@ -49,18 +50,19 @@ def login() -> str | Response | tuple[str, int]:
         abort(404)
     if request.method == "GET":
         return render_template("login.html", refused=None)
+    say = read_phrases()["login"]
     patience: Patience = current_app.extensions["patience"]
     address = request.remote_addr or "unknown"
     if patience.worn_out(address):
-        return render_template("login.html", refused="wait"), 429
+        return render_template("login.html", refused=say["wait"]), 429
     name = request.form.get("name", "")
     right = check_password_hash(accounts.get(name, NOBODY), request.form.get("password", ""))
     if not right or name not in accounts:
         patience.failed(address)
-        return render_template("login.html", refused="wrong"), 403
+        return render_template("login.html", refused=say["wrong"]), 403
     session.clear()
     session["account"] = name
-    return redirect(url_for("overview.show"))
+    return redirect(url_for("overview.home"))
 
 
 @pages.post("/logout")

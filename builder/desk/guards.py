@@ -14,6 +14,8 @@ from urllib.parse import urlsplit
 from flask import Flask, Request, Response, abort, redirect, request, session, url_for
 from werkzeug.wrappers import Response as BaseResponse
 
+from builder.site.policy import app_policy
+
 LOOPBACK_HOSTS = ["127.0.0.1", "localhost"]
 READS = {"GET", "HEAD", "OPTIONS"}
 OPEN_ENDPOINTS = {"account.login", "static", None}
@@ -30,11 +32,8 @@ DESK_POLICY = (
     "font-src 'self'; connect-src 'self'; frame-src 'self'; object-src 'self'; "
     "form-action 'self'; frame-ancestors 'self'; base-uri 'none'"
 )
-FIELD_POLICY = (
-    "default-src 'none'; script-src 'self'; style-src 'self'; img-src 'self' data: blob:; "
-    "font-src 'self'; connect-src 'self'; manifest-src 'self'; worker-src 'self'; "
-    "form-action 'none'; frame-ancestors 'self'; base-uri 'none'"
-)
+FRAME = "frame-ancestors 'self'"
+SINGLE_FILE = "/field/field.html"  # holds its own policy, with the hashes of what is inside it
 HEADERS = {
     "X-Content-Type-Options": "nosniff",
     "X-Frame-Options": "SAMEORIGIN",
@@ -91,11 +90,20 @@ def ask_for_login(app: Flask) -> BaseResponse | None:
     abort(401)
 
 
+def policy(path: str) -> str:
+    """The content policy of an address: the app's own for the app, the desk's for all else."""
+    if path == SINGLE_FILE:
+        return FRAME
+    if path.startswith("/field/"):
+        return f"{app_policy()}; {FRAME}"
+    return DESK_POLICY
+
+
 def add_headers(answer: Response) -> Response:
     """Policy headers on every answer; the field app may use camera and position, the desk not."""
     field = request.path.startswith("/field/")
     answer.headers.update(HEADERS)
-    answer.headers["Content-Security-Policy"] = FIELD_POLICY if field else DESK_POLICY
+    answer.headers["Content-Security-Policy"] = policy(request.path)
     answer.headers["Permissions-Policy"] = FIELD_ALLOWED if field else NOTHING_ALLOWED
     if not field and request.endpoint != "static":
         answer.headers["Cache-Control"] = "no-store"

@@ -29,13 +29,16 @@ TYPES = {
 }
 
 pages = Blueprint("field", __name__, url_prefix="/field")
-_hashes: dict[tuple[str, int, int], str] = {}
+_hashes: dict[tuple[str, int, int, int], str] = {}
 
 
 def content_hash(path: Path) -> str:
-    """First 32 hex digits of the file's SHA-256, remembered while size and time stand."""
+    """First 32 hex digits of the file's SHA-256, remembered while the file is untouched.
+
+    The change time is part of the memory: a reproducible build may set the modification time.
+    """
     stat = path.stat()
-    key = (str(path), stat.st_mtime_ns, stat.st_size)
+    key = (str(path), stat.st_ino, stat.st_ctime_ns, stat.st_size)
     if key not in _hashes:
         if len(_hashes) > 5_000:
             _hashes.clear()

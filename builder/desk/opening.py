@@ -1,0 +1,53 @@
+"""Starts a desk as the command line asks: where, for whom, and what must be there first."""
+
+from __future__ import annotations
+
+import getpass
+from argparse import Namespace
+from collections.abc import Callable
+from pathlib import Path
+
+from builder.desk.accounts import add_account, read_accounts
+from builder.desk.application import Settings
+from builder.desk.guards import LOOPBACK_HOSTS
+from builder.desk.phrases import read_phrases
+from builder.desk.server import LOOPBACK, CannotServe, serve
+
+
+class CannotOpen(Exception):  # noqa: N818 - told to the person
+    """The desk cannot be opened as asked; the text says why and what to do."""
+
+
+def open_desk(given: Namespace, say: Callable[[str], None]) -> None:
+    """Serves until Ctrl-C. Raises CannotOpen with a sentence."""
+    home = Path.cwd()
+    settings = Settings(home=home, out=given.out.resolve())
+    words = read_phrases()["opening"]
+    if given.account:
+        _keep_account(settings, given.account)
+        say(words["kept"].format(name=given.account))
+        return
+    address = LOOPBACK
+    if given.open:
+        accounts = read_accounts(settings.state / "accounts.json")
+        if not accounts:
+            raise CannotOpen(words["no_account"])
+        hosts = [*LOOPBACK_HOSTS, given.open, *given.host]
+        settings = Settings(home, settings.out, hosts, accounts)
+        address = given.open
+        say(words["tls"])
+    try:
+        serve(settings, given.port, address, say)
+    except CannotServe as refusal:
+        raise CannotOpen(str(refusal)) from None
+
+
+def _keep_account(settings: Settings, name: str) -> None:
+    words = read_phrases()["opening"]
+    try:
+        password = getpass.getpass(words["password"])
+        if getpass.getpass(words["again"]) != password:
+            raise CannotOpen(words["differ"])
+        add_account(settings.state / "accounts.json", name, password)
+    except (EOFError, ValueError) as error:
+        raise CannotOpen(str(error) or words["no_password"]) from None

@@ -1,0 +1,26 @@
+"""The desk's sentences, read once from words/en.yaml."""
+
+from __future__ import annotations
+
+from functools import cache
+from pathlib import Path
+from typing import Any
+
+from builder.rows import plain, read_yaml
+
+FILE = Path(__file__).resolve().parent / "words" / "en.yaml"
+
+
+@cache
+def read_phrases() -> dict[str, Any]:
+    """Sentences by page. Raises ValueError when the file is wrong: it ships with the program."""
+    row, problems = read_yaml(FILE)
+    if problems or row is None:
+        raise ValueError(f"{FILE.name}: {problems}")
+    read: dict[str, Any] = plain(row)
+    return read
+
+
+def counted(number: int, words: dict[str, str], **more: object) -> str:
+    """ "1 problem" or "2 problems" from {one, many}."""
+    return (words["one"] if number == 1 else words["many"]).format(n=f"{number:,}", **more)
