@@ -117,10 +117,10 @@ def judge_many(
     rows = np.arange(len(belief))
     leader, rival = order[:, 0], order[:, 1]
     scale = settings["temper"] / weighing.drag
-    single = weighing.hot @ tables.alone + heard.ground.alone
-    mixed = weighing.hot @ tables.mixed + heard.ground.mixed
+    single = weighing.summed.alone + heard.ground.alone
+    mixed = weighing.summed.mixed + heard.ground.mixed
     gain = round6(scale[:, None] * (mixed - single.max(axis=1)[:, None]))
-    nothing = (weighing.hot @ tables.heard + heard.ground.heard) == 0
+    nothing = (weighing.summed.heard + heard.ground.heard) == 0
     scores = np.zeros((len(rows), 4))
     pairs = np.full((len(rows), 2), -1)
     for column, name, mask in ((1, "edge", key.pairs[2]), (2, "mosaic", ~key.pairs[2])):
@@ -135,7 +135,7 @@ def judge_many(
     other = np.where(pair >= 0, fit_many(key, context, tables, heard, both), fit)
     misfit = settings["misfit"]
     scores[:, 3] = round6(misfit["times"] * ((fit + other) / 2.0) + misfit["plus"])
-    finds = weighing.hot @ tables.best
+    finds = weighing.summed.best
     confident = belief[rows, leader] >= settings["thin"]["belief"]
     thin = (finds < settings["thin"]["finds_cb"]) & ~confident
     verdict = np.where(thin, 4, scores.argmax(axis=1))
@@ -150,7 +150,7 @@ def judge_many(
         "n": weighing.n,
         "fit": fit,
         "pair": told,
-        "finds_cb": finds.astype(int),
+        "finds_cb": finds,
         "zone_share": round6(weights[:, 0] / weights.sum(axis=1)),
     }
 

@@ -12,7 +12,7 @@ from builder.key.bulk_ground import Ground
 from builder.key.context import Context
 from builder.key.prepare import Floats, Ints, Key
 from builder.key.rounding import round_half_up
-from builder.key.tables_bulk import CHOICES, AnswerTables
+from builder.key.tables_bulk import AnswerTables, Summed
 
 
 @dataclass
@@ -36,7 +36,7 @@ class Heard:
 class Weighing:
     """Belief of a batch of plots: [plot, zone] and what it was made of."""
 
-    hot: Floats
+    summed: Summed
     n: NDArray[np.int64]
     drag: Floats
     belief: Floats
@@ -46,21 +46,13 @@ def weigh_many(
     key: Key, context: Context, tables: AnswerTables, heard: Heard
 ) -> Weighing:
     """Belief of every plot of a batch from what was heard."""
-    hot = one_hot(heard.steps)
-    points = hot @ tables.points + heard.ground.points
-    n = (hot @ tables.counts).astype(int) + heard.ground.n
+    summed = tables.summed(heard.steps)
+    points = summed.points + heard.ground.points
+    n = summed.n + heard.ground.n
     drag = np.asarray(drag_of(key, n))
     implied = implied_many(key, context, heard)
     total = key.area + heard.ground.height + (points + implied) / drag[:, None]
-    return Weighing(hot, n, drag, belief_of(key, total))
-
-
-def one_hot(steps: NDArray[np.int8]) -> Floats:
-    """[plot, plant * 6] with a 1 at each answer given."""
-    hot = np.zeros((*steps.shape, CHOICES))
-    plots, plants = np.nonzero(steps > -2)
-    hot[plots, plants, steps[plots, plants] + 1] = 1.0
-    return hot.reshape(len(steps), -1)
+    return Weighing(summed, n, drag, belief_of(key, total))
 
 
 def implied_many(key: Key, context: Context, heard: Heard) -> Ints:
@@ -69,7 +61,7 @@ def implied_many(key: Key, context: Context, heard: Heard) -> Ints:
     points = np.zeros((len(heard.steps), key.zones))
     for bound in range(3):
         rows = heard.bound == bound
-        if rows.any():
+        if rows.any() and free.any() and (heard.steps[rows] == -2).any():
             is_open = (heard.steps[rows] == -2) & free
             points[rows] = is_open.astype(float) @ key.implied[:, bound]
     return round_half_up(points * key.settings["implied_weight"])

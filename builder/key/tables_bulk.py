@@ -9,6 +9,7 @@ from dataclasses import dataclass
 
 import numpy as np
 from numpy.typing import NDArray
+from scipy.sparse import csr_array
 
 from builder.key.answers import NO_COVER, azonal_share
 from builder.key.context import GONE, Context
@@ -36,6 +37,51 @@ class AnswerTables:
     alone: Floats
     mixed: Floats
     plain: NDArray[np.bool_]
+
+    def summed(self, steps: NDArray[np.int8]) -> Summed:
+        """Sums over each plot's answers; steps [plot, plant] as in plots.Plots."""
+        zones, pairs = self.points.shape[1], self.mixed.shape[1]
+        parts = (self.points, self.alone, self.mixed, self.counts, self.best, self.heard)
+        table = np.column_stack([part.astype(float) for part in parts])
+        sums = chosen_sums(steps, table)
+        points, alone, mixed, rest = np.split(sums, [zones, 2 * zones, 2 * zones + pairs], axis=1)
+        n, best, heard = rest.T
+        return Summed(points, alone, mixed, n.astype(int), best.astype(int), heard.astype(int))
+
+
+@dataclass(frozen=True)
+class Summed:
+    """By plot: points and alone [plot, zone], mixed [plot, pair], n, best and heard [plot]."""
+
+    points: Floats
+    alone: Floats
+    mixed: Floats
+    n: NDArray[np.int64]
+    best: NDArray[np.int64]
+    heard: NDArray[np.int64]
+
+
+def chosen_sums(steps: NDArray[np.int8], table: Floats) -> Floats:
+    """Sum of the table's rows that each plot chose, [plot, column].
+
+    Where most plants are "not found" the sum starts from all of those and only the others are
+    put right: 100 000 plots of 151 plants take 2 s instead of 7.
+    """
+    plants = np.arange(steps.shape[1])
+    absent = steps == -1
+    from_absent = 2 * int(absent.sum()) > steps.size
+    plots, p = np.nonzero(~absent if from_absent else steps > -2)
+    step = steps[plots, p]
+    column, value = p * CHOICES + step + 1, np.where(step > -2, 1.0, 0.0)
+    column = np.maximum(column, p * CHOICES)
+    if from_absent:
+        plots = np.concatenate([plots, plots])
+        column = np.concatenate([column, p * CHOICES])
+        value = np.concatenate([value, np.full(len(p), -1.0)])
+    shape = (len(steps), len(table))
+    chosen = csr_array((value, (plots, column)), shape=shape)
+    base = table[plants * CHOICES].sum(axis=0) if from_absent else 0.0
+    return np.asarray(chosen @ table + base)
 
 
 def answer_tables(key: Key, context: Context) -> AnswerTables:

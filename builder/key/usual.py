@@ -22,7 +22,7 @@ from builder.key.tables_bulk import answer_tables
 
 BANDS = ((4, 5), (8, 10), (14, 20), (None, 9999))
 """Answers given in the session that stands for a band, and the most plants asked in the band."""
-SITES_PER_ZONE = 120
+SITES_PER_ZONE = 60
 SEED = 20260101
 LEAST_SPREAD = 0.02
 DIGITS = 4
