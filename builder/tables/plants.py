@@ -22,7 +22,7 @@ from builder.tables.shape import (
 FORM_LAYER = {
     "tree": "tree",
     "shrub": "shrub",
-    "dwarf_shrub": "shrub",
+    "dwarf_shrub": "dwarf_shrub",
     "subshrub": "shrub",
     "succulent": "shrub",
     "vine": "shrub",
@@ -33,9 +33,9 @@ FORM_LAYER = {
     "forb_perennial": "forb",
     "forb_biennial": "forb",
     "forb_annual": "forb",
-    "fern": "forb",
+    "fern": "fern",
     "moss": "moss",
-    "lichen": "moss",
+    "lichen": "lichen",
 }
 ORIGINS = ("native", "introduced")
 WEEDS = ("none", "ruderal", "invasive", "seeded")
@@ -105,7 +105,7 @@ class Plant(Record):
 
     @property
     def layer(self) -> str:
-        """The layer of the stand the plant belongs to: tree, shrub, grass, forb or moss."""
+        """The layer of the stand the plant belongs to; sedges and rushes count as grass."""
         return FORM_LAYER[self.form]
 
     def has_trait(self, trait: str) -> bool:
