@@ -1,7 +1,7 @@
 const BUILD = { version: '', files: {} };
 /**
  * Keeps one whole version of the app on the phone. The line above is written by the site builder:
- * every file with its SHA-256. A version is installed whole or not at all, waits until the person
+ * every file with the first half of its SHA-256. A version is installed whole or not at all, waits until the person
  * puts it to use, and answers without a network from then on. Records are not touched here.
  */
 const PREFIX = 'beltbook ';
@@ -31,14 +31,14 @@ async function install() {
 }
 
 /** Takes a file from an older version when its content is the same, else fetches and compares it. */
-async function keep(cache, path, sha256) {
-  const key = keyOf(path, sha256);
+async function keep(cache, path, hash) {
+  const key = keyOf(path, hash);
   const known = await caches.match(key);
   if (known) return cache.put(key, known);
   const response = await fetch(new URL(path, self.registration.scope), { cache: 'no-cache' });
   if (!response.ok) throw new Error(`${path}: ${response.status}`);
   const bytes = await response.arrayBuffer();
-  if (await digest(bytes) !== sha256) throw new Error(`${path}: not the content of this version`);
+  if (await digest(bytes) !== hash) throw new Error(`${path}: not the content of this version`);
   return cache.put(key, new Response(bytes, { headers: { 'Content-Type': response.headers.get('Content-Type') ?? '' } }));
 }
 
@@ -56,13 +56,13 @@ function ownPath(request) {
   return Object.hasOwn(BUILD.files, path) ? path : null;
 }
 
-function keyOf(path, sha256) {
-  return `${self.registration.scope}${path}?sha256=${sha256}`;
+function keyOf(path, hash) {
+  return `${self.registration.scope}${path}?hash=${hash}`;
 }
 
 async function digest(bytes) {
-  const hash = new Uint8Array(await crypto.subtle.digest('SHA-256', bytes));
-  return Array.from(hash, (byte) => byte.toString(16).padStart(2, '0')).join('');
+  const whole = new Uint8Array(await crypto.subtle.digest('SHA-256', bytes));
+  return Array.from(whole.slice(0, 16), (byte) => byte.toString(16).padStart(2, '0')).join('');
 }
 
 async function dropOlder() {

@@ -19,7 +19,7 @@ from builder.site.policy import app_policy
 from builder.site.swap import put_in_place
 from builder.site.worker import worker_script
 
-STYLES = [f"app/css/{name}.css" for name in ("tokens", "app", "edge", "entry", "pages", "shapes")]
+STYLE = "app/css/app.css"
 BOOKLET = "booklet.pdf"
 
 

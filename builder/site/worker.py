@@ -7,6 +7,7 @@ import json
 import re
 from collections.abc import Mapping
 
+HASH_DIGITS = 32  # 128 bits tell files apart; whole hashes made the list twice as large
 NOT_INSTALLED = re.compile(
     r"sw\.js|field\.html"  # the worker itself; the edition without a server
     r"|regions/[^/]+/(?:booklet\.pdf|book/.*)"  # large, and the app shows the Book itself
@@ -23,7 +24,7 @@ def worker_script(source: str, files: Mapping[str, bytes]) -> str:
     if not first.startswith("const BUILD = "):
         raise ValueError("sw.js must start with the line the builder replaces: const BUILD = …")
     hashes = {
-        path: hashlib.sha256(content).hexdigest()
+        path: hashlib.sha256(content).hexdigest()[:HASH_DIGITS]
         for path, content in sorted(files.items())
         if not NOT_INSTALLED.fullmatch(path)
     }
