@@ -76,7 +76,7 @@ def ratio_estimate(
 
     R x', v = s_d^2/n + (s_y^2 - s_d^2)/n' with d = y - R x, n clipped, n' in all;
     the second part is left out where it would be negative.
-    Source: cochran_1977 (double sampling, ratio); golden: double_sampling.json
+    Source: cochran_1977; golden: double_sampling.json
     """
     x, y, mean_all = _pairs(estimated, clipped, others, 2)
     ratio = correction_ratio(x, y)
@@ -100,7 +100,7 @@ def regression_estimate(
     y + b (x' - x), v = s^2 (1/n + (x' - x)^2/S_xx) + (s_y^2 - s^2)/n'; the last part is
     left out where it would be negative.
     Refused: all estimates alike.
-    Source: cochran_1977 (double sampling, regression); golden: double_sampling.json
+    Source: cochran_1977; golden: double_sampling.json
     """
     x, y, mean_all = _pairs(estimated, clipped, others, 3)
     n, in_all = len(x), len(x) + len(others)

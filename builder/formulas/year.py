@@ -188,7 +188,10 @@ def limits(
         found.append(Limit("wetness", {"depth_cm": water_table_cm}))
     wanted = math.fsum(year.potential_mm[month - 1] for month in year.warm)
     missing = math.fsum(year.deficit_mm[month - 1] for month in year.warm)
-    idle = len(year.warm) - len(year.growing)
+    idle = sum(
+        year.actual_mm[month - 1] < season.moist_share * year.potential_mm[month - 1]
+        for month in year.warm
+    )
     short = len(year.warm) <= season.short_season_months
     dry = wanted > 0 and (missing / wanted >= season.unmet_share or idle >= 2)
     water = Limit(
