@@ -10,6 +10,7 @@ from pathlib import Path
 
 from builder.rows import plain, read_yaml
 from builder.site.icons import icons
+from builder.site.join import joined
 from builder.site.slim import slim_script, slim_style
 from builder.site.specifiers import imports_of, relative_imports
 
@@ -33,9 +34,8 @@ def app_files(app: Path = APP) -> dict[str, bytes]:
     }
     needed = _needed(scripts.values(), app, libraries)
     scripts.update({path: (app / path.removeprefix("app/")).read_text("utf-8") for path in needed})
-    files = {
-        path: relative_imports(text, path, libraries).encode() for path, text in scripts.items()
-    }
+    scripts = {path: relative_imports(text, path, libraries) for path, text in scripts.items()}
+    files = {path: text.encode() for path, text in joined(scripts, MAIN).items()}
     for name, style in _styles(app).items():
         files[f"app/css/{name}"] = style.encode()
         files.update(_fonts(style, app))
@@ -43,22 +43,6 @@ def app_files(app: Path = APP) -> dict[str, bytes]:
     files.update({f"app/icons/{name}": picture for name, picture in icons().items()})
     files["app/vendor/licences.txt"] = (app / "vendor" / "licences.txt").read_bytes()
     return files
-
-
-def loaded_at_start(files: Mapping[str, bytes], first: str = MAIN) -> list[str]:
-    """Every script the first one needs before it runs, each after those that need it."""
-    order: list[str] = []
-    waiting = [first]
-    while waiting:
-        path = waiting.pop(0)
-        if path in order or path not in files:
-            continue
-        order.append(path)
-        text = files[path].decode()
-        here = posixpath.dirname(path)
-        for name in imports_of(re.sub(r"import\s*\(", "later(", text)):
-            waiting.append(posixpath.normpath(posixpath.join(here, name)))
-    return order
 
 
 def _styles(app: Path) -> dict[str, str]:

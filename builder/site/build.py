@@ -12,7 +12,7 @@ from typing import Any
 
 from markupsafe import Markup
 
-from builder.site.app_files import APP, app_files, loaded_at_start
+from builder.site.app_files import APP, app_files
 from builder.site.field import inert_files, inline
 from builder.site.pages import environment, rendered
 from builder.site.policy import app_policy
@@ -98,7 +98,6 @@ def site_files(regions: Sequence[SiteRegion], app: Path = APP) -> dict[str, byte
         "index.html",
         policy=app_policy(),
         style=STYLE,
-        scripts=loaded_at_start(files),
         **names,
     )
     files["field.html"] = _field_page(env, regions, files, names)
