@@ -153,16 +153,12 @@ def stacked(evidence: Evidence) -> weigh.Ints:
     return np.concatenate([found, evidence.absent, evidence.implied, expected], axis=1)
 
 
-def _per_10000(shares: Floats) -> list[Any]:
-    whole: list[Any] = weigh.round_half_up(shares * PER_10000).tolist()
-    return whole
-
-
 def _found_share(evidence: Evidence) -> list[Any]:
     """How often each cover step is given where the plant is reported, over the region."""
     seen = evidence.presence[:, None, :] * evidence.prior
     share = (seen * evidence.cover).sum(axis=2) / seen.sum(axis=2)
-    return _per_10000(np.maximum(share, 1.0 / PER_10000))
+    whole: list[Any] = weigh.round_half_up(np.maximum(share * 1000.0, 1.0)).tolist()
+    return whole
 
 
 def _indexes(region: Region, ids: tuple[str, ...]) -> list[int]:
