@@ -38,10 +38,10 @@ class Judgement:
     passes: bool
 
 
-def _null(null: str) -> bool:
-    if null not in ("direct", "reverse"):
-        raise RefusedError("unknown_choice", field="null", value=null)
-    return null == "reverse"
+def _null(null_kind: str) -> bool:
+    if null_kind not in ("direct", "reverse"):
+        raise RefusedError("unknown_choice", field="null_kind", value=null_kind)
+    return null_kind == "reverse"
 
 
 def _decide(
@@ -72,12 +72,12 @@ def standard_line(standard: float, share: float, share_already_taken: bool = Fal
     return need_not_negative("standard", standard) * part
 
 
-def one_sample(values: Sequence[float], line: float, alpha: float, null: str) -> Judgement:
+def one_sample(values: Sequence[float], line: float, alpha: float, null_kind: str) -> Judgement:
     """One-sided t test of plots against a fixed line. [unit of values]
 
     values  one number a plot;  line  from `standard_line`
     alpha   error risked, one-sided (0.10)
-    null    "direct": passes while (line - mean)/se <= t(1 - alpha), bound is the
+    null_kind  "direct": passes while (line - mean)/se <= t(1 - alpha), bound is the
             highest mean the plots allow; "reverse": passes once (mean - line)/se is
             over t(1 - alpha), bound is the lowest
 
@@ -87,11 +87,11 @@ def one_sample(values: Sequence[float], line: float, alpha: float, null: str) ->
     plots = summary(values)
     risk = need_open_share("alpha", alpha)
     level = need_not_negative("line", line)
-    return _decide(plots.mean, level, plots.se, plots.n - 1, risk, _null(null))
+    return _decide(plots.mean, level, plots.se, plots.n - 1, risk, _null(null_kind))
 
 
 def two_sample(
-    values: Sequence[float], reference: Sequence[float], share: float, alpha: float, null: str
+    values: Sequence[float], reference: Sequence[float], share: float, alpha: float, null_kind: str
 ) -> Judgement:
     """One-sided Welch test of plots against a share of a reference area. [unit of values]
 
@@ -108,7 +108,7 @@ def two_sample(
     else:
         df = spread**2 / (one**2 / (ours.n - 1) + other**2 / (theirs.n - 1))
     risk = need_open_share("alpha", alpha)
-    gap = _decide(ours.mean - theirs.mean, 0.0, math.sqrt(spread), df, risk, _null(null))
+    gap = _decide(ours.mean - theirs.mean, 0.0, math.sqrt(spread), df, risk, _null(null_kind))
     return Judgement(
         ours.mean, theirs.mean, df, gap.t, gap.t_critical, gap.p,
         gap.bound + theirs.mean, gap.passes,
@@ -116,7 +116,7 @@ def two_sample(
 
 
 def proportion(
-    successes: int, n: int, line: float, alpha: float, null: str
+    successes: int, n: int, line: float, alpha: float, null_kind: str
 ) -> tuple[float, float, bool]:
     """Judgement of a counted share (stocked plots, hits) against a line by Wilson's bound.
 
@@ -126,13 +126,13 @@ def proportion(
     the line, with the direct one the upper bound must not lie under it.
     Source: wilson_1927; golden: success.json
     """
-    reverse = _null(null)
+    reverse = _null(null_kind)
     wanted = need_share("line", line)
     bound = wilson_bound(successes, n, 1 - need_open_share("alpha", alpha), upper=not reverse)
     return successes / n, bound, bound > wanted if reverse else bound >= wanted
 
 
-def verdict(passes: bool, n: int, needed: float, least: int, null: str) -> str:
+def verdict(passes: bool, n: int, needed: float, least: int, null_kind: str) -> str:
     """Whether a standard is "met", "not_shown", or there are "too_few" plots. [word]
 
     n       plots taken
@@ -144,7 +144,7 @@ def verdict(passes: bool, n: int, needed: float, least: int, null: str) -> str:
     sample that still shows success has shown it.
     Source: colorado_4_15_11; golden: success.json
     """
-    reverse, short = _null(null), n < need_not_negative("needed", needed)
+    reverse, short = _null(null_kind), n < need_not_negative("needed", needed)
     if n < least or (short and not (reverse and passes)):
         return "too_few"
     return "met" if passes else "not_shown"

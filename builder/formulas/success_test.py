@@ -26,7 +26,7 @@ class SuccessTest:
     """Verdict met, not_shown, too_few or too_soon; both nulls; plots needed and still to take."""
 
     verdict: str
-    null: str
+    null_kind: str
     deciding: Judgement | None
     other: Judgement | None
     plots_needed: int | None
@@ -45,61 +45,63 @@ def success_test(
     """Test plots of a unit against a standard or the plots of a reference area.
 
     values       one number a plot: cover [%], growth [kg ha-1] or density
-    rule         null ("direct" or "reverse", the one that decides), share, alpha by null
+    rule         null_kind ("direct" or "reverse", the one that decides), share, alpha by null
                  (alpha_direct, alpha_reverse), precision, least (smallest count),
                  years (full years after the last seeding before a test counts; None: none)
     standard     fixed value, or None; reference  plots of the reference area, or None
     years_since  years since the last seeding, None when unknown
 
-    The sentence key is success.<null>.<verdict>, or success.too_soon.
+    The sentence key is success.<null_kind>.<verdict>, or success.too_soon.
     Refused: neither or both of standard and reference; a share counted twice; a rule with
     years where years_since is not known.
     Source: colorado_4_15_11, cfr_816_116; golden: success_test.json
     """
     if (standard is None) == (reference is None):
         raise RefusedError("one_standard")
-    null = rule["null"]
-    if null not in NULLS:
-        raise RefusedError("unknown_choice", field="null", value=null)
+    null_kind = rule["null_kind"]
+    if null_kind not in NULLS:
+        raise RefusedError("unknown_choice", field="null_kind", value=null_kind)
     wait = rule.get("years")
     if wait is not None and need_not_negative("years_since", years_since) < wait:
-        return SuccessTest("too_soon", null, None, None, None, 0, "success.too_soon")
+        return SuccessTest("too_soon", null_kind, None, None, None, 0, "success.too_soon")
     if len(values) < 2:
         return SuccessTest(
-            "too_few", null, None, None, None, max(2, rule["least"]) - len(values),
-            f"success.{null}.too_few",
+            "too_few", null_kind, None, None, None, max(2, rule["least"]) - len(values),
+            f"success.{null_kind}.too_few",
         )  # fmt: skip
     tests = {
         each: _test(values, each, rule, standard, reference, share_already_taken) for each in NULLS
     }
-    deciding = tests[null]
-    needed = _needed(values, rule, null)
-    answer = verdict(deciding.passes, len(values), needed, rule["least"], null)
+    deciding = tests[null_kind]
+    needed = _needed(values, rule, null_kind)
+    answer = verdict(deciding.passes, len(values), needed, rule["least"], null_kind)
     more = max(0, max(needed, rule["least"]) - len(values)) if answer == "too_few" else 0
-    other = tests["reverse" if null == "direct" else "direct"]
-    return SuccessTest(answer, null, deciding, other, needed, more, f"success.{null}.{answer}")
+    other = tests["reverse" if null_kind == "direct" else "direct"]
+    return SuccessTest(
+        answer, null_kind, deciding, other, needed, more, f"success.{null_kind}.{answer}"
+    )
 
 
 def _test(
     values: Sequence[float],
-    null: str,
+    null_kind: str,
     rule: Mapping[str, Any],
     standard: float | None,
     reference: Sequence[float] | None,
     share_already_taken: bool,
 ) -> Judgement:
-    alpha = rule[f"alpha_{null}"]
+    alpha = rule[f"alpha_{null_kind}"]
     if standard is not None:
         line = standard_line(standard, rule["share"], share_already_taken)
-        return one_sample(values, line, alpha, null)
+        return one_sample(values, line, alpha, null_kind)
     standard_line(1.0, rule["share"], share_already_taken)
-    return two_sample(values, reference or [], rule["share"], alpha, null)
+    return two_sample(values, reference or [], rule["share"], alpha, null_kind)
 
 
-def _needed(values: Sequence[float], rule: Mapping[str, Any], null: str) -> int:
+def _needed(values: Sequence[float], rule: Mapping[str, Any], null_kind: str) -> int:
     plots, least = summary(values), int(rule["least"])
     if plots.mean == 0:
         return max(2, least)
-    alpha = rule[f"alpha_{null}"]
+    alpha = rule[f"alpha_{null_kind}"]
     raw = plots_for_precision(plots.n, plots.mean, plots.sd, rule["precision"], alpha)
     return max(2, math.ceil(raw))

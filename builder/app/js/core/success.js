@@ -9,9 +9,11 @@ import {
 } from './refusal.js';
 import { summary } from './sample.js';
 
-function isReverse(kind) {
-  if (kind !== 'direct' && kind !== 'reverse') refuse('unknown_choice', { field: 'null', value: kind });
-  return kind === 'reverse';
+function isReverse(null_kind) {
+  if (null_kind !== 'direct' && null_kind !== 'reverse') {
+    refuse('unknown_choice', { field: 'null_kind', value: null_kind });
+  }
+  return null_kind === 'reverse';
 }
 
 function decide(mean, line, se, df, alpha, reverse) {
@@ -33,18 +35,18 @@ export function standardLine({ standard, share, share_already_taken = false }) {
   return needNotNegative('standard', standard) * part;
 }
 
-/** One-sided t test against a line. @param {{values: number[], line: number, alpha: number, null: string}} of */
-export function oneSample({ values, line, alpha, null: kind }) {
+/** One-sided t test against a line. @param {{values: number[], line: number, alpha: number, null_kind: string}} of */
+export function oneSample({ values, line, alpha, null_kind }) {
   const plots = summary({ values });
   const risk = needOpenShare('alpha', alpha);
-  return decide(plots.mean, needNotNegative('line', line), plots.se, plots.n - 1, risk, isReverse(kind));
+  return decide(plots.mean, needNotNegative('line', line), plots.se, plots.n - 1, risk, isReverse(null_kind));
 }
 
 /**
  * One-sided Welch test against a share of a reference area.
- * @param {{values: number[], reference: number[], share: number, alpha: number, null: string}} of
+ * @param {{values: number[], reference: number[], share: number, alpha: number, null_kind: string}} of
  */
-export function twoSample({ values, reference, share, alpha, null: kind }) {
+export function twoSample({ values, reference, share, alpha, null_kind }) {
   const part = needSomeShare('share', share);
   const ours = summary({ values });
   const theirs = summary({ values: reference.map((value) => value * part) });
@@ -55,16 +57,16 @@ export function twoSample({ values, reference, share, alpha, null: kind }) {
     ? ours.n + theirs.n - 2
     : spread ** 2 / (one ** 2 / (ours.n - 1) + other ** 2 / (theirs.n - 1));
   const risk = needOpenShare('alpha', alpha);
-  const gap = decide(ours.mean - theirs.mean, 0, Math.sqrt(spread), df, risk, isReverse(kind));
+  const gap = decide(ours.mean - theirs.mean, 0, Math.sqrt(spread), df, risk, isReverse(null_kind));
   return { ...gap, mean: ours.mean, line: theirs.mean, bound: gap.bound + theirs.mean };
 }
 
 /**
  * A counted share against a line by Wilson's bound: [share, bound, passes].
- * @param {{successes: number, n: number, line: number, alpha: number, null: string}} of
+ * @param {{successes: number, n: number, line: number, alpha: number, null_kind: string}} of
  */
-export function proportion({ successes, n, line, alpha, null: kind }) {
-  const reverse = isReverse(kind);
+export function proportion({ successes, n, line, alpha, null_kind }) {
+  const reverse = isReverse(null_kind);
   const wanted = needShare('line', line);
   const confidence = 1 - needOpenShare('alpha', alpha);
   const bound = wilsonBound({ successes, n, confidence, upper: !reverse });
@@ -73,10 +75,10 @@ export function proportion({ successes, n, line, alpha, null: kind }) {
 
 /**
  * "met", "not_shown" or "too_few".
- * @param {{passes: boolean, n: number, needed: number, least: number, null: string}} of
+ * @param {{passes: boolean, n: number, needed: number, least: number, null_kind: string}} of
  */
-export function verdict({ passes, n, needed, least, null: kind }) {
-  const reverse = isReverse(kind);
+export function verdict({ passes, n, needed, least, null_kind }) {
+  const reverse = isReverse(null_kind);
   const short = n < needNotNegative('needed', needed);
   if (n < least || (short && !(reverse && passes))) return 'too_few';
   return passes ? 'met' : 'not_shown';
