@@ -8,7 +8,8 @@ standard (0.9) applies once.
 
 import math
 from collections.abc import Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
+from itertools import pairwise
 
 from builder.formulas.cover import wilson_bound
 from builder.formulas.quantiles import t_above, t_quantile
@@ -72,7 +73,26 @@ def standard_line(standard: float, share: float, share_already_taken: bool = Fal
     return need_not_negative("standard", standard) * part
 
 
-def one_sample(values: Sequence[float], line: float, alpha: float, null_kind: str) -> Judgement:
+def line_at(points: Sequence[Sequence[float]], year: float) -> float | None:
+    """A trajectory's line in a year: straight between its points, flat after the last.
+
+    points  [year, value] pairs, years rising;  year  years since the work
+
+    None before the first point: nothing is asked yet.
+    Source: beltbook_rule; golden: success.json
+    """
+    at = need_not_negative("year", year)
+    if not points or at < points[0][0]:
+        return None
+    for (start, low), (end, high) in pairwise(points):
+        if at <= end:
+            return low + (high - low) * (at - start) / (end - start)
+    return points[-1][1]
+
+
+def one_sample(
+    values: Sequence[float], line: float, alpha: float, null_kind: str, at_most: bool = False
+) -> Judgement:
     """One-sided t test of plots against a fixed line. [unit of values]
 
     values  one number a plot;  line  from `standard_line`
@@ -80,6 +100,7 @@ def one_sample(values: Sequence[float], line: float, alpha: float, null_kind: st
     null_kind  "direct": passes while (line - mean)/se <= t(1 - alpha), bound is the
             highest mean the plots allow; "reverse": passes once (mean - line)/se is
             over t(1 - alpha), bound is the lowest
+    at_most  True where less is better (bare ground, weeds): both sides change places
 
     Refused: fewer than two plots, alpha outside (0, 1), another null.
     Source: colorado_4_15_11, student_1908; golden: success.json
@@ -87,7 +108,10 @@ def one_sample(values: Sequence[float], line: float, alpha: float, null_kind: st
     plots = summary(values)
     risk = need_open_share("alpha", alpha)
     level = need_not_negative("line", line)
-    return _decide(plots.mean, level, plots.se, plots.n - 1, risk, _null(null_kind))
+    if not at_most:
+        return _decide(plots.mean, level, plots.se, plots.n - 1, risk, _null(null_kind))
+    turned = _decide(-plots.mean, -level, plots.se, plots.n - 1, risk, _null(null_kind))
+    return replace(turned, mean=plots.mean, line=level, bound=-turned.bound)
 
 
 def two_sample(

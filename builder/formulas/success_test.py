@@ -13,6 +13,7 @@ from builder.formulas.sample import plots_for_precision, summary
 from builder.formulas.success import (
     Judgement,
     one_sample,
+    responsibility_years,
     standard_line,
     two_sample,
     verdict,
@@ -32,6 +33,43 @@ class SuccessTest:
     plots_needed: int | None
     more: int
     sentence: str
+
+
+def rule_of(
+    region: Mapping[str, Any], zone: Mapping[str, Any], rain_mm: float | None
+) -> dict[str, Any]:
+    """The rule a unit is tested by, from the region's rule and the zone's own figures.
+
+    region   success_rule of region.yaml as a mapping
+    zone     success of the zone's notes as a mapping; its share replaces the region's
+    rain_mm  yearly rain of the zone, which decides the years where the region has a break
+
+    The later of the region's years and the zone's earliest year holds. A region without
+    sample adequacy takes a tenth of the mean.
+    Source: cfr_816_116, beltbook_rule; golden: success_test.json
+    """
+    reverse, adequacy = region.get("reverse_null"), region.get("sample_adequacy")
+    shares = (zone.get("share"), region.get("share"), 1.0)
+    years = zone.get("earliest_year")
+    if region.get("rain_break_mm") is not None:
+        wait = responsibility_years(
+            need_not_negative("rain_mm", rain_mm),
+            region["rain_break_mm"],
+            region["years_wet"],
+            region["years_dry"],
+        )
+        years = max(wait, years or 0)
+    return {
+        "null_kind": region["null_kind"],
+        "share": next(share for share in shares if share is not None),
+        "alpha_direct": region["alpha"],
+        "alpha_reverse": reverse["alpha"] if reverse else region["alpha"],
+        "precision": adequacy["d"] if adequacy else 0.1,
+        "least": max(2, reverse["min_samples"])
+        if reverse and region["null_kind"] == "reverse"
+        else 2,
+        "years": years,
+    }
 
 
 def success_test(

@@ -62,7 +62,7 @@ def arguments(formula, given):
         kept["rule"] = SeasonRule(**{**kept["rule"], "snow": Snow(**kept["rule"]["snow"])})
     if "snow" in kept:
         kept["snow"] = Snow(**kept["snow"])
-    if "year" in kept:
+    if formula == "year.limits":
         kept["year"] = SiteYear(**kept["year"])
     return kept
 

@@ -35,11 +35,32 @@ export function standardLine({ standard, share, share_already_taken = false }) {
   return needNotNegative('standard', standard) * part;
 }
 
-/** One-sided t test against a line. @param {{values: number[], line: number, alpha: number, null_kind: string}} of */
-export function oneSample({ values, line, alpha, null_kind }) {
+/**
+ * A trajectory's line in a year: straight between its points, flat after the last; null before.
+ * @param {{points: [number, number][], year: number}} of
+ */
+export function lineAt({ points, year }) {
+  const at = needNotNegative('year', year);
+  if (!points.length || at < points[0][0]) return null;
+  for (let i = 1; i < points.length; i += 1) {
+    const [start, low] = points[i - 1];
+    const [end, high] = points[i];
+    if (at <= end) return low + ((high - low) * (at - start)) / (end - start);
+  }
+  return points[points.length - 1][1];
+}
+
+/**
+ * One-sided t test against a line; at_most where less is better.
+ * @param {{values: number[], line: number, alpha: number, null_kind: string, at_most?: boolean}} of
+ */
+export function oneSample({ values, line, alpha, null_kind, at_most = false }) {
   const plots = summary({ values });
   const risk = needOpenShare('alpha', alpha);
-  return decide(plots.mean, needNotNegative('line', line), plots.se, plots.n - 1, risk, isReverse(null_kind));
+  const level = needNotNegative('line', line);
+  const way = at_most ? -1 : 1;
+  const test = decide(way * plots.mean, way * level, plots.se, plots.n - 1, risk, isReverse(null_kind));
+  return { ...test, mean: plots.mean, line: level, bound: way * test.bound };
 }
 
 /**

@@ -1,9 +1,32 @@
 /** A success test as it is signed: the null that decides, the other beside it, and why not yet. */
 import { needNotNegative, refuse } from './refusal.js';
 import { plotsForPrecision, summary } from './sample.js';
-import { oneSample, standardLine, twoSample, verdict } from './success.js';
+import { oneSample, responsibilityYears, standardLine, twoSample, verdict } from './success.js';
 
 const NULLS = ['direct', 'reverse'];
+
+/**
+ * The rule a unit is tested by, from the region's success_rule, the zone's success and its
+ * yearly rain.
+ * @param {{region: object, zone: object, rain_mm: number | null}} of
+ */
+export function ruleOf({ region, zone, rain_mm }) {
+  const { reverse_null: reverse, sample_adequacy: adequacy, null_kind, alpha } = region;
+  let years = zone.earliest_year ?? null;
+  if ((region.rain_break_mm ?? null) !== null) {
+    const rain = needNotNegative('rain_mm', rain_mm);
+    years = Math.max(responsibilityYears({ ...region, rain_mm: rain }), years ?? 0);
+  }
+  return {
+    null_kind,
+    share: zone.share ?? region.share ?? 1,
+    alpha_direct: alpha,
+    alpha_reverse: reverse ? reverse.alpha : alpha,
+    precision: adequacy ? adequacy.d : 0.1,
+    least: reverse && null_kind === 'reverse' ? Math.max(2, reverse.min_samples) : 2,
+    years,
+  };
+}
 
 function testOf(values, null_kind, rule, standard, reference, share_already_taken) {
   const alpha = rule[`alpha_${null_kind}`];
