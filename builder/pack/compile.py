@@ -9,6 +9,7 @@ from builder.key.compile import Fitted, arrays_of, compile_key
 from builder.key.usual import usual_fit
 from builder.pack.canonical import canonical, figures
 from builder.pack.probe_sites import make_probes
+from builder.pack.sheets import sheets
 from builder.pack.texts import compile_texts
 from builder.tables import Region
 
@@ -31,6 +32,7 @@ def compile_pack(
         "region": _region(region),
         **key,
         **_ground(region),
+        **sheets(region),
         "proof": proof or UNTESTED,
         "probes": [],
     }

@@ -3,6 +3,8 @@ import { normalBelow, normalQuantile } from './quantiles.js';
 import { needAboveZero, needNotNegative, needNumber, needOpenShare, needSameLength, refuse, sum } from './refusal.js';
 
 const LEAST_SHARE = 0.1;
+/** Shares of a zone's sites below the low and the high end of a range. */
+export const RANGE_SHARES = [0.2, 0.8];
 const RAIN_SOURCES = ['gauge', 'office', 'guess'];
 
 /**
@@ -23,7 +25,7 @@ const logSpread = (cv) => Math.sqrt(Math.log1p(needNotNegative('spread_cv', cv) 
  * Range of a zone's sites in one year, lognormal about its median: [low, high]. [kg ha-1]
  * @param {{centre_kg_ha: number, spread_cv: number, low?: number, high?: number}} of
  */
-export function yearRange({ centre_kg_ha, spread_cv, low = 0.2, high = 0.8 }) {
+export function yearRange({ centre_kg_ha, spread_cv, low = RANGE_SHARES[0], high = RANGE_SHARES[1] }) {
   const centre = needAboveZero('centre_kg_ha', centre_kg_ha);
   const spread = logSpread(spread_cv);
   return [low, high].map((share) => centre * Math.exp(normalQuantile({ share }) * spread));

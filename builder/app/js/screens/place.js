@@ -36,7 +36,7 @@ export function Place() {
 }
 
 function Disturbance({ region: here, record }) {
-  const options = [{ value: '', label: t('place.undisturbed') }, ...here.disturbances.map((one) => ({ value: one.id, label: one.name }))];
-  return html`<${Choice} label=${t('place.disturbance')} options=${options} value=${record.disturbance ?? ''}
-    onPick=${(value) => change({ disturbance: value || null }, t('undo.disturbance'))}/>`;
+  const options = here.disturbances.map((one) => ({ value: one.id, label: one.name }));
+  return html`<${Choice} label=${t('place.disturbance')} options=${options} value=${record.disturbance}
+    onPick=${(value) => change({ disturbance: value === record.disturbance ? null : value }, t('undo.disturbance'))}/>`;
 }

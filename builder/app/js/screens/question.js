@@ -1,7 +1,7 @@
 /** One ground question: what to look at, its answers as keys, why it is asked and what to do then. */
 import { html } from 'htm/preact';
 import { t } from './words.js';
-import { change, say, site } from './state.js';
+import { change, region, say, site } from './state.js';
 import { Choice } from './parts/choice.js';
 
 /** @param {{question: object, value: string|undefined, unsure?: string}} props unsure: words of the no-evidence key */
@@ -9,8 +9,15 @@ export function Question({ question, value, unsure = t('question.cant_tell') }) 
   const options = [...question.answers, { value: 'cant_tell', label: unsure }];
   const pick = (picked) => answerQuestion(question, picked === value ? null : picked);
   const given = value && value !== 'cant_tell';
-  return html`<div><${Choice} label=${question.ask} options=${options} value=${value ?? null} onPick=${pick} row/>
+  const damage = value ? undefined : damageSays(question.id);
+  return html`<div><${Choice} label=${question.ask} options=${options} value=${value ?? null} given=${damage} onPick=${pick} row/>
+    ${damage && html`<p class="after small">${t('question.from_damage')}</p>`}
     ${given && question.act && html`<p class="after">${question.act}</p>`}</div>`;
+}
+
+/** What the damage named above answers beforehand; the person may answer otherwise. */
+function damageSays(id) {
+  return region.value.disturbances.find((one) => one.id === site.value.disturbance)?.states?.[id];
 }
 
 /** Keeps an answer to a ground question; null takes it out. */

@@ -7,11 +7,11 @@ export function makeRegion(pack, texts) {
   const belts = dressed(pack, texts, 'zonal');
   const lenses = dressed(pack, texts, 'azonal');
   const zones = [...belts, ...lenses];
-  const plants = pack.plants.map((plant) => ({ ...plant, ...texts.plants[plant.id] }));
-  const groups = pack.groups.map((group) => ({ ...group, ...texts.groups?.[group.id] }));
-  const questions = pack.questions.map((question) => worded(question, texts.questions[question.id]));
+  const plants = pack.plants.map((plant) => ({ ...texts.plants[plant.id], ...plant }));
+  const groups = pack.groups.map((group) => ({ ...texts.groups?.[group.id], ...group }));
+  const questions = pack.questions.filter((question) => question.asked !== false).map((question) => worded(question, texts.questions[question.id]));
   return {
-    pack, texts, belts, lenses, zones, plants, groups, questions,
+    id: pack.region.id, pack, texts, belts, lenses, zones, plants, groups, questions,
     name: texts.region.name, edition: pack.region.edition,
     zone: byId(zones), plant: byId(plants), group: byId(groups), question: byId(questions),
     disturbances: pack.disturbances.map((one) => ({ ...one, name: texts.disturbances[one.id].name ?? texts.disturbances[one.id] })),
@@ -24,14 +24,14 @@ const byId = (rows) => new Map(rows.map((row) => [row.id, row]));
 function dressed(pack, texts, kind) {
   const own = pack.zones.filter((zone) => zone.kind === kind);
   return own.map((zone, place) => {
-    const whole = { ...zone, ...texts.zones[zone.id], index: pack.zones.indexOf(zone), place };
+    const whole = { ...texts.zones[zone.id], ...zone, index: pack.zones.indexOf(zone), place };
     return { ...whole, marks: marksOf(whole, place), colour: colourOf(whole, place, own.length) };
   });
 }
 
 function worded(question, text) {
   const answers = question.answers.map((answer) => ({ ...answer, label: text.answers[answer.value] }));
-  return { ...question, ...text, answers };
+  return { ...text, ...question, answers };
 }
 
 /** True where the first thing said about a plant must be its caution: people, deadly or harm. */

@@ -1,6 +1,8 @@
 /** Figures as words: odds, shares, cover classes, heights and lengths in the person's own units. */
 import { t, number } from './words.js';
 import { units } from './settings.js';
+import { rounded } from '../core/rounding.js';
+import { converted } from '../core/units.js';
 import { coverBounds } from './region.js';
 
 const METRES_PER_FOOT = 0.3048;
@@ -46,3 +48,29 @@ export const heightShown = (metres) => Math.round(units.value === 'us' ? metres 
 export const heightFrom = (typed) => (typed === null ? null : Math.round(units.value === 'us' ? typed * METRES_PER_FOOT : typed));
 
 export const heightUnit = () => t(units.value === 'us' ? 'unit.ft_sign' : 'unit.m_sign');
+
+const yieldUnit = () => (units.value === 'us' ? 'lb_acre' : 'kg_ha');
+
+/** Growth as the number people read, whole, in their own unit. @param {number} kg_ha */
+export const yieldShown = (kg_ha) => rounded(converted({ value: kg_ha, unit: 'kg_ha', to: yieldUnit() }), 0);
+
+/** Growth in words: "1,390 kg/ha". @param {number} kg_ha */
+export const yieldWords = (kg_ha) => t(units.value === 'us' ? 'unit.lb_ac' : 'unit.kg_ha', { n: yieldShown(kg_ha) });
+
+/** Typed growth in kg/ha. @param {number|null} typed */
+export const yieldFrom = (typed) => (typed === null ? null : converted({ value: typed, unit: yieldUnit(), to: 'kg_ha' }));
+
+export const yieldSign = () => t(units.value === 'us' ? 'unit.lb_ac_sign' : 'unit.kg_ha_sign');
+
+/** Rain or water held. @param {number} mm */
+export const waterWords = (mm) => (units.value === 'us' ? t('unit.inch', { n: number(converted({ value: mm, unit: 'mm', to: 'in' }), 1) }) : t('unit.mm', { n: rounded(mm, 0) }));
+
+/** A mass. @param {number} kg */
+export const massWords = (kg) => (units.value === 'us'
+  ? t('unit.lb', { n: number(rounded(converted({ value: kg, unit: 'kg', to: 'lb' }), 2), 2) })
+  : t('unit.kg', { n: number(rounded(kg, 2), 2) }));
+
+/** An area. @param {number} ha */
+export const areaWords = (ha) => (units.value === 'us'
+  ? t('unit.acre', { n: number(rounded(converted({ value: ha, unit: 'ha', to: 'acre' }), 1), 1) })
+  : t('unit.ha', { n: number(rounded(ha, 1), 1) }));

@@ -1,16 +1,19 @@
 /** Choosing one of a few: keys in a row when they are short, loose keys when they are many or long. */
 import { html } from 'htm/preact';
 
-/** @param {{label: string, options: {value: string, label: string}[], value: string|null, onPick: (value: string) => void, row?: boolean, hidden?: boolean}} props
+/** @param {{label: string, options: {value: string, label: string}[], value: string|null, onPick: (value: string) => void, row?: boolean, hidden?: boolean, given?: string}} props
+ *  given: the value that something else has answered beforehand
  *  hidden: the label is read out but a heading above already shows it */
-export function Choice({ label, options, value, onPick, row = false, hidden = false }) {
+export function Choice({ label, options, value, onPick, row = false, hidden = false, given }) {
   const long = options.length > 3 || options.some((one) => one.label.length > 12);
   const shape = row && !long ? 'seg' : 'chips';
   return html`<div class="ask" role="group" aria-label=${label}>
     ${!hidden && html`<p>${label}</p>`}
-    <div class=${shape}>${options.map((one) => html`<button key=${one.value} type="button" class=${shape === 'chips' ? 'chip' : ''}
-      aria-pressed=${String(one.value === value)} onClick=${() => onPick(one.value)}>${one.label}</button>`)}</div></div>`;
+    <div class=${shape}>${options.map((one) => html`<button key=${one.value} type="button" class=${`${shape === 'chips' ? 'chip' : ''} ${one.value === given ? 'given' : ''}`}
+      aria-pressed=${String(one.value === value)} onClick=${() => onPick(one.value)}>${sentence(one.label)}</button>`)}</div></div>`;
 }
+
+const sentence = (text) => text.charAt(0).toLocaleUpperCase() + text.slice(1);
 
 /** A value between a less and a more key. @param {{label: string, children: unknown, onLess: () => void, onMore: () => void, less: string, more: string}} props */
 export function Stepper({ children, onLess, onMore, less, more }) {
