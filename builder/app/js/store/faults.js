@@ -3,7 +3,7 @@
  * words/<language>.yaml under `store`, one entry per code.
  */
 
-/** @typedef {'full'|'aborted'|'lost'|'conflict'|'blocked'|'newer'|'none'|'torn'|'probes'|'unread'} FaultCode */
+/** @typedef {'full'|'aborted'|'lost'|'conflict'|'blocked'|'newer'|'none'|'torn'|'probes'|'unread'|'too_large'|'not_ours'} FaultCode */
 
 /** A storage fault with a code that the words file knows. */
 export class Fault extends Error {

@@ -9,6 +9,8 @@
  *   await listSites(store); await loadSite(store, id); await removeSite(store, id);
  *   await listSides(store, id); await settleSide(store, key, 'mine' | 'theirs');
  *   await addPhoto(store, site.id, { bytes, type });     // photosOf, captionPhoto, removePhoto, photoUrl
+ *   const text = await exportRecords(store, ids, { photos, names });
+ *   await takeIn(store, readRecords(text));              // readRecords(…).refused, .changed to be told
  *   await getSetting(store, 'mode'); await setSetting(store, 'mode', 'sun');
  *   const [offer] = await readRegions(); await readWords('en');
  *   const start = await tablesAtStart(store, offer, { readFile, checkProbes });   // see editions.js
@@ -21,6 +23,7 @@ import { connections } from './schema.js';
 import { opened } from './tx.js';
 
 export { fetchTables, tablesAtStart, tablesInUse, tablesOf, useTables } from './editions.js';
+export { exportRecords, initialsOf, readRecords, takeIn } from './exchange.js';
 export { Fault, faultOf } from './faults.js';
 export { readFile, readRegions, readWords } from './files.js';
 export { newId } from './ids.js';
