@@ -83,7 +83,9 @@ export function limits({ year, capacity_mm, water_table_cm = null, rule }) {
   const wanted = over(year.potential_mm);
   const missing_mm = over(year.deficit_mm);
   const warm_months = year.warm.length;
-  const dry_months = warm_months - year.growing.length;
+  const dry_months = year.warm.filter(
+    (month) => year.actual_mm[month - 1] < rule.moist_share * year.potential_mm[month - 1],
+  ).length;
   const dry = wanted > 0 && (missing_mm / wanted >= rule.unmet_share || dry_months >= 2);
   if (dry && !fed) found.push({ key: 'water', values: { missing_mm, dry_months, warm_months } });
   if (warm_months <= rule.short_season_months) {
