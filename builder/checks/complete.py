@@ -19,7 +19,7 @@ NEEDS = (*YAML_TABLES, "climate")
 
 def check(loaded: Loaded) -> Iterator[Problem]:
     """What a zone lacks, reported at the zone."""
-    region = loaded.region
+    region = loaded.partial
     if region is None:
         return
     placed = {zone_id for zone_id, _ in region.occurrence}

@@ -1,11 +1,11 @@
 """A rule's condition asks one thing at a time, of answers that a question has.
 
 Passes: questions.yaml rules: [{id: r, when: {group: bunch_grass, count_at_least: 2},
-    zone_log_odds: {lower: 1}, why: x, act: y}]
+    zone_log_odds: {lower: 1}, why: so, act: go}]
 Fails: questions.yaml rules: [{id: r, when: {group: bunch_grass}, zone_log_odds: {lower: 1},
-    why: x, act: y}]
+    why: so, act: go}]
 Fails: questions.yaml rules: [{id: r, when: {question: soil_moved, answer: perhaps}, effect:
-    {sown: true}, why: x, act: y}]
+    {sown: true}, why: so, act: go}]
 """
 
 from __future__ import annotations

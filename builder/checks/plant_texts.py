@@ -19,7 +19,7 @@ def check(loaded: Loaded) -> Iterator[Problem]:
     """Names that search could not tell apart."""
     if loaded.partial is None:
         return
-    names: dict[str, str] = {}
+    names = {plant.scientific.lower(): plant.id for plant in reversed(loaded.partial.plants)}
     commons: dict[str, str] = {}
     codes: dict[str, str] = {}
     for plant in loaded.partial.plants:

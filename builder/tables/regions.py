@@ -6,7 +6,7 @@ from dataclasses import dataclass, field
 from pathlib import Path
 from typing import Any, TypeVar
 
-from builder.problems import Place, Problem, in_order, nearest, problem_at
+from builder.problems import Place, Problem, errors, in_order, nearest, problem_at
 from builder.rows import Items, Node, Row, Sheet, Value, read_csv, read_yaml
 from builder.tables.climate import Month
 from builder.tables.languages import Words
@@ -176,7 +176,7 @@ def _by_id(rows: tuple[Named, ...], wanted: str) -> Named:
 class Loaded:
     """A region as far as it could be read, and every problem met on the way.
 
-    region   the whole region, None while a table cannot be read
+    region   the whole region; None while anything in a table could not be read
     partial  what could be read, with empty tables for the rest, for the checks
     read     names of the tables that could be read
     """
@@ -238,7 +238,7 @@ def load_region(folder: Path | str) -> Loaded:
     partial = _assembled(files, climate, words, reader)
     if sheet is not None:
         read.add("climate")
-    whole = len(read) == len(YAML_TABLES) + 1
+    whole = len(read) == len(YAML_TABLES) + 1 and not errors(reader.problems)
     return Loaded(
         folder,
         shown,
