@@ -19,10 +19,8 @@ import { roundHalfUp } from './rounding.js';
 /** @returns {{answers: Answer[], context: object, findings: object, rules: object[]}} */
 export function readAnswers(key, site) {
   const findings = readFindings(key, site);
-  let context = contextOf(key, site);
   const rules = firedRules(key, site, findings);
-  const effects = rules.map((rule) => rule.effect).filter(Boolean);
-  if (effects.length) context = contextOf(key, { ...site, rule_effects: effects });
+  const context = contextOf(key, site, rules.map((rule) => rule.effect).filter(Boolean));
   const answers = [
     ...[...findings.plants].map(([p, finding]) => plantAnswer(key, context, p, finding)),
     ...[...findings.groups].map(([g, finding]) => groupAnswer(key, context, findings, g, finding)),

@@ -14,9 +14,9 @@ import { roundHalfUp } from './rounding.js';
  * @property {Map<string, number>} questionWeight quarters of a ground answer that count
  */
 
-/** @returns {Context} */
-export function contextOf(key, site) {
-  const effects = activeEffects(key, site);
+/** more: effects of rules that hold, on top of the site's own. @returns {Context} */
+export function contextOf(key, site, more = []) {
+  const effects = activeEffects(key, site, more);
   const arrays = effects.map((effect) => effectArrays(key, effect));
   const context = blank(key, site, effects);
   const dry = key.settings.seen_dry_outside;
@@ -83,22 +83,29 @@ export function disturbanceOf(key, site) {
   return key.pack.disturbances.find((one) => one.id === site.disturbance);
 }
 
-/** Effects of the disturbance, of state answers (the site's before the disturbance's) and rules. */
-function activeEffects(key, site) {
-  const disturbance = disturbanceOf(key, site);
+/** Ground answers by question: the site's own, else what its disturbance answers beforehand. */
+export function toldAnswers(key, site) {
+  const states = disturbanceOf(key, site)?.states ?? {};
   const given = site.questions ?? {};
-  const effects = [];
-  if (disturbance?.effect) effects.push(disturbance.effect);
-  key.pack.questions.forEach((question) => {
-    const own = given[question.id];
-    const value = known(question, own) ? own : disturbance?.states?.[question.id];
-    const answer = question.answers.find((one) => one.value === value);
-    if (answer?.effect) effects.push(answer.effect);
+  const told = new Map();
+  key.pack.questions.forEach(({ id, answers }) => {
+    const value = [given[id], states[id]].find((one) => answers.some((two) => two.value === one));
+    if (value !== undefined) told.set(id, value);
   });
-  return effects.concat(site.rule_effects ?? []);
+  return told;
 }
 
-const known = (question, value) => question.answers.some((one) => one.value === value);
+/** Effects of the disturbance, of every answer told, and of rules that hold. */
+function activeEffects(key, site, more) {
+  const own = disturbanceOf(key, site)?.effect;
+  const effects = own ? [own] : [];
+  const told = toldAnswers(key, site);
+  key.pack.questions.forEach((question) => {
+    const answer = question.answers.find((one) => one.value === told.get(question.id));
+    if (answer?.effect) effects.push(answer.effect);
+  });
+  return effects.concat(more);
+}
 
 function effectArrays(key, effect) {
   let arrays = key.effects.get(effect);

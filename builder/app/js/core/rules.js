@@ -2,6 +2,7 @@
  * Habitat rules over plants, groups, ground answers and site facts, in three-valued logic.
  * Unknown stays unknown: a plant nobody searched for never fires or blocks a rule.
  */
+import { toldAnswers } from './context.js';
 
 const UNKNOWN = 0.5;
 const truth = (value) => (value ? 1 : 0);
@@ -22,7 +23,7 @@ export function holds(key, site, findings, when) {
   if (when.not) return 1 - inner(when.not);
   if (when.plant !== undefined) return coverHolds([key.plantAt.get(when.plant)], when, key, findings);
   if (when.group !== undefined) return groupHolds(key, findings, when);
-  if (when.question !== undefined) return questionHolds(site, when);
+  if (when.question !== undefined) return questionHolds(key, site, when);
   return factHolds(site, when);
 }
 
@@ -64,9 +65,9 @@ function coverHolds(members, when, key, findings) {
   return most > wanted ? UNKNOWN : 0;
 }
 
-function questionHolds(site, when) {
-  const value = site.questions?.[when.question];
-  if (value === undefined || value === null || value === 'cant_tell') return UNKNOWN;
+function questionHolds(key, site, when) {
+  const value = toldAnswers(key, site).get(when.question);
+  if (value === undefined) return UNKNOWN;
   return truth(Array.isArray(when.is) ? when.is.includes(value) : value === when.is);
 }
 

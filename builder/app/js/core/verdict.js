@@ -52,26 +52,32 @@ export function zoneShare(scores) {
 
 /** Tempered gain in log likelihood of the best neighbours and the best other pair. [nats] */
 function explanations(key, weighed, heard) {
-  const rows = heard.map((one) => answerRow(key, one));
-  const scale = key.settings.temper / weighed.drag;
-  let best = -Infinity;
-  for (let z = 0; z < key.Z; z += 1) best = Math.max(best, logOf(rows, (row) => row.single[z]));
   const result = { edge: { gain: 0, pair: null }, mosaic: { gain: 0, pair: null } };
-  if (!rows.length) return result;
-  result.edge.gain = -Infinity;
-  result.mosaic.gain = -Infinity;
+  if (!heard.length) return result;
+  const rows = heard.map((one) => answerRow(key, one));
+  const together = rows.filter((row) => row.mixed);
+  const apart = perZone(key, rows.filter((row) => row.apart), (row) => row.apart);
+  const single = perZone(key, rows, (row) => row.single);
+  const best = Math.max(...single);
+  const scale = key.settings.temper / weighed.drag;
+  Object.values(result).forEach((one) => { one.gain = -Infinity; });
   key.pairs.forEach(({ i, j, edge }) => {
-    const chance = edge
-      ? (row) => 0.5 * (row.single[i] + row.single[j])
-      : (row) => row.mixed(i, j);
-    const gain = round6(scale * (logOf(rows, chance) - best));
+    const sum = edge
+      ? logOf(rows, (row) => 0.5 * (row.single[i] + row.single[j]))
+      : apart[i] + apart[j] + logOf(together, (row) => row.mixed(i, j));
+    const gain = round6(scale * (sum - best));
     const into = edge ? result.edge : result.mosaic;
     if (gain > into.gain) Object.assign(into, { gain, pair: byBelief(weighed, i, j) });
   });
-  [result.edge, result.mosaic].forEach((one) => {
+  Object.values(result).forEach((one) => {
     if (one.pair === null) one.gain = key.settings.no_pair_gain;
   });
   return result;
+}
+
+/** Sum of logs of each zone's own chances. */
+function perZone(key, rows, chances) {
+  return Float64Array.from(key.neutral, (zero, z) => logOf(rows, (row) => chances(row)[z]));
 }
 
 const byBelief = (weighed, i, j) => (weighed.belief[j] > weighed.belief[i] ? [j, i] : [i, j]);
@@ -90,7 +96,10 @@ function logOf(rows, chance) {
   return sum + Math.log(product);
 }
 
-/** Chances of one answer: in one zone, and where patches of two zones share the plot. */
+/**
+ * Chances of one answer: single [zone], and where patches of two zones share the plot either
+ * mixed(i, j), or apart [zone] whose product over both zones it is.
+ */
 export function answerRow(key, answer) {
   const { Z } = key;
   if (answer.kind === 'question') {
@@ -108,7 +117,7 @@ export function answerRow(key, answer) {
     const { chance } = plantChances(key, answer.v, 3);
     const single = chance.subarray((p * 5 + 4) * Z, (p * 5 + 5) * Z);
     const gone = half * (answer.v / 4);
-    return { single, mixed: (i, j) => (1 - gone * presence[i]) * (1 - gone * presence[j]) };
+    return { single, apart: presence.map((one) => 1 - gone * one) };
   }
   const both = (i, j) => 1 - (1 - half * presence[i]) * (1 - half * presence[j]);
   if (answer.step === 4) return { single: presence, mixed: both };
