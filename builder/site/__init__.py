@@ -4,6 +4,7 @@
 a whole; a build that fails leaves the old site as it was.
 """
 
-from builder.site.build import SiteRegion, SiteReport, build_site
+from builder.site.build import SiteReport, build_site
+from builder.site.region import SiteRegion, site_region
 
-__all__ = ["SiteRegion", "SiteReport", "build_site"]
+__all__ = ["SiteRegion", "SiteReport", "build_site", "site_region"]

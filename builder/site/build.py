@@ -6,7 +6,7 @@ import gzip
 import hashlib
 import json
 from collections.abc import Mapping, Sequence
-from dataclasses import dataclass, field
+from dataclasses import dataclass
 from pathlib import Path
 from typing import Any
 
@@ -16,43 +16,12 @@ from builder.site.app_files import APP, app_files
 from builder.site.field import inert_files, inline
 from builder.site.pages import environment, rendered
 from builder.site.policy import app_policy
+from builder.site.region import SiteRegion
 from builder.site.swap import put_in_place
 from builder.site.worker import worker_script
 
 STYLE = "app/css/app.css"
 BOOKLET = "booklet.pdf"
-
-
-@dataclass(frozen=True)
-class SiteRegion:
-    """One region, compiled and ready to be written.
-
-    pack   bytes of pack.json
-    texts  language → bytes of texts.<language>.json
-    book   name → bytes of each Book page, e.g. "index.html"
-    """
-
-    pack: bytes
-    texts: Mapping[str, bytes]
-    book: Mapping[str, bytes] = field(default_factory=dict)
-
-    @property
-    def id(self) -> str:
-        """The region's id, as in its pack."""
-        return str(json.loads(self.pack)["region"]["id"])
-
-    @property
-    def hash(self) -> str:
-        """What records name as pack_hash."""
-        return hashlib.sha256(self.pack).hexdigest()[:16]
-
-    def files(self) -> dict[str, bytes]:
-        """The region's files by path in the site."""
-        folder = f"regions/{self.id}"
-        files = {f"{folder}/pack.json": self.pack}
-        files.update({f"{folder}/texts.{tag}.json": text for tag, text in self.texts.items()})
-        files.update({f"{folder}/book/{name}": page for name, page in self.book.items()})
-        return files
 
 
 @dataclass(frozen=True)

@@ -214,9 +214,10 @@ def serve():
 def demo_files():
     """The demo site as path -> bytes, built once from the tables."""
     from builder.site.build import site_files
-    from builder.steps import site_region
+    from builder.site.region import site_region
+    from builder.tables import load_region
 
-    return site_files([site_region(ROOT / "keydata" / DEMO)])
+    return site_files([site_region(load_region(ROOT / "keydata" / DEMO).region)])
 
 
 @pytest.fixture(scope="session")

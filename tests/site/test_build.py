@@ -10,9 +10,10 @@ from html.parser import HTMLParser
 import pytest
 
 from builder.site.app_files import APP, app_files
-from builder.site.build import SiteRegion, build_site, site_files
+from builder.site.build import build_site, site_files
 from builder.site.icons import icons
 from builder.site.policy import app_policy, hash_source
+from builder.site.region import SiteRegion
 from builder.site.specifiers import imports_of
 from builder.site.worker import worker_script
 
