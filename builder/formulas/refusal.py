@@ -32,6 +32,8 @@ SENTENCES = {
     "clay_too_high": "The mineral-soil equation holds up to {limit} % clay; this layer has"
     " {value}.",
     "density_factor": "The density factor must lie between 0.9 and 1.3; this is {value}.",
+    "packed_too_far": "This soil cannot be packed {value} times: at field capacity its water would"
+    " need more than all its pores.",
     "layer_order": "A layer must end below its start; this one runs from {top_cm} to"
     " {bottom_cm} cm.",
     "layers_missing": "There is no soil layer to work with.",

@@ -22,6 +22,7 @@ from builder.formulas.texture import checked_soil
 MOST_ORGANIC_PCT = 8.0
 MOST_CLAY_PCT = 60.0
 PARTICLE_DENSITY = 2.65
+LEAST_DRAINED = 0.005
 
 
 @dataclass(frozen=True)
@@ -65,7 +66,8 @@ def mineral_water(
     organic_matter_pct  organic matter by weight [%], at most 8
     density_factor      0.9 loose to 1.3 packed; 1 is the equation's own density
 
-    Refused: more than 8 % organic matter (peat has its own table), clay over 60 %.
+    Refused: more than 8 % organic matter (peat has its own table), clay over 60 %, a
+    soil packed until its field capacity would fill more than its pores.
     Source: saxton_rawls_2006; golden: soil_water.json
     """
     s = need_percent("sand_pct", sand_pct) / 100
@@ -92,13 +94,18 @@ def mineral_water(
     density = (1 - full) * PARTICLE_DENSITY * factor
     packed = 1 - density / PARTICLE_DENSITY
     capacity -= 0.2 * (full - packed)
+    if capacity >= packed:
+        raise RefusedError("packed_too_far", value=density_factor)
     return Water(wilting, capacity, packed, density, _flow(wilting, capacity, packed))
 
 
 def _flow(wilting: float, capacity: float, full: float) -> float:
-    """Flow through the saturated soil, Eqs. 15, 16 and 18. [mm h-1]"""
+    """Flow through the saturated soil, Eqs. 15, 16 and 18. [mm h-1]
+
+    The paper holds saturation less field capacity at 0.005 or more; packed soil reaches it.
+    """
     slope = (math.log(capacity) - math.log(wilting)) / (math.log(1500) - math.log(33))
-    return float(1930 * (full - capacity) ** (3 - slope))
+    return float(1930 * max(LEAST_DRAINED, full - capacity) ** (3 - slope))
 
 
 def gravel_volume_share(matric_density: float, gravel_weight_share: float) -> float:

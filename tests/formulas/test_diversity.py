@@ -9,8 +9,18 @@ import pytest
 from builder.formulas import diversity
 
 GOLDENS = Path(__file__).parents[1] / "goldens"
-MINE = ["richness", "shannon", "gini_simpson", "inverse_simpson", "bray_curtis", "sorensen",
-        "jaccard", "percent_similarity", "correspondence_order", "correspondence_eigenvalues"]
+MINE = [
+    "richness",
+    "shannon",
+    "gini_simpson",
+    "inverse_simpson",
+    "bray_curtis",
+    "sorensen",
+    "jaccard",
+    "percent_similarity",
+    "correspondence_order",
+    "correspondence_eigenvalues",
+]
 
 
 def golden(name):

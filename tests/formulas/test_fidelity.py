@@ -11,8 +11,16 @@ import pytest
 from builder.formulas import fidelity
 
 GOLDENS = Path(__file__).parents[1] / "goldens"
-MINE = ["indval", "indval_parts", "phi", "constancy", "group_sums", "indval_p", "levins_breadth",
-        "levins_standardised"]
+MINE = [
+    "indval",
+    "indval_parts",
+    "phi",
+    "constancy",
+    "group_sums",
+    "indval_p",
+    "levins_breadth",
+    "levins_standardised",
+]
 R_LINES = """
 suppressMessages(library(vegan)); suppressMessages(library(labdsv)); data(dune); data(dune.env)
 values <- indval(dune, as.integer(dune.env$Management))$indval
@@ -42,8 +50,9 @@ def test_indval_equals_labdsv_to_a_millionth():
     expected = np.array(case["out"])
     if shutil.which("Rscript"):
         run = subprocess.run(["Rscript", "-e", R_LINES], capture_output=True, text=True, check=True)
-        expected = np.array([[float(cell) for cell in line.split(",")]
-                             for line in run.stdout.split()])
+        expected = np.array(
+            [[float(cell) for cell in line.split(",")] for line in run.stdout.split()]
+        )
     got = fidelity.indval(**case["in"])
     assert got.shape == (30, 4)
     np.testing.assert_allclose(got, expected, rtol=0, atol=1e-6)
@@ -63,8 +72,10 @@ def test_permutation_agrees_with_a_plain_loop():
     cover, group = np.array(case["cover"], float) * 0.37, np.array(case["group"])
     best = fidelity.indval(cover, group).max(axis=1)
     rng = np.random.default_rng(5)
-    reached = sum(fidelity.indval(cover, rng.permutation(group)).max(axis=1) >= best - 1e-9
-                  for _ in range(200))
+    reached = sum(
+        fidelity.indval(cover, rng.permutation(group)).max(axis=1) >= best - 1e-9
+        for _ in range(200)
+    )
     got = fidelity.indval_p(cover, group, permutations=200, seed=5)
     np.testing.assert_allclose(got, (1 + reached) / 201)
 

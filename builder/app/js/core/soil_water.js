@@ -8,6 +8,8 @@ import { checkedSoil } from './texture.js';
 const MOST_ORGANIC_PCT = 8;
 const MOST_CLAY_PCT = 60;
 const PARTICLE_DENSITY = 2.65;
+/** Saturation less field capacity, held at this or more by the paper. */
+const LEAST_DRAINED = 0.005;
 
 const bent = (first, square, line, constant) => first + square * first * first + line * first + constant;
 
@@ -35,8 +37,9 @@ export function mineralWater({ sand_pct, clay_pct, organic_matter_pct, density_f
   const bulk_density = (1 - full) * PARTICLE_DENSITY * factor;
   const saturation = 1 - bulk_density / PARTICLE_DENSITY;
   field_capacity -= 0.2 * (full - saturation);
+  if (field_capacity >= saturation) refuse('packed_too_far', { value: density_factor });
   const slope = (Math.log(field_capacity) - Math.log(wilting_point)) / (Math.log(1500) - Math.log(33));
-  const flow_mm_h = 1930 * (saturation - field_capacity) ** (3 - slope);
+  const flow_mm_h = 1930 * Math.max(LEAST_DRAINED, saturation - field_capacity) ** (3 - slope);
   return { wilting_point, field_capacity, saturation, bulk_density, flow_mm_h };
 }
 
