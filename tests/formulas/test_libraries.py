@@ -24,6 +24,7 @@ from builder.formulas import (
     soil_water,
     success,
 )
+from builder.formulas.refusal import RefusedError
 
 DAYS = pd.date_range("2025-01-01", "2025-12-31", freq="D")
 LATITUDES = (-55, -20, 0, 38, 46, 55, 65)
@@ -109,6 +110,10 @@ def test_packing_and_gravel_equal_ptfkit():
             theta_33=base.theta_33,
             density_factor=factor,
         )
+        if packed.adjusted_theta_33 >= packed.adjusted_theta_s:
+            with pytest.raises(RefusedError, match="all its pores"):
+                soil_water.mineral_water(sand, clay, organic, factor)
+            continue
         ours = soil_water.mineral_water(sand, clay, organic, factor)
         assert ours.saturation == pytest.approx(packed.adjusted_theta_s, abs=1e-9)
         assert ours.field_capacity == pytest.approx(packed.adjusted_theta_33, abs=1e-9)
