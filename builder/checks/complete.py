@@ -9,12 +9,13 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 
-from builder.problems import Problem, problem_at
+from builder.problems import CAUTION, Problem, problem_at
 from builder.tables import Loaded
 from builder.tables.regions import YAML_TABLES
 
 ID = "complete"
 NEEDS = (*YAML_TABLES, "climate")
+NEEDED = ("plants in occurrence.yaml",)
 
 
 def check(loaded: Loaded) -> Iterator[Problem]:
@@ -37,9 +38,18 @@ def check(loaded: Loaded) -> Iterator[Problem]:
         "notes in reclaim.yaml": written["notes"],
         "mix in seed.yaml": written["mixes"],
     }
+    unwritten = [what for what, zones in has.items() if not zones and what not in NEEDED]
+    if unwritten:
+        yield problem_at(
+            region.zones[0].place("id"),
+            ID,
+            f"no zone has {', '.join(unwritten)} yet",
+            "A region fitted to plots begins so; write them before a crew relies on it.",
+            CAUTION,
+        )
     for zone in region.zones:
         for what, zones in has.items():
-            if zone.id not in zones:
+            if zone.id not in zones and what not in unwritten:
                 yield problem_at(
                     zone.place("id"),
                     ID,

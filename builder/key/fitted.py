@@ -1,21 +1,20 @@
 """What a fit from known plots left beside the tables: fit.yaml (figures) and fit.csv (counts).
 
-fit.csv has one row a plant and zone: plots that hold it, those plots by cover step, and the nats
-learned for reaching each cover threshold. Where a person has since changed a constancy in
+fit.csv has one row a plant and zone: plots that hold it, those with a cover by cover step, and the
+nats learned for reaching each cover threshold. Where a person has since changed a constancy in
 occurrence.yaml, the table's figure is used in place of the count.
 """
 
 from __future__ import annotations
 
 from pathlib import Path
-from typing import Any
 
 import numpy as np
 
 from builder.key.compile import Arrays, Fitted
 from builder.key.weigh import STEPS, Floats, Weights
 from builder.problems import Problem, problem_at
-from builder.rows import Node, Row, Value, read_csv, read_yaml
+from builder.rows import Row, plain, read_csv, read_yaml
 from builder.tables import Region
 
 FIT_YAML, FIT_CSV = "fit.yaml", "fit.csv"
@@ -23,6 +22,7 @@ THRESHOLDS = 3
 COLUMNS = (
     "plant_id",
     "zone_id",
+    "plots",
     *(f"step_{step}" for step in range(STEPS)),
     *(f"nats_{level}" for level in range(THRESHOLDS)),
 )
@@ -40,17 +40,16 @@ def read_fit(folder: Path, region: Region) -> tuple[Fitted | None, list[Problem]
     if root is None or sheet is None:
         return None, problems
     missing = [name for name in COLUMNS if name not in sheet.columns]
-    said = {name: _plain(root.get(name)) for name in ("plots", "weights", "session")}
+    said = {name: plain(root.get(name)) for name in ("plots", "weights", "session")}
     if missing or not all(isinstance(one, dict) for one in said.values()):
         wrong = f"{FIT_CSV} has no {missing[0]}" if missing else f"{FIT_YAML} is not whole"
         return None, [*problems, problem_at(sheet.at, "fit", wrong, "Run the fit again.")]
     held = np.array([float(said["plots"].get(zone.id, 0)) for zone in region.zones])
     if (held <= 0).any():
-        zone = region.zones[int(held.argmin())].id
+        wrong = f"{FIT_YAML} knows no plots of {region.zones[int(held.argmin())].id}"
         fix = "Run the fit again, or remove fit.yaml to go by the tables alone."
-        return None, [*problems, problem_at(root.at, "fit", f"{FIT_YAML} knows no plots of {zone}", fix)]
-    counts, learned = _by_cell(region, sheet.rows)
-    arrays = _arrays(region, held, counts, learned)
+        return None, [*problems, problem_at(root.at, "fit", wrong, fix)]
+    arrays = _arrays(region, held, *_by_cell(region, sheet.rows))
     return Fitted(arrays, Weights(**said["weights"]), said["session"]), problems
 
 
@@ -65,43 +64,49 @@ def correction_nats(learned: Floats, usual: Floats) -> tuple[Floats, Floats]:
     return np.concatenate([rising, rising[:, -1:], rising[:, :1]], axis=1), absent
 
 
-def usual_shares(cover_counts: Floats, plots: Floats) -> Floats:
-    """Share of plots that reach each cover threshold, [plant, threshold]."""
+def usual_shares(found: Floats, cover_counts: Floats, plots: Floats) -> Floats:
+    """Share of plots that reach each cover threshold, [plant, threshold].
+
+    found [plant, zone] plots that hold the plant; cover_counts [plant, 4, zone]; plots [zone]
+    """
     by_step = cover_counts.sum(axis=2)
-    above = np.cumsum(by_step[:, ::-1], axis=1)[:, ::-1]
-    return np.asarray(above[:, :THRESHOLDS] / plots.sum())
+    above = np.cumsum(by_step[:, ::-1], axis=1)[:, ::-1][:, 1:THRESHOLDS]
+    return np.column_stack([found.sum(axis=1), above]) / plots.sum()
 
 
-def _by_cell(region: Region, rows: list[Row]) -> tuple[Floats, Floats]:
+def _by_cell(region: Region, rows: list[Row]) -> tuple[Floats, Floats, Floats]:
     plants = {plant.id: p for p, plant in enumerate(region.plants)}
     zones = {zone.id: z for z, zone in enumerate(region.zones)}
+    found = np.zeros((len(plants), len(zones)))
     counts = np.zeros((len(plants), STEPS, len(zones)))
     learned = np.zeros((len(plants), THRESHOLDS, len(zones)))
     for row in rows:
-        cell = [_plain(row.get(name)) for name in COLUMNS]
+        cell = [plain(row.get(name)) for name in COLUMNS]
         p, z = plants.get(str(cell[0])), zones.get(str(cell[1]))
         if p is not None and z is not None:
-            counts[p, :, z] = [float(one or 0) for one in cell[2 : 2 + STEPS]]
-            learned[p, :, z] = [float(one or 0) for one in cell[2 + STEPS :]]
-    return counts, learned
+            figures = [float(one or 0) for one in cell[2:]]
+            found[p, z] = figures[0]
+            counts[p, :, z] = figures[1 : 1 + STEPS]
+            learned[p, :, z] = figures[1 + STEPS :]
+    return found, counts, learned
 
 
-def _arrays(region: Region, held: Floats, counts: Floats, learned: Floats) -> Arrays:
+def _arrays(region: Region, held: Floats, found: Floats, counts: Floats, learned: Floats) -> Arrays:
     """Counts, with constancies that were changed by hand in place of what was counted."""
-    found, absent = correction_nats(learned, usual_shares(counts, held))
-    present = counts.sum(axis=1)
+    more, less = correction_nats(learned, usual_shares(found, counts, held))
+    present = found.copy()
     for p, plant in enumerate(region.plants):
         for z, zone in enumerate(region.zones):
             one = region.occurrence.get((zone.id, plant.id))
             said = one.constancy if one else 0.0
-            if abs(100.0 * (said - present[p, z] / held[z])) > SAME_PCT:
+            if abs(100.0 * (said - found[p, z] / held[z])) > SAME_PCT:
                 present[p, z] = said * held[z]
     return Arrays(
         present,
         held,
         cover_counts=counts,
-        found_correction=found,
-        absent_correction=absent,
+        found_correction=more,
+        absent_correction=less,
         prior=held + 1.0,
         overlooked=_own([plant.overlooked for plant in region.plants]),
     )
@@ -109,11 +114,3 @@ def _arrays(region: Region, held: Floats, counts: Floats, learned: Floats) -> Ar
 
 def _own(values: list[float | None]) -> Floats:
     return np.array([np.nan if value is None else value for value in values], float)
-
-
-def _plain(node: Node | None) -> Any:
-    if isinstance(node, Value):
-        return node.value
-    if isinstance(node, Row):
-        return {name: _plain(below) for name, below in node.items()}
-    return [_plain(one) for one in node] if node is not None else None

@@ -1,0 +1,1 @@
+"""What known plots and simulated sites say about how often the key is right."""
