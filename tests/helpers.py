@@ -2,6 +2,8 @@
 
 from pathlib import Path
 
+from builder.tables.shape import Record, columns
+
 REGION = """
 id: willow_breaks
 name: Willow Breaks
@@ -349,3 +351,21 @@ def write_region(folder: Path, files: dict[str, str]) -> Path:
         path.parent.mkdir(parents=True, exist_ok=True)
         path.write_text(text, encoding="utf-8")
     return folder
+
+
+def all_records(record, seen=None):
+    """A record class and every record class inside it."""
+    seen = set() if seen is None else seen
+    if record in seen:
+        return seen
+    seen.add(record)
+    for _, kind, _ in columns(record):
+        for inner in (
+            kind,
+            getattr(kind, "of", None),
+            getattr(getattr(kind, "of", None), "of", None),
+        ):
+            below = getattr(inner, "record", None)
+            if isinstance(below, type) and issubclass(below, Record):
+                all_records(below, seen)
+    return seen

@@ -1,10 +1,11 @@
 """Records: what a plant, a scale, a condition and a place can be asked."""
 
 import pytest
+from helpers import all_records
 
 from builder.problems import Place
 from builder.tables.regions import YAML_TABLES
-from builder.tables.shape import Record, columns
+from builder.tables.shape import columns
 
 
 def test_a_record_knows_where_its_values_stand(tables):
@@ -64,24 +65,6 @@ def test_the_lower_limit_belongs_to_the_cover_class(tables):
     ]
     assert scale.by_code("4").mid_pct == 62.5
     assert scale.by_code("9") is None
-
-
-def all_records(record, seen=None):
-    """A record class and every record class inside it."""
-    seen = set() if seen is None else seen
-    if record in seen:
-        return seen
-    seen.add(record)
-    for _, kind, _ in columns(record):
-        for inner in (
-            kind,
-            getattr(kind, "of", None),
-            getattr(getattr(kind, "of", None), "of", None),
-        ):
-            below = getattr(inner, "record", None)
-            if isinstance(below, type) and issubclass(below, Record):
-                all_records(below, seen)
-    return seen
 
 
 def test_every_field_of_every_record_has_a_kind():
