@@ -1,7 +1,7 @@
 /** Ask me: the plant or ground question that would help most now, with its answers under the thumb. */
 import { html } from 'htm/preact';
 import { signal } from '@preact/signals';
-import { t } from './words.js';
+import { sentence, t } from './words.js';
 import { call, change, region, site } from './state.js';
 import { enter, findingOf } from './findings.js';
 import { answerQuestion } from './question.js';
@@ -37,7 +37,7 @@ function pairOf() {
 
 function AskPlant({ plant, skip, root }) {
   const here = region.value;
-  const sure = call.value.sure ? t('plants.sure_already', { odds: oddsWords(call.value.belief[call.value.zone_id]) }) : null;
+  const sure = call.value.sure ? t('plants.sure_already', { odds: sentence(oddsWords(call.value.belief[call.value.zone_id])) }) : null;
   return html`<${Danger} plant=${plant}/><div class="told">
       <${PlantCard} plant=${plant} why=${t('plants.look_for')} pair=${pairOf()}/>
       ${sure && html`<p class="hint"><${Icon} name="zone"/><span>${sure} <a class="link" href=${root.replace(/plants$/, 'zone')}>${t('plants.to_zone')}</a></span></p>`}
@@ -55,7 +55,7 @@ function AskGround({ question, skip }) {
       ${question.why && html`<p class="hint"><${Icon} name="zone"/><span>${question.why}</span></p>`}
       ${question.digs_cm > 0 && html`<${Safety} record=${record}/>`}
       <div class="push"></div><${UndoLine}/></div>
-    <div class="answer"><div class="how"></div><div class="grounds">${question.answers.map((one) => html`<button key=${one.value} type="button" class="cover" onClick=${() => pick(one.value)}>${one.label}</button>`)}</div>
+    <div class="answer"><div class="how"></div><div class="grounds">${question.answers.map((one) => html`<button key=${one.value} type="button" class="cover" onClick=${() => pick(one.value)}>${sentence(one.label)}</button>`)}</div>
       <div class="under"><button type="button" class="btn plain" onClick=${() => pick('cant_tell')}>${t(question.digs_cm ? 'question.not_dug' : 'question.cant_tell')}</button>
         <button type="button" class="btn plain" onClick=${skip}>${t('plants.another')}<${Icon} name="next"/></button></div></div>`;
 }

@@ -4,7 +4,7 @@ import { t, number } from './words.js';
 import { change, region, site } from './state.js';
 import { yieldShown, yieldSign } from './say.js';
 import { Frame } from './parts/frame.js';
-import { Field } from './parts/choice.js';
+import { Field, Typed } from './parts/choice.js';
 import { readNumber } from './parts/wheel.js';
 import { Icon } from './parts/icon.js';
 import { harmsPeople } from './region.js';
@@ -14,7 +14,7 @@ import { aims, sheetOf } from './clip_figures.js';
 export function ClipSheet({ stand }) {
   const { production } = site.value;
   const own = stand && region.value.pack.production[stand.zone.id];
-  const put = (patch) => change({ production: { plot_m2: own?.clip?.area_m2, ...production, ...patch } }, t('undo.clip'));
+  const put = (patch) => change({ production: { plot_m2: own?.clip?.area_m2, ...production, ...patch } });
   const plots = production.plots ?? [];
   const sheet = sheetOf({ plot_m2: own?.clip?.area_m2, ...production });
   const set = (i, patch) => put({ plots: plots.map((row, at) => (at === i ? { ...row, ...patch } : row)) });
@@ -39,7 +39,7 @@ const share = (text) => {
 };
 
 function Grams({ label, value, onChange }) {
-  return html`<input inputmode="decimal" aria-label=${label} value=${value ?? ''} placeholder="–" onChange=${(event) => onChange(readNumber(event.currentTarget.value, 0, 100000))}/>`;
+  return html`<${Typed} mode="decimal" label=${label} value=${value ?? ''} placeholder="–" onChange=${(text) => onChange(readNumber(text, 0, 100000))}/>`;
 }
 
 function airDry(row, production, own) {

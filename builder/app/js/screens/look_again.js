@@ -3,7 +3,7 @@ import { html } from 'htm/preact';
 import { callThree } from '../core/index.js';
 import { t } from './words.js';
 import { change, region, site, sites } from './state.js';
-import { startBeside } from './records.js';
+import { startSpot } from './records.js';
 import { verdictLine } from './sites.js';
 import { Choice } from './parts/choice.js';
 import { Icon } from './parts/icon.js';
@@ -12,7 +12,7 @@ const STANDS = ['one_kind', 'changes_near', 'patches'];
 
 /** Site checks begun as spots of this one, first begun first. */
 export function spotsOf(record) {
-  return sites.value.filter((row) => row.beside === record.id).sort((a, b) => (a.created_at < b.created_at ? -1 : 1));
+  return (record.spots ?? []).map((id) => sites.value.find((row) => row.id === id)).filter(Boolean);
 }
 
 /** @returns the part that sends the person to two spots and reads all three looks together */
@@ -20,7 +20,7 @@ export function LookAgain() {
   const record = site.value;
   const spots = spotsOf(record);
   const ready = spots.filter((row) => row.findings.length > 0);
-  const start = (way) => startBeside(record.role, t(`again.name_${way}`, { name: record.name }), { beside: record.id });
+  const start = (way) => startSpot(t(`again.name_${way}`, { name: record.name }));
   return html`<section class="part stack"><h2><${Icon} name="place"/>${t('again.title')}</h2><p>${t('again.how')}</p>
     <${Choice} label=${t('again.stand')} options=${STANDS.map((value) => ({ value, label: t(`again.${value}`) }))} value=${record.stand ?? null} onPick=${(stand) => change({ stand }, t('undo.stand'))}/>
     <div class="deep">${spots.length < 2 && html`<button type="button" class=${`btn ${spots.length ? '' : 'go'}`} onClick=${() => start('up')}><${Icon} name="place"/>${t('again.up')}</button><button type="button" class="btn" onClick=${() => start('down')}>${t('again.down')}</button>`}</div>

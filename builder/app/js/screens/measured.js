@@ -19,7 +19,7 @@ export function measuredOf(record) {
 export function Measured({ record }) {
   const { production } = record;
   const sheet = sheetOf(production);
-  const type = (text) => change({ production: { ...production, measured_kg_ha: yieldFrom(readNumber(text, 0, 100000)) } }, t('undo.measured'));
+  const type = (text) => change({ production: { ...production, measured_kg_ha: yieldFrom(readNumber(text, 0, 100000)) } });
   return html`<section class="part stack"><h2 class="sides">${t('measured.title')}${sheet && html`<span class="label">${t('measured.plots', { n: sheet.plots })}</span>`}</h2>
     ${sheet?.more > 0 && html`<p class="small">${t('measured.more', { n: sheet.more, precision: Math.round(sheet.precision * 100) })}</p>`}
     <p class="deep"><a class="btn go" href=${`#/site/${site.value.id}/production/clip`}>${t(sheet ? 'measured.sheet_on' : 'measured.sheet')}</a></p>

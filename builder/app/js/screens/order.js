@@ -20,11 +20,11 @@ export function Order({ stand }) {
   const record = site.value;
   const mix = mixOf(here, stand.zone.id);
   const kept = { area_ha: 1, method: mix?.method, sow_month: windowsOf(here, stand.zone.id).sow_months?.[0] ?? record.month, lots: {}, ...record.reclaim.order };
-  const put = (patch) => change({ reclaim: { ...record.reclaim, order: { ...record.reclaim.order, ...patch } } }, t('undo.order'));
+  const put = (patch) => change({ reclaim: { ...record.reclaim, order: { ...record.reclaim.order, ...patch } } });
   const back = `#/site/${record.id}/reclaim`;
   if (!mix || mix.plants.length === 0) return html`<${Frame} tab="reclaim" edge=${false} class="whole-width" title=${t('order.title')} line=${stand.zone.short} back=${back}><section class="part lead0"><p>${t('reclaim.no_seed')}</p></section></${Frame}>`;
   const methods = Object.entries(here.pack.seeding_methods ?? {}).filter(([, factor]) => typeof factor === 'number').map(([name]) => name);
-  const lots = mix.plants.map(({ id, seeds_m2 }) => ({ id, seeds_m2, seeds_per_g: here.plant.get(id).seeds_per_g, ...kept.lots[id] }));
+  const lots = mix.plants.map(({ id, seeds_m2 }) => ({ id, seeds_m2, seeds_per_g: here.pack.seed_plants[id].seeds_per_g, ...kept.lots[id] }));
   const order = seedOrder({ lots, area_ha: kept.area_ha, base_method: mix.method, method: kept.method, factors: here.pack.seeding_methods ?? { [mix.method]: 1 }, sow_month: kept.sow_month, window_months: windowsOf(here, stand.zone.id).sow_months ?? [], today: record.date, stale_months: here.pack.tag_stale_months });
   const held = order.lines.filter(isHeld).length;
   return html`<${Frame} tab="reclaim" edge=${false} class="whole-width" title=${t('order.title')} line=${`${record.unit_name || record.name}. ${stand.zone.short}`} back=${back}>
@@ -40,11 +40,17 @@ export function Order({ stand }) {
 
 const isHeld = (line) => line.remarks.some((one) => one.level === 'refuse');
 
+/** A bag without any tag yet says so once. */
+function toldOf(lot, line) {
+  const bare = lot.purity == null && !lot.test_date && !lot.lot;
+  return bare ? line.remarks.filter((one) => one.key === 'tag_missing') : line.remarks;
+}
+
 function Bag({ lot, line, plant, onTag }) {
   const [open, setOpen] = useState(false);
   const held = isHeld(line);
   return html`<li class=${`bag ${held ? 'held' : ''}`}><div><h3>${plant.common}</h3><p>${t('order.seeds_m2', { n: lot.seeds_m2 })}${lot.lot ? html`<br/><span class="mine">${t('order.lot', { lot: lot.lot })}${line.pls_share === null ? '' : ` ${t('order.live', { pct: number(line.pls_share * 100) })}`}</span>` : ''}</p></div>
     <p class="kg">${line.bulk_kg === null ? '–' : massWords(line.bulk_kg)}<small>${line.pls_kg === null ? '' : t('order.pls', { mass: massWords(line.pls_kg) })}</small></p>
-    ${line.remarks.map((one) => html`<p key=${one.key} class="hold"><${Icon} name="warn"/>${remarkWords(one)}</p>`)}
-    ${open ? html`<${Tag} lot=${lot} plant=${plant} onKeep=${(tag) => { onTag(tag); setOpen(false); }} onShut=${() => setOpen(false)}/>` : html`<button type="button" class="link" onClick=${() => setOpen(true)}>${t(lot.lot ? 'order.tag_change' : 'order.tag_type')}</button>`}</li>`;
+    ${toldOf(lot, line).map((one) => html`<p key=${one.key} class="hold"><${Icon} name="warn"/>${remarkWords(one)}</p>`)}
+    ${open ? html`<${Tag} lot=${lot} plant=${plant} strict=${region.value.pack.seed_plants[lot.id].subspecies_matters} onKeep=${(tag) => { onTag(tag); setOpen(false); }} onShut=${() => setOpen(false)}/>` : html`<button type="button" class="link" onClick=${() => setOpen(true)}>${t(lot.lot ? 'order.tag_change' : 'order.tag_type')}</button>`}</li>`;
 }

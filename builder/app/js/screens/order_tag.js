@@ -7,14 +7,15 @@ import { readNumber } from './parts/wheel.js';
 
 const SHARES = ['purity', 'germination', 'dormant', 'tetrazolium', 'other_crop', 'weed_seed'];
 
-/** @param {{lot: object, plant: object, onKeep: (tag: object) => void, onShut: () => void}} props */
-export function Tag({ lot, plant, onKeep, onShut }) {
+/** @param {{lot: object, plant: object, strict: boolean, onKeep: (tag: object) => void, onShut: () => void}} props
+ *  strict: the mix asks for the subspecies by name */
+export function Tag({ lot, plant, strict, onKeep, onShut }) {
   const [tag, setTag] = useState(tagOf(lot));
   const put = (patch) => setTag({ ...tag, ...patch });
   const share = (name) => html`<${Field} key=${name} label=${t(`tag.${name}`)} mode="decimal" unit="%" value=${tag[name] == null ? '' : Math.round(tag[name] * 1000) / 10}
     onChange=${(text) => { const pct = readNumber(text, 0, 100); put({ [name]: pct === null ? null : pct / 100 }); }}/>`;
   return html`<div class="tagform stack"><${Field} label=${t('tag.lot')} value=${tag.lot ?? ''} onChange=${(text) => put({ lot: text })}/>
-    <${Field} label=${t('tag.kind')} value=${tag.kind ?? ''} hint=${t('tag.kind_why', { name: plant.scientific })} onChange=${(kind) => put({ kind, generic: isGeneric(kind, plant.scientific) })}/>
+    <${Field} label=${t('tag.kind')} value=${tag.kind ?? ''} hint=${t('tag.kind_why', { name: plant.scientific })} onChange=${(kind) => put({ kind, generic: strict && isGeneric(kind, plant.scientific) })}/>
     <${Field} label=${t('tag.origin')} value=${tag.origin ?? ''} onChange=${(origin) => put({ origin })}/>
     <${Field} label=${t('tag.test_date')} type="date" value=${tag.test_date ?? ''} onChange=${(test_date) => put({ test_date: test_date || null })}/>
     <div class="pair">${SHARES.map(share)}</div>

@@ -2,49 +2,41 @@
 import { carried, siteYear } from '../core/year.js';
 import { profileWater } from '../core/soil_water.js';
 
-export const productionOf = (here, zoneId) => here.pack.production?.[zoneId] ?? null;
-
 /** The mix of a zone: {method, other_method, plants: [{id, seeds_m2}], live_plants, propagules}; null where none is sown. */
 export function mixOf(here, zoneId) {
-  const mix = here.pack.seed?.[zoneId] ?? here.pack.seed?.mixes?.[zoneId];
+  const mix = here.pack.seed[zoneId];
   if (!mix) return null;
   const plants = Object.entries(mix.plants ?? {}).map(([id, seeds_m2]) => ({ id, seeds_m2 }));
-  return { ...mix, ...here.texts.seed?.[zoneId], plants };
+  return { ...mix, ...here.texts.seed[zoneId], plants };
 }
 
 /** Notes in words: topsoil, seedbed, season, method, protection, cautions, fails, wildlife, soil_life, by_disturbance. */
-export const notesOf = (here, zoneId) => here.texts.reclaim?.zones?.[zoneId] ?? here.texts.reclaim?.[zoneId] ?? null;
+export const notesOf = (here, zoneId) => here.texts.reclaim.zones[zoneId] ?? null;
 
 /** Months for the work: {sow_months, plant_months, keep_off_months}. */
-export const windowsOf = (here, zoneId) => here.pack.reclaim?.[zoneId]?.windows ?? here.pack.reclaim?.windows?.[zoneId] ?? notesOf(here, zoneId)?.windows ?? { sow_months: [] };
+export const windowsOf = (here, zoneId) => here.pack.reclaim[zoneId]?.windows ?? { sow_months: [] };
 
 /** The zone's own standards of success, if any. */
-export const standardsOf = (here, zoneId) => here.pack.reclaim?.[zoneId]?.success ?? notesOf(here, zoneId)?.success ?? null;
+export const standardsOf = (here, zoneId) => here.pack.reclaim[zoneId]?.success ?? null;
 
-/** Monthly normals of a zone: {tmax_c, tmin_c, precip_mm, elevation_m}. */
-export function normalsOf(here, zone) {
-  const climate = here.pack.climate?.[zone.id];
-  if (!climate) return null;
-  if (!Array.isArray(climate)) return { elevation_m: zone.centre_m, ...climate };
-  const column = (i) => climate.map((month) => month[i]);
-  return { tmax_c: column(0), tmin_c: column(1), precip_mm: column(2), elevation_m: zone.centre_m };
-}
+/** Monthly normals of a zone: {tmax_c, tmin_c, precip_mm, elevation_m}; null where the tables have none. */
+export const normalsOf = (here, zone) => here.pack.climate[zone.id] ?? null;
 
-export const soilOf = (here, zoneId) => (here.pack.soils?.[zoneId] ? { ...here.pack.soils[zoneId], ...here.texts.soils?.[zoneId] } : null);
+/** Layers, rooting depth and water table, with their words; null where the tables have none. */
+export const soilOf = (here, zoneId) => (here.pack.soils[zoneId] ? { ...here.pack.soils[zoneId], ...here.texts.soils[zoneId] } : null);
 
 /** Water each layer of a zone's soil holds down to its rooting depth. [{mm}] */
 export function waterOf(here, soil) {
   return profileWater({ layers: soil.layers, depth_cm: soil.rooting_depth_cm, peat_classes: here.pack.peat_classes ?? [] });
 }
 
-/** Water and warmth of a zone month by month, at the site's own height where it is known; null without the rule. */
+/** Water and warmth of a zone month by month, at the site's own height where it is known. */
 export function yearOf(here, zone, height_m = null) {
   const normals = normalsOf(here, zone);
   const soil = soilOf(here, zone.id);
-  const rule = here.pack.season_rule;
-  if (!normals || !soil || !rule) return null;
-  const lapse = here.pack.lapse;
-  const [tmax_c, tmin_c, precip_mm] = height_m === null || !lapse
+  if (!normals || !soil) return null;
+  const { lapse, season_rule: rule } = here.pack;
+  const [tmax_c, tmin_c, precip_mm] = height_m === null
     ? [normals.tmax_c, normals.tmin_c, normals.precip_mm]
     : carried({ ...normals, from_m: normals.elevation_m, to_m: height_m, ...lapse });
   const capacity_mm = waterOf(here, soil).reduce((sum, layer) => sum + layer.mm, 0);
@@ -55,13 +47,13 @@ export function yearOf(here, zone, height_m = null) {
 export function growsIn(here, zoneId) {
   const at = here.pack.zones.findIndex((zone) => zone.id === zoneId);
   return here.plants.map((plant, p) => ({ plant, ...occurrenceOf(here, p, at) }))
-    .filter((row) => row.constancy_pct > 0).sort((a, b) => b.constancy_pct - a.constancy_pct || a.plant.index - b.plant.index);
+    .filter((row) => row.constancy_pct > 0).sort((a, b) => b.constancy_pct - a.constancy_pct);
 }
 
 /** Constancy and cover of plant p in zone z of the pack. [%] */
 export function occurrenceOf(here, p, z) {
-  const own = here.pack.occurrence?.[here.plants[p].id]?.[here.pack.zones[z].id];
-  return own ? { constancy_pct: own[0], cover_pct: own[1] } : { constancy_pct: 0, cover_pct: null };
+  const own = here.pack.occurrence[p].find(([zone]) => zone === z);
+  return own ? { constancy_pct: own[1], cover_pct: own[2] } : { constancy_pct: 0, cover_pct: null };
 }
 
 /** Weeds whose range holds this zone or one beside it, by amplitude. @returns {{plant: object, here: boolean}[]} */

@@ -23,10 +23,10 @@ export function mayDig(question, record) {
 /** The safety answer that comes before any digging. @param {{record: object}} props */
 export function Safety({ record }) {
   const { digging } = record;
-  const set = (patch) => change({ digging: { ...digging, ...patch } }, t('undo.digging'));
+  const set = (patch, told = null) => change({ digging: { ...digging, ...patch } }, told);
   return html`<div class="safety"><p class="care"><${Icon} name="warn"/><b>${t('dig.before')}</b></p>
     <${Choice} label=${t('dig.ask')} options=${['lines', 'hand', 'none'].map((value) => ({ value, label: t(`dig.${value}`, { depth: region.value.pack.settings.hand_tool_cm }) }))}
-      value=${digging.cleared ?? 'none'} onPick=${(value) => set({ cleared: value === 'none' ? null : value, date: value === 'none' ? null : site.value.date })}/>
+      value=${digging.cleared ?? 'none'} onPick=${(value) => set({ cleared: value === 'none' ? null : value, date: value === 'none' ? null : site.value.date }, t('undo.digging'))}/>
     ${digging.cleared === 'lines' && html`<div class="stack"><${Field} label=${t('dig.by')} value=${digging.by ?? ''} onChange=${(by) => set({ by })}/>
       <${Field} label=${t('dig.number')} value=${digging.number ?? ''} onChange=${(number) => set({ number })}/>
       <${Field} label=${t('dig.date')} type="date" value=${digging.date ?? ''} onChange=${(date) => set({ date })}/></div>`}

@@ -47,6 +47,6 @@ function Expected({ stand, record }) {
       ${place && isProvisional({ rain_source: from }) && html`<p class="small care">${t('production.provisional')}</p>`}
       <${RangeBar} zone=${stand.zone} range=${[low, high]} normal=${year ? normal : null} middle=${year ? null : own.normal_kg_ha} measured=${measured}/>
       <p class="small quiet">${t('production.counted', { counted: own.counted })} ${t('production.not_forage')}</p>
-      <${Source} what=${t('production.these')} region=${here} keys=${[own.source ?? 'demo']}/></section>
+      <${Source} what=${t('production.these')} region=${here} keys=${[own.source]}/></section>
     <${Rain} record=${record}/><${Measured} record=${record} zone=${stand.zone}/>`;
 }

@@ -1,6 +1,6 @@
 /** Reclaim: cautions first, then notes for this zone, this damage, this month; weeds; what to sow. */
 import { html } from 'htm/preact';
-import { t, monthName } from './words.js';
+import { monthName, sentence, t } from './words.js';
 import { change, region, site } from './state.js';
 import { Frame } from './parts/frame.js';
 import { Choice } from './parts/choice.js';
@@ -36,22 +36,22 @@ function Notes({ zone }) {
   const damages = here.disturbances.filter((one) => one.notes);
   const cell = notes?.by_disturbance?.[chosen];
   if (!notes) return html`<p class="part">${t('reclaim.no_notes')}</p>`;
-  return html`<${Cautions} notes=${notes} month=${record.month}/><${Carried} record=${record} zone=${zone}/>
+  return html`<${Cautions} notes=${notes} zone=${zone}/><${Carried} record=${record} zone=${zone}/>
     <section class="part"><${Choice} label=${t('reclaim.damage')} options=${damages.map((one) => ({ value: one.id, label: one.name }))} value=${chosen} onPick=${(value) => change({ reclaim: { ...record.reclaim, disturbance: value } }, t('undo.disturbance'))}/></section>
     <${When} zone=${zone} record=${record}/>
     <section class="part"><dl class="notes">${cell ? html`<dt>${t('reclaim.do')}</dt><dd>${cell.do}</dd><dt>${t('reclaim.avoid')}</dt><dd>${cell.avoid}</dd>` : html`<dt>${t('reclaim.do')}</dt><dd class="quiet">${t('reclaim.pick_damage')}</dd>`}
-      ${NOTES.filter((name) => notes[name]).map((name) => html`<dt key=${name}>${t(`reclaim.${name}`)}</dt><dd>${notes[name]}</dd>`)}</dl><${Source} what=${t('reclaim.these')} region=${here} keys=${[here.pack.region.texts_source ?? 'common practice']}/></section>
+      ${NOTES.filter((name) => notes[name]).map((name) => html`<dt key=${name}>${t(`reclaim.${name}`)}</dt><dd>${notes[name]}</dd>`)}</dl><${Source} what=${t('reclaim.these')} region=${here} keys=${['common practice']}/></section>
     <${Sow} zone=${zone}/><${Weeds} zone=${zone}/><${Life} notes=${notes}/>
     <section class="part"><p class="small quiet">${t('reclaim.defer')}</p></section>
     <div class="act"><button type="button" class="btn icon-only" aria-label=${t('reclaim.print')} onClick=${() => print()}><${Icon} name="print"/></button>
       <a class="btn go" href=${`#/site/${record.id}/reclaim/order`}><${Icon} name="bag"/>${t('order.title')}</a></div>`;
 }
 
-function Cautions({ notes, month }) {
+function Cautions({ notes, zone }) {
   const here = region.value;
-  const now = (here.texts.region.cautions ?? []).filter((one) => one.level === 'deadly' && (!one.months || one.months.includes(month)));
+  const now = here.texts.region.cautions.filter((one) => one.level === 'deadly' && (!one.zones || one.zones.includes(zone.id)));
   return html`<ul class="cautions" aria-label=${t('reclaim.cautions')}>${notes.cautions && html`<li><${Icon} name="warn"/><span>${notes.cautions}</span></li>`}
-    ${now.map((one) => html`<li key=${one.text}><${Icon} name="warn"/><span>${one.text}</span></li>`)}</ul>`;
+    ${now.map((one) => html`<li key=${one.text}><${Icon} name="warn"/><span>${one.text}${one.when ? html` <span class="quiet">${t('reclaim.caution_when', { when: one.when })}</span>` : ''}</span></li>`)}</ul>`;
 }
 
 /** What the unit's edges say, where there are any. */
@@ -91,7 +91,7 @@ function Sow({ zone }) {
   return html`<section class="part"><h2 class="sides">${t('reclaim.mix')}<span class="label">${t('order.per_m2')}</span></h2>
     ${mix.plants.length === 0 && html`<p>${t('reclaim.no_seed')}</p>`}
     <ul class="plain-list">${mix.plants.map(({ id, seeds_m2 }) => html`<li key=${id} class="two-sides"><span>${here.plant.get(id).common}</span><b>${seeds_m2}</b></li>`)}</ul>
-    ${mix.plants.length > 0 && html`<p class="small">${t('reclaim.rate_is', { method: t(`method.${mix.method}`) })} ${mix.other_method ?? ''}</p>`}
+    ${mix.plants.length > 0 && html`<p class="small">${t('reclaim.rate_is', { method: t(`method.${mix.method}`) })} ${mix.other_method ? t('reclaim.other', { other: sentence(mix.other_method) }) : ''}</p>`}
     <p class="deep"><a class="btn" href=${`#/site/${site.value.id}/reclaim/topsoil`}><${Icon} name="pit"/>${t('topsoil.title')}</a><a class="btn" href=${`#/site/${site.value.id}/reclaim/test`}><${Icon} name="test"/>${t('success.title')}</a></p></section>`;
 }
 

@@ -3,7 +3,7 @@ import { call as callOf, unitZone } from '../core/index.js';
 import { listSites, listUnits, newSite, newUnit, removeSite, saveSite, saveUnit, tablesOf } from '../store/index.js';
 import { makeRegion } from './region.js';
 import { observer } from './settings.js';
-import { fetchSite, go, home, openSite, region, site, sites, store, tables, trouble, units } from './state.js';
+import { change, fetchSite, go, home, openSite, region, site, sites, store, tables, trouble, units } from './state.js';
 import { language, t } from './words.js';
 
 /** Reads every record and unit of this phone. */
@@ -14,20 +14,31 @@ export async function readAll() {
 
 /** Starts a site check and goes to its Place. @param {object} [start] fields to begin with */
 export async function startSite(start = {}) {
+  const kept = await makeSite(start);
+  if (kept) go(`#/site/${kept.id}/place`);
+}
+
+/** Another look from the same place: keeps where, who and which unit; asks the plants again.
+ *  @param {string} name */
+export async function startSpot(name) {
+  const { id, unit_id, unit_name, place, disturbance, role, observer: who, spots = [] } = site.value;
+  const near = { ...place, latitude_deg: null, longitude_deg: null, accuracy_m: null };
+  const kept = await makeSite({ unit_id, unit_name, place: near, disturbance, role, name, observer: who });
+  if (!kept || site.value?.id !== id) return;
+  change({ spots: [...spots, kept.id] });
+  go(`#/site/${kept.id}/plants`);
+}
+
+async function makeSite(start) {
   const first = { observer: observer.value, name: t('sites.default_name', { n: sites.value.length + 1 }), ...start };
   try {
     const kept = await saveSite(store.value, newSite(tables.value, first));
     sites.value = [kept, ...sites.value];
-    go(`#/site/${kept.id}/place`);
+    return kept;
   } catch (fault) {
     trouble.value = { code: fault.code };
+    return null;
   }
-}
-
-/** Another look from the same place: keeps where, who and which unit; asks the plants again. */
-export function startBeside(role, name, more = {}) {
-  const { unit_id, unit_name, place, disturbance, observer: who } = site.value;
-  return startSite({ unit_id, unit_name, place: { ...place, latitude_deg: null, longitude_deg: null, accuracy_m: null }, disturbance, role, name, observer: who, ...more });
 }
 
 /** Opens the record an address names, under the edition that scored it. */

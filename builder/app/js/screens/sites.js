@@ -30,7 +30,7 @@ export function Sites() {
         ${wanted === null
           ? html`<button type="button" class="btn icon-only" aria-label=${t('sites.search')} onClick=${() => want('')}><${Icon} name="find"/></button>`
           : html`<${SearchBox} value=${wanted} onWant=${want}/>`}
-        ${wanted === null && html`<button type="button" class="btn go" onClick=${startSite}><${Icon} name="plus"/>${t('sites.new')}</button>`}
+        ${wanted === null && html`<button type="button" class="btn go" onClick=${() => startSite()}><${Icon} name="plus"/>${t('sites.new')}</button>`}
       </div>
     </main>
     <${Foot} current="sites"/></div>`;

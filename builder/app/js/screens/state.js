@@ -81,11 +81,11 @@ export const saved = () => (writer ? writer.flush() : Promise.resolve());
 export const unsaved = () => Boolean(writer?.unsaved);
 
 /** Changes fields of the open site check, keeps them at once, and remembers the way back.
- *  @param {object} patch  @param {string|null} [told] what was done, for the line beside Undo */
+ *  @param {object} patch  @param {string|null} [told] what was done, for the line beside Undo; without it (typing) Undo skips it */
 export function change(patch, told = null) {
   const before = site.value;
   const old = Object.fromEntries(Object.keys(patch).map((key) => [key, before[key]]));
-  undoable.value = [...undoable.value.slice(-49), { old, told }];
+  if (told) undoable.value = [...undoable.value.slice(-49), { old, told }];
   put({ ...before, ...patch });
 }
 

@@ -1,10 +1,10 @@
 /** Success test of a unit: plots against a standard or a reference area, by the region's own rule. */
 import { html } from 'htm/preact';
-import { successTest } from '../core/success_test.js';
+import { ruleOf, successTest } from '../core/success_test.js';
 import { t, number } from './words.js';
 import { change, region, site, sites } from './state.js';
 import { Frame } from './parts/frame.js';
-import { Choice, Field } from './parts/choice.js';
+import { Choice, Field, Typed } from './parts/choice.js';
 import { readNumber } from './parts/wheel.js';
 import { standardsOf, normalsOf } from './pack_reading.js';
 
@@ -15,8 +15,9 @@ export function Success({ stand }) {
   const here = region.value;
   const record = site.value;
   const kept = { measure: 'cover', against: 'reference', values: [], reference: [], standard: null, years_since: null, ...record.reclaim.test };
-  const put = (patch) => change({ reclaim: { ...record.reclaim, test: { ...kept, ...patch } } }, t('undo.test'));
-  const rule = ruleFor(here, stand.zone, kept);
+  const put = (patch) => change({ reclaim: { ...record.reclaim, test: { ...kept, ...patch } } });
+  const rain_mm = normalsOf(here, stand.zone)?.precip_mm.reduce((sum, mm) => sum + mm, 0) ?? null;
+  const rule = ruleOf({ region: here.pack.success_rule, zone: standardsOf(here, stand.zone.id) ?? {}, rain_mm });
   const unit = MEASURES[kept.measure];
   return html`<${Frame} tab="reclaim" edge=${false} class="whole-width" title=${t('success.title')} line=${record.unit_name || record.name} back=${`#/site/${record.id}/reclaim`}>
     <section class="part lead0"><${Choice} label=${t('success.measure')} options=${Object.keys(MEASURES).map((value) => ({ value, label: t(`success.${value}`) }))} value=${kept.measure} onPick=${(measure) => put({ measure })} row/>
@@ -27,20 +28,7 @@ export function Success({ stand }) {
         : html`<${Field} label=${t('success.standard_value')} mode="decimal" unit=${unit} value=${kept.standard ?? ''} onChange=${(text) => put({ standard: readNumber(text, 0, 1e6) })}/>`}
       <${Field} label=${t('success.years_since')} mode="decimal" value=${kept.years_since ?? ''} onChange=${(text) => put({ years_since: readNumber(text, 0, 200) })}/></section>
     <section class="part stack"><${Outcome} kept=${kept} rule=${rule}/></section>
-    <section class="part small quiet stack"><p>${here.texts.region.success_rule?.text ?? here.texts.success_rule?.text}</p><p>${t('success.aims', { share: number((rule.share ?? 1) * 100), alpha: rule[`alpha_${rule.null}`] })}</p><p>${t('reclaim.defer')}</p></section></${Frame}>`;
-}
-
-/** The region's rule with the years of this zone's rain, in the shape core/success_test.js takes. */
-export function ruleFor(here, zone) {
-  const own = here.pack.success_rule;
-  const rain = normalsOf(here, zone)?.precip_mm.reduce((sum, mm) => sum + mm, 0) ?? null;
-  const years = own.rain_break_mm == null || rain === null ? null : rain > own.rain_break_mm ? own.years_wet : own.years_dry;
-  const direct = own.null_kind === 'reverse' ? own.reverse_null?.alpha ?? own.alpha : own.alpha;
-  return {
-    null: own.null ?? own.null_kind, share: standardsOf(here, zone.id)?.share ?? own.share ?? 1,
-    alpha_direct: own.alpha_direct ?? direct, alpha_reverse: own.alpha_reverse ?? own.reverse_null?.alpha ?? own.alpha,
-    precision: own.precision ?? own.sample_adequacy?.d, least: own.least ?? own.reverse_null?.min_samples ?? 2, years: own.years ?? years,
-  };
+    <section class="part small quiet stack"><p>${here.texts.region.success_rule}</p><p>${t('success.aims', { share: number((rule.share ?? 1) * 100), alpha: rule[`alpha_${rule.null_kind}`] })}</p><p>${t('reclaim.defer')}</p></section></${Frame}>`;
 }
 
 function Outcome({ kept, rule }) {
@@ -50,7 +38,7 @@ function Outcome({ kept, rule }) {
   const test = successTest({ values: kept.values, rule, standard: kept.against === 'standard' ? kept.standard : null, reference: kept.against === 'reference' ? kept.reference : null, years_since: kept.years_since });
   return html`<p class="verdict">${t(`success.is_${test.verdict}`)}</p><p>${t(test.sentence, { years: rule.years ?? 0, more: test.more, share: number(rule.share * 100) })}</p>
     ${test.deciding && html`<dl class="notes"><dt>${t('success.mean')}</dt><dd>${number(test.deciding.mean ?? mean(kept.values), 1)}</dd><dt>${t('success.plots')}</dt><dd>${t('success.plots_line', { n: kept.values.length, needed: test.plots_needed })}</dd>
-      <dt>${t('success.other_null')}</dt><dd>${t(test.other.passes ? 'success.other_passes' : 'success.other_fails', { kind: t(`success.null_${test.null === 'direct' ? 'reverse' : 'direct'}`) })}</dd></dl>`}`;
+      <dt>${t('success.other_null')}</dt><dd>${t(test.other.passes ? 'success.other_passes' : 'success.other_fails', { kind: t(`success.null_${test.null_kind === 'direct' ? 'reverse' : 'direct'}`) })}</dd></dl>`}`;
 }
 
 const mean = (values) => values.reduce((sum, value) => sum + value, 0) / values.length;
@@ -64,5 +52,5 @@ function referenceWords(here, zone, record) {
 
 function Numbers({ label, values, onValues }) {
   const read = (text) => onValues(text.split(/[\s;]+/).map((one) => readNumber(one, 0, 1e6)).filter((one) => one !== null));
-  return html`<label class="field"><span>${label}</span><textarea rows="2" inputmode="decimal" value=${values.join(' ')} onChange=${(event) => read(event.currentTarget.value)}></textarea><small>${t('success.how_typed', { n: values.length })}</small></label>`;
+  return html`<label class="field"><span>${label}</span><${Typed} rows=${2} mode="decimal" value=${values.join(' ')} onChange=${read}/><small>${t('success.how_typed', { n: values.length })}</small></label>`;
 }

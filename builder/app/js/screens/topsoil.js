@@ -15,7 +15,7 @@ const COLUMNS = [['area_ha', 0, 100000, 'ha'], ['depth_cm', 0, 500, 'cm'], ['sto
 export function Topsoil({ stand }) {
   const record = site.value;
   const kept = record.reclaim.topsoil ?? { lifts: [], swell_share: null, spread_ha: null };
-  const put = (patch) => change({ reclaim: { ...record.reclaim, topsoil: { ...kept, ...patch } } }, t('undo.soil'));
+  const put = (patch) => change({ reclaim: { ...record.reclaim, topsoil: { ...kept, ...patch } } });
   const set = (i, name, value) => put({ lifts: kept.lifts.map((lift, at) => (at === i ? { ...lift, [name]: value } : lift)) });
   const whole = kept.lifts.filter((lift) => lift.area_ha > 0 && lift.depth_cm > 0);
   const book = whole.length ? ledger({ lifts: whole, swell_share: kept.swell_share ?? 0, spread_ha: kept.spread_ha, limits: region.value.pack.topsoil_limits ?? {} }) : null;

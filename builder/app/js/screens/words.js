@@ -21,9 +21,17 @@ export function t(key, places = {}) {
   return entry.replace(/\{(\w+)\}/g, (_, name) => {
     if (!(name in places)) throw new Error(`${key} wants {${name}}`);
     const value = places[name];
-    return typeof value === 'number' ? number(value) : value;
+    return typeof value === 'number' ? figure(value) : value;
   });
 }
+
+/** A figure as it is, with two decimals at most. @param {number} value */
+function figure(value) {
+  return new Intl.NumberFormat(language.value, { maximumFractionDigits: 2 }).format(value);
+}
+
+/** With a capital first letter, to begin a line. @param {string} text */
+export const sentence = (text) => text.charAt(0).toLocaleUpperCase(language.value) + text.slice(1);
 
 /** True where the words file holds the key. @param {string} key */
 export function has(key) {

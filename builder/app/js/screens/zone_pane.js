@@ -1,7 +1,7 @@
 /** The open edge with its verdict in words, as a page of its own or beside another page. */
 import { html } from 'htm/preact';
 import { signal } from '@preact/signals';
-import { t } from './words.js';
+import { sentence, t } from './words.js';
 import { call, region, site } from './state.js';
 import { oddsWords } from './say.js';
 import { heightMark } from './height_mark.js';
@@ -43,7 +43,7 @@ function OffSlope({ region: here, answer }) {
 
 function Called({ region: here, answer }) {
   const zone = here.zone.get(answer.zone_id);
-  return html`<p class="odds"><b>${oddsWords(answer.belief[zone.id])}</b> ${t('verdict.odds', { zone: zone.letter })}</p><${Untested}/>
+  return html`<p class="odds"><b>${sentence(oddsWords(answer.belief[zone.id]))}</b> ${t('verdict.odds', { zone: zone.letter })}</p><${Untested}/>
     <p class="gist">${zone.one_line}</p><${Keep}/>`;
 }
 

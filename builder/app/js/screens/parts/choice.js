@@ -1,5 +1,7 @@
 /** Choosing one of a few: keys in a row when they are short, loose keys when they are many or long. */
 import { html } from 'htm/preact';
+import { useState } from 'preact/hooks';
+import { sentence } from '../words.js';
 
 /** @param {{label: string, options: {value: string, label: string}[], value: string|null, onPick: (value: string) => void, row?: boolean, hidden?: boolean, given?: string}} props
  *  given: the value that something else has answered beforehand
@@ -13,17 +15,32 @@ export function Choice({ label, options, value, onPick, row = false, hidden = fa
       aria-pressed=${String(one.value === value)} onClick=${() => onPick(one.value)}>${sentence(one.label)}</button>`)}</div></div>`;
 }
 
-const sentence = (text) => text.charAt(0).toLocaleUpperCase() + text.slice(1);
-
 /** A value between a less and a more key. @param {{label: string, children: unknown, onLess: () => void, onMore: () => void, less: string, more: string}} props */
 export function Stepper({ children, onLess, onMore, less, more }) {
   return html`<div class="slide"><button type="button" class="btn" aria-label=${less} onClick=${onLess}><span class="sign" aria-hidden="true">−</span></button>
     ${children}<button type="button" class="btn" aria-label=${more} onClick=${onMore}><span class="sign" aria-hidden="true">+</span></button></div>`;
 }
 
-/** One line to type in. @param {{label: string, value: string, onChange: (value: string) => void, type?: string, hint?: string, unit?: string}} props */
-export function Field({ label, value, onChange, type = 'text', hint = '', unit = '', mode, list }) {
+/** One line to type in. Each key pressed is kept at once; what is being typed is never written over.
+ *  @param {{label: string, value: string|number, onChange: (value: string) => void, type?: string, hint?: string, unit?: string, mode?: string, list?: string, late?: boolean}} props
+ *  late: tell only when the line is left */
+export function Field({ label, value, onChange, type = 'text', hint = '', unit = '', mode, list, late = false }) {
   return html`<label class="field"><span>${label}</span>
-    <span class="box"><input type=${type} inputmode=${mode} list=${list} value=${value} onChange=${(event) => onChange(event.currentTarget.value)}/>${unit && html`<i>${unit}</i>`}</span>
+    <span class="box"><${Typed} type=${type} mode=${mode} list=${list} value=${value} onChange=${onChange} late=${late}/>${unit && html`<i>${unit}</i>`}</span>
     ${hint && html`<small>${hint}</small>`}</label>`;
+}
+
+/** The box itself, with its own draft while it has the focus. */
+export function Typed({ value, onChange, late = false, type = 'text', mode, label, list, placeholder, rows = 0 }) {
+  const [draft, setDraft] = useState(null);
+  const typed = (event) => {
+    setDraft(event.currentTarget.value);
+    if (!late) onChange(event.currentTarget.value);
+  };
+  const left = (event) => {
+    if (late && draft !== null) onChange(event.currentTarget.value);
+    setDraft(null);
+  };
+  const shared = { value: draft ?? value, onInput: typed, onBlur: left, 'aria-label': label, placeholder, inputmode: mode };
+  return rows ? html`<textarea rows=${rows} ...${shared}></textarea>` : html`<input type=${type} list=${list} ...${shared}/>`;
 }

@@ -1,7 +1,7 @@
 /** The fore-edge open: the answer is read at its height, between its neighbours. */
 import { html } from 'htm/preact';
 import { useState } from 'preact/hooks';
-import { t } from '../words.js';
+import { sentence, t } from '../words.js';
 import { oddsWords, percentWords } from '../say.js';
 import { Fill } from './patterns.js';
 import { edgeRows } from './edge_rows.js';
@@ -35,7 +35,7 @@ function Opened({ row, call, region, half, children }) {
   const lens = call.verdict === 'mosaic' ? region.zone.get(call.pair.find((id) => id !== zone.id)) : null;
   return html`<li class=${`opened ${half ? 'half' : ''} ${row.seam ? 'seamed' : ''}`}>${row.seam && html`<${Seam}/>`}<${Side} zone=${zone}/><${Track} zone=${zone} share=${share}/>
     <div class="said"><h2>${half ? zone.short : zone.name}</h2>
-      ${call.verdict === 'edge' && html`<p class="odds"><b>${oddsWords(share)}</b></p>`}
+      ${call.verdict === 'edge' && html`<p class="odds"><b>${sentence(oddsWords(share))}</b></p>`}
       ${!half && children}
       ${lens && html`<p class="inlay"><span class="pool big"><${Fill} letter=${lens.letter}/><b>${lens.letter}</b></span><span><b class="lensname">${lens.short}</b>${lens.one_line && html`<span class="small">${lens.one_line}</span>`}</span></p>`}
     </div></li>`;

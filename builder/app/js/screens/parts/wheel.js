@@ -1,6 +1,7 @@
 /** Facing wheel: eight keys round a hub that holds the slope. */
 import { html } from 'htm/preact';
 import { t } from '../words.js';
+import { Typed } from './choice.js';
 
 const POINTS = ['n', 'ne', 'e', 'se', 's', 'sw', 'w', 'nw'];
 const OUTER = 126;
@@ -39,8 +40,7 @@ export function Wheel({ place, onPlace }) {
     <text class="hubtext" x="130" y="138">${slope === null ? '–' : t('unit.pct', { n: slope })}</text></svg>
     <div class="slope">${[0, 5, 12, 25, 45, 70].map((pct) => html`<button key=${pct} type="button" class="chip" aria-pressed=${String(slope === pct)}
       onClick=${() => onPlace({ ...place, slope_pct: slope === pct ? null : pct })}>${pct === 0 ? t('place.level') : t('unit.pct', { n: pct })}</button>`)}
-      <label class="chip typed"><span class="spoken">${t('place.slope_typed')}</span><input inputmode="decimal" placeholder=${t('place.slope_other')} value=${slope ?? ''}
-        onChange=${(event) => onPlace({ ...place, slope_pct: readNumber(event.currentTarget.value, 0, 200) })}/><i>%</i></label></div>`;
+      <label class="chip typed"><span class="spoken">${t('place.slope_typed')}</span><${Typed} mode="decimal" placeholder=${t('place.slope_other')} value=${slope ?? ''} onChange=${(text) => onPlace({ ...place, slope_pct: readNumber(text, 0, 200) })}/><i>%</i></label></div>`;
 }
 
 /** A typed figure between two limits, or null. Takes a decimal comma. */
