@@ -8,6 +8,7 @@ from __future__ import annotations
 
 import argparse
 import sys
+import time
 from collections.abc import Callable
 from pathlib import Path
 
@@ -35,6 +36,27 @@ def parser() -> argparse.ArgumentParser:
     check.add_argument("region", nargs="+", type=Path, help="folder of tables, e.g. keydata/NAME")
     check.set_defaults(run=run_check)
 
+    build = commands.add_parser("build", help="make the field app and the booklets")
+    build.add_argument("region", nargs="+", type=Path, help="folders of tables, into one site")
+    build.add_argument("--out", type=Path, default=Path("site_out"), help="folder of the site")
+    build.add_argument("--no-booklet", action="store_true", help="leave the booklets as they are")
+    build.set_defaults(run=run_build)
+
+    call = commands.add_parser("call", help="call a whole file of plots")
+    call.add_argument("region", type=Path, help="folder of tables")
+    call.add_argument("plots", type=Path, help="CSV: plot_id,plant_id,cover_pct")
+    call.add_argument("--out", type=Path, required=True, help="CSV of calls to write")
+    call.add_argument("--answers", type=int, metavar="N", help="answer as a person would, N at most")
+    call.add_argument("--scale", metavar="NAME", help="cover is written in classes of this scale")
+    call.add_argument("--sites", type=Path, metavar="CSV", help="heights, slopes, months, answers")
+    call.add_argument("--month", type=int, choices=range(1, 13), metavar="1-12", help="of all plots")
+    call.add_argument("--disturbance", metavar="ID", help="of all plots that state none")
+    call.add_argument(
+        "--listed-only", action="store_true",
+        help="plants not listed were not searched for; else they were not found",
+    )  # fmt: skip
+    call.set_defaults(run=run_call)
+
     desk = commands.add_parser("desk", help="edit, prove and build in the browser, on this computer")
     desk.add_argument("--port", type=int, help="port to listen on; without it the first free one")
     desk.add_argument("--out", type=Path, default=Path("site_out"), help="folder of the built site")
@@ -60,10 +82,68 @@ def run_check(given: argparse.Namespace) -> int:
     return 1 if stops else 0
 
 
+def run_build(given: argparse.Namespace) -> int:
+    """Checks, compiles and writes; 1 with every problem when tables stop it."""
+    started = time.monotonic()
+    try:
+        built = steps.build(given.region, given.out, say_step, booklets=not given.no_booklet)
+    except steps.Stopped as stopped:
+        print(render_all(in_order(stopped.problems)))
+        return 1
+    except (steps.BuilderBusy, OSError) as error:
+        raise Told(str(error)) from None
+    for region_id, note in built.notes.items():
+        made = "made" if region_id in built.fresh else "unchanged"
+        print(f"{region_id}: edition {note.edition}, pack {note.pack_hash}, "
+              f"booklet {note.booklet_pages} pages, {made}")
+    seconds = time.monotonic() - started
+    print(f"{given.out}: {len(built.site.changed)} files written, {seconds:.1f} s")
+    return 0
+
+
+def run_call(given: argparse.Namespace) -> int:
+    """Calls a file of plots; unknown plants are noted, not fatal."""
+    if given.answers is not None and given.answers < 1:
+        raise Told("--answers takes a whole number from 1 up")
+    try:
+        called = steps.call_file(
+            given.region, given.plots, given.out, scale=given.scale, sites_csv=given.sites,
+            answers=given.answers, month=given.month, disturbance=given.disturbance,
+            listed_only=given.listed_only,
+        )  # fmt: skip
+    except steps.Stopped as stopped:
+        print(render_all(in_order(stopped.problems)))
+        return 1
+    except KeyError as name:
+        raise Told(f"there is no cover scale or disturbance named {name}") from None
+    except OSError as error:
+        raise Told(str(error)) from None
+    if called.problems:
+        print(render_all(in_order(called.problems)))
+    if called.unknown:
+        rows = ", ".join(f"{name} ({count})" for name, count in called.unknown.items())
+        print(f"note: not plants of this region: {rows}")
+    print(f"{given.out}: {called.plots} plots called")
+    return 0
+
+
+def say_step(done: int, of: int, words: str) -> None:
+    """One line of progress, which the desk reads too."""
+    print(f"[{done}/{of}] {words}", flush=True)
+
+
 def run_desk(given: argparse.Namespace) -> int:
     """Serves the desk until Ctrl-C."""
     from builder.desk.opening import CannotOpen, open_desk
 
+    if given.demo:
+        folders = steps.regions_in(Path("keydata"))
+        if not folders:
+            raise Told("there is no region in keydata/")
+        if not all(steps.is_current(folder, given.out) for folder in folders):
+            made = run_build(argparse.Namespace(region=folders, out=given.out, no_booklet=False))
+            if made != 0:
+                return made
     try:
         open_desk(given, print)
     except CannotOpen as refusal:

@@ -28,7 +28,7 @@ ENTRY = {"__init__", "__main__"}  # the package's door: version and start, no wo
 # A library that only one part may know.
 HOME = {"flask": "desk", "waitress": "desk", "weasyprint": "booklet", "yaml": "rows"}
 
-JS_ORDER = ["core", "store", "screens", "main"]
+JS_ORDER = ["before", "core", "store", "screens", "main"]  # before: runs ahead of the first paint
 JS_IMPORT = re.compile(r"""^\s*(?:import|export)\b[^'"]*?['"]([^'"]+)['"]""", re.MULTILINE)
 JS_PURE = re.compile(r"\b(document|window|indexedDB|localStorage|navigator|fetch)\b\s*[.(\[]")
 

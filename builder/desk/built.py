@@ -8,8 +8,17 @@ from dataclasses import dataclass, field
 from pathlib import Path
 from typing import Any
 
-from flask import Blueprint, Response, abort, current_app, flash, redirect, render_template
-from flask import send_file, url_for
+from flask import (
+    Blueprint,
+    Response,
+    abort,
+    current_app,
+    flash,
+    redirect,
+    render_template,
+    send_file,
+    url_for,
+)
 from werkzeug.wrappers import Response as BaseResponse
 
 from builder import steps

@@ -22,10 +22,12 @@ OPEN_ENDPOINTS = {"account.login", "static", None}
 
 MEGABYTE = 1_000_000
 LIMITS = {
-    "MAX_CONTENT_LENGTH": 32 * MEGABYTE,  # a season of plots as a spreadsheet is about 5 MB
+    "MAX_CONTENT_LENGTH": 2 * MEGABYTE,  # the largest table typed by hand so far is 0.1 MB
     "MAX_FORM_MEMORY_SIZE": 2 * MEGABYTE,
     "MAX_FORM_PARTS": 5_000,
 }
+UPLOAD_LIMIT = 32 * MEGABYTE  # a season of plots as a spreadsheet is about 5 MB
+UPLOADS = {"sheets.receive"}
 
 DESK_POLICY = (
     "default-src 'none'; script-src 'self'; style-src 'self'; img-src 'self' data:; "
@@ -71,6 +73,8 @@ def refuse_foreign_writes() -> None:
     """Stops a write that does not come from one of the desk's own forms."""
     if request.method in READS:
         return
+    if request.endpoint in UPLOADS:
+        request.max_content_length = UPLOAD_LIMIT
     if not same_origin(request):
         abort(403, "foreign-origin")
     given = request.headers.get("X-Desk-Token") or request.form.get("token", "")

@@ -11,7 +11,7 @@ from builder.desk import charts
 from builder.desk.built import BuiltView, built_view
 from builder.desk.page import page
 from builder.desk.phrases import counted, read_phrases
-from builder.desk.proof import ProofView, proof_view
+from builder.desk.proof import proof_view
 from builder.desk.shelf import Look, shelf
 from builder.desk.trouble import ProblemView, flags, problem_views
 from builder.tables.regions import YAML_TABLES

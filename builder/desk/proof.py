@@ -4,7 +4,6 @@ from __future__ import annotations
 
 from dataclasses import dataclass, field
 
-from flask import url_for
 from markupsafe import Markup
 
 from builder.desk.shelf import Look

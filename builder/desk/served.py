@@ -8,7 +8,7 @@ from __future__ import annotations
 import hashlib
 from pathlib import Path
 
-from flask import Blueprint, Response, abort, current_app, redirect, request, send_file, url_for
+from flask import Blueprint, Response, abort, current_app, redirect, request, url_for
 from werkzeug.security import safe_join
 from werkzeug.wrappers import Response as BaseResponse
 
@@ -29,22 +29,6 @@ TYPES = {
 }
 
 pages = Blueprint("field", __name__, url_prefix="/field")
-_hashes: dict[tuple[str, int, int, int], str] = {}
-
-
-def content_hash(path: Path) -> str:
-    """First 32 hex digits of the file's SHA-256, remembered while the file is untouched.
-
-    The change time is part of the memory: a reproducible build may set the modification time.
-    """
-    stat = path.stat()
-    key = (str(path), stat.st_ino, stat.st_ctime_ns, stat.st_size)
-    if key not in _hashes:
-        if len(_hashes) > 5_000:
-            _hashes.clear()
-        with path.open("rb") as file:
-            _hashes[key] = hashlib.file_digest(file, "sha256").hexdigest()[:32]
-    return _hashes[key]
 
 
 def confined(folder: Path, name: str) -> Path:
@@ -74,10 +58,10 @@ def send(name: str) -> Response:
     if any(part.startswith(".") for part in name.split("/")):
         abort(404)
     path = confined(folder, name)
+    content = path.read_bytes()
     kind = TYPES.get(path.suffix.lower(), "application/octet-stream")
-    answer = send_file(path.resolve(), mimetype=kind, etag=False, conditional=False)
-    answer.last_modified = None
-    answer.set_etag(content_hash(path))
+    answer = Response(content, content_type=kind)
+    answer.set_etag(hashlib.sha256(content).hexdigest()[:32])
     answer.headers["Cache-Control"] = "no-cache"
-    answer.make_conditional(request, accept_ranges=True, complete_length=path.stat().st_size)
+    answer.make_conditional(request, accept_ranges=True, complete_length=len(content))
     return answer

@@ -6,8 +6,18 @@ from dataclasses import dataclass
 from pathlib import Path as File
 from typing import Any
 
-from flask import Blueprint, Response, abort, current_app, flash, jsonify, redirect, render_template
-from flask import request, url_for
+from flask import (
+    Blueprint,
+    Response,
+    abort,
+    current_app,
+    flash,
+    jsonify,
+    redirect,
+    render_template,
+    request,
+    url_for,
+)
 from werkzeug.wrappers import Response as BaseResponse
 
 from builder.desk.edits import Change, Refusal, edited, edited_csv

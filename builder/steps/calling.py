@@ -1,0 +1,89 @@
+"""A whole file of plots, called by a region's key."""
+
+from __future__ import annotations
+
+import csv
+import os
+from collections.abc import Callable
+from dataclasses import dataclass
+from pathlib import Path
+
+from builder.key.bulk import call_plots
+from builder.key.plots_bind import bind_plots, names_of, read_sites
+from builder.key.plots_file import read_plots
+from builder.key.scales import SCALES
+from builder.pack import compile_pack
+from builder.problems import Problem, errors
+from builder.steps.building import region_of
+from builder.steps.checking import Stopped, check_regions
+from builder.tables import Region
+
+COLUMNS = (
+    "plot_id",
+    "verdict",
+    "zone_id",
+    "belief",
+    "next_zone_id",
+    "next_belief",
+    "answers",
+)
+
+
+@dataclass(frozen=True)
+class Called:
+    """How many plots were called, what the file spoke of that the region does not know, cautions."""
+
+    plots: int
+    unknown: dict[str, int]
+    problems: list[Problem]
+
+
+def scale_of(region: Region, name: str | None) -> dict[str, float] | None:
+    """Percent by class code. KeyError where no scale has this name."""
+    if name is None:
+        return None
+    own = region.cover_scale
+    if name == own.id:
+        return {one.code: one.mid_pct for one in own.classes}
+    return dict(SCALES[name])
+
+
+def call_file(
+    folder: Path,
+    plots_csv: Path,
+    out: Path,
+    *,
+    scale: str | None = None,
+    sites_csv: Path | None = None,
+    answers: int | None = None,
+    month: int | None = None,
+    disturbance: str | None = None,
+    listed_only: bool = False,
+    progress: Callable[[int, int], None] | None = None,
+) -> Called:
+    """Calls every plot of a file and writes one line a plot, whole or not at all.
+
+    Raises Stopped when tables or plots have errors, KeyError for an unknown scale.
+    """
+    (checked,) = check_regions([folder])
+    region = region_of(checked)
+    written, problems = read_plots(plots_csv, scale_of(region, scale))
+    if written is None or errors(problems):
+        raise Stopped(problems)
+    bound = bind_plots(written, list(region.plant_ids), names_of(region), listed_only)
+    pack, plots = compile_pack(region, checked.fitted), bound.plots
+    if sites_csv is not None:
+        plots, more = read_sites(sites_csv, pack, plots)
+        problems += more
+        if errors(more):
+            raise Stopped(problems)
+    calls = call_plots(
+        pack, plots, answers=answers, month=month, disturbance=disturbance, progress=progress
+    )
+    part = out.with_name(f".{out.name}.part")
+    with part.open("w", encoding="utf-8", newline="") as file:
+        lines = csv.writer(file, lineterminator="\n")
+        lines.writerow(COLUMNS)
+        lines.writerows(zip(*(calls[name] for name in COLUMNS), strict=True))
+    os.replace(part, out)
+    return Called(len(plots), bound.unknown, problems)
