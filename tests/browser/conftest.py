@@ -211,13 +211,20 @@ def serve():
 
 
 @pytest.fixture(scope="session")
-def demo_files():
+def region():
+    """The demo region's tables."""
+    from builder.tables import load_region
+
+    return load_region(ROOT / "keydata" / DEMO).region
+
+
+@pytest.fixture(scope="session")
+def demo_files(region):
     """The demo site as path -> bytes, built once from the tables."""
     from builder.site.build import site_files
     from builder.site.region import site_region
-    from builder.tables import load_region
 
-    return site_files([site_region(load_region(ROOT / "keydata" / DEMO).region)])
+    return site_files([site_region(region)])
 
 
 @pytest.fixture(scope="session")
