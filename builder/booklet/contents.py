@@ -1,7 +1,7 @@
 """What stands in the booklet, in order, as finished text and drawings."""
 
 from collections.abc import Mapping
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from pathlib import Path
 
 from markupsafe import Markup
@@ -19,8 +19,11 @@ from builder.views.zones import ZoneView, zone_views
 WORDS = Path(__file__).parent / "words"
 RULE_STRIP_MM = 7.0
 COVER_PAPER = "#f6f1e4"
-FORM_PLANTS = 23
-FORM_CLIPS = 10
+FORM_PLANTS = 22
+FORM_CLIPS = 9
+FIRST_LINES, REST_LINES = 21, 54
+"""Lines that fit a zone's first page and its last two beside their drawings, counted on pages."""
+WIDE_NAME = 18
 
 
 @dataclass(frozen=True)
@@ -46,10 +49,19 @@ class Cover:
 
 
 @dataclass(frozen=True)
+class Spread:
+    """A zone's pages; a page with much to say is set a little closer."""
+
+    zone: ZoneView
+    first: str
+    rest: str
+
+
+@dataclass(frozen=True)
 class FormView:
     """The blank site check: the record's fields in the phone's order."""
 
-    fields: tuple[str, ...]
+    fields: tuple[tuple[str, str], ...]
     roles: tuple[str, ...]
     damages: tuple[str, ...]
     codes: str
@@ -72,15 +84,15 @@ class BookletView:
     steps: tuple[str, ...]
     hoops: tuple[grounds.HoopView, ...]
     signs: tuple[tuple[Markup, str], ...]
-    region_warns: tuple[plants.Warn, ...]
-    people_warns: tuple[grounds.PlantWarn, ...]
-    zones: tuple[ZoneView, ...]
+    region_warns: tuple[grounds.WarnGroup, ...]
+    people_warns: tuple[grounds.WarnGroup, ...]
+    zones: tuple["Spread", ...]
     year_note: str
     chart: plants.Chart
     forms: tuple[plants.FormGroup, ...]
     questions: tuple[grounds.QuestionView, ...]
     feel: tuple[grounds.FeelStep, ...]
-    textures: tuple[grounds.TextureRow, ...]
+    textures: tuple[tuple[grounds.TextureRow, grounds.TextureRow], ...]
     form: "FormView"
     sources: tuple[grounds.SourceView, ...]
     cautions_of_build: tuple[str, ...]
@@ -136,17 +148,63 @@ def booklet_view(
         signs=_signs(look, own),
         region_warns=tuple(grounds.region_warns(look)),
         people_warns=tuple(grounds.people_warns(look)),
-        zones=zones,
+        zones=tuple(spread(zone) for zone in zones),
         year_note=own.say("zone.year_note", unit=look.figures.rain_unit),
         chart=plants.chart(look),
         forms=tuple(plants.by_form(look)),
         questions=tuple(grounds.questions(look)),
         feel=tuple(grounds.feel_steps(look)),
-        textures=tuple(grounds.texture_rows(look)),
+        textures=_abreast(grounds.texture_rows(look)),
         form=form_view(look, own),
         sources=tuple(grounds.sources(look)),
         cautions_of_build=build_cautions,
     )
+
+
+def with_pages(book: BookletView, look: Look, pages: Mapping[str, int]) -> BookletView:
+    """The same booklet with page numbers where it speaks of pages."""
+    own = phrases(look.phrases.language, WORDS)
+    return replace(
+        book,
+        belts=_belts(look, tuple(each.zone for each in book.zones), pages),
+        rest=_rest(own, pages),
+        steps=_steps(own, pages),
+    )
+
+
+def spread(zone: ZoneView) -> Spread:
+    """Set a zone's pages; lines are reckoned from the length of the texts."""
+    first = (
+        _lines(zone.one_line, 56)
+        + _lines(zone.name, 30)
+        + _lines(zone.band)
+        + sum(_lines(kin.short + kin.tell, 60) for kin in zone.kin)
+        + _lines(zone.why_here + zone.limits)
+        + _lines(" ".join(zone.soil))
+        + sum(_lines(line.head + line.text) for line in zone.after)
+    )
+    mix = zone.mix
+    rest = (
+        _lines(zone.cautions)
+        + _lines(zone.months_line)
+        + sum(_lines(line.head + line.text) for line in zone.work)
+        + sum(_lines(each.name + each.do + each.avoid, 62) for each in zone.damage)
+        + sum(max(_lines(each.name, WIDE_NAME) for each in pair) for pair in mix.pairs)
+        + sum(_lines(each) for each in (mix.other_method, *mix.planted))
+        + _lines(zone.weeds)
+        + _lines("".join(line.head + line.text for line in zone.wildlife))
+        + _lines("".join(line.head + line.text for line in zone.soil_life))
+    )
+    return Spread(
+        zone,
+        "tight" if first > FIRST_LINES else "easy",
+        "tight" if rest > REST_LINES else "easy",
+    )
+
+
+def _lines(text: str, wide: int = 66) -> int:
+    """Lines a text takes at so many letters a line."""
+    return -(-len(text) // wide)
 
 
 def cover(look: Look, trim: Trim, own: Phrases) -> Cover:
@@ -209,11 +267,19 @@ def _belts(look: Look, zones: tuple[ZoneView, ...], pages: Mapping[str, int]) ->
 
 
 def _rest(own: Phrases, pages: Mapping[str, int]) -> tuple[Entry, ...]:
-    names = ("cautions", "use", "chart", "plants", "questions", "feel", "form", "sources")
+    names = ("chart", "plants", "questions", "feel", "form", "sources")
     return tuple(
-        Entry(Markup(""), own.say(f"{name}.title"), "", name, _page(pages, name))
-        for name in names
+        Entry(Markup(""), own.say(f"{name}.title"), "", name, _page(pages, name)) for name in names
     )
+
+
+def _abreast(
+    rows: list[grounds.TextureRow],
+) -> tuple[tuple[grounds.TextureRow, grounds.TextureRow], ...]:
+    """Rows two abreast, read down the first column and then the second."""
+    half = (len(rows) + 1) // 2
+    second = [*rows[half:], grounds.TextureRow("", "")][:half]
+    return tuple(zip(rows[:half], second, strict=True))
 
 
 def _page(pages: Mapping[str, int], anchor: str) -> str:
@@ -246,10 +312,11 @@ def form_view(look: Look, own: Phrases) -> FormView:
     """The blank site check of a region."""
     fields = (
         "unit", "name", "observer", "date", "latitude", "longitude", "accuracy", "height",
-        "slope", "aspect", "photos",
+        "slope", "aspect", "photos", "hour",
     )  # fmt: skip
+    labels = [own.say(f"form.head.{name}") for name in fields]
     return FormView(
-        fields=tuple(own.say(f"form.head.{name}") for name in fields),
+        fields=tuple(zip(labels[::2], labels[1::2], strict=True)),
         roles=tuple(own.words("form.roles")),
         damages=tuple(
             look.disturbance_name(each.id, each.name) for each in look.region.disturbances

@@ -1,6 +1,7 @@
 """Tables in, PDF out."""
 
 import os
+import re
 from collections.abc import Callable, Iterable
 from dataclasses import dataclass
 from pathlib import Path
@@ -8,14 +9,16 @@ from pathlib import Path
 from jinja2 import Environment, FileSystemLoader, StrictUndefined, select_autoescape
 
 from builder.booklet import fonts, style
-from builder.booklet.contents import booklet_view
-from builder.booklet.render import laid_out, pages_of, written
+from builder.booklet.contents import WORDS, BookletView, booklet_view, with_pages
+from builder.booklet.render import Press, bound, no_sweeping, pages_of, written
 from builder.tables import Region
 from builder.views.look import Look, look
+from builder.views.phrases import phrases
 
 HERE = Path(__file__).parent
 FORMATS = {"a6": style.A6, "pocket-us": style.POCKET_US}
 MOST_LAYOUTS = 3
+FRONT_PAGES = 7
 Progress = Callable[[str, int, int], None]
 
 
@@ -57,7 +60,8 @@ def write_booklet(
     tell = progress or (lambda stage, done, of: None)
     seen = look(region, language)
     trim = FORMATS[format]
-    pdf, count, anchors = _reading_order(seen, trim, mark or "", chosen, tuple(cautions), tell)
+    with no_sweeping():
+        pdf, count, anchors = _reading_order(seen, trim, mark or "", chosen, tuple(cautions), tell)
     path = Path(out)
     path.parent.mkdir(parents=True, exist_ok=True)
     part = path.with_name(path.name + ".part")
@@ -89,44 +93,56 @@ def _reading_order(
     cautions: tuple[str, ...],
     tell: Progress,
 ) -> tuple[bytes, int, dict[str, int]]:
-    """The booklet in reading order; page numbers are those of the last layout, verified."""
+    """The booklet in reading order.
+
+    The body is set first, then the front matter with the body's page numbers in figures;
+    should the front take more or fewer pages than thought, the body is set again.
+    """
     zone_ids = [zone.id for zone in seen.region.zones if chosen is None or zone.id in chosen]
-    foot = seen.region.name
-    styles = [
-        fonts.faces(),
-        style.page_rules(seen, trim, foot, zone_ids),
-        (HERE / "booklet.css").read_text("utf-8"),
-    ]
-    pages: dict[str, int] = {}
-    for turn in range(MOST_LAYOUTS):
-        html = html_of(seen, trim, mark, pages, chosen, cautions)
-        tell("layout", turn, MOST_LAYOUTS)
-        document = laid_out(html, styles)
-        found = pages_of(document)
-        if found == pages:
+    foot = phrases(seen.phrases.language, WORDS).say(
+        "footer", region=seen.region.name, edition=seen.region.edition
+    )
+    press = Press(
+        [
+            fonts.faces(),
+            style.page_rules(seen, trim, foot, zone_ids),
+            (HERE / "booklet.css").read_text("utf-8"),
+        ]
+    )
+    book = booklet_view(seen, trim, mark, {}, chosen, cautions)
+    body_html = _html("body.html", book)
+    front_pages = FRONT_PAGES
+    for _ in range(MOST_LAYOUTS):
+        body = press.laid_out(
+            body_html, front_pages + 1, lambda page, add=front_pages: tell("layout", page + add, 0)
+        )
+        pages = pages_of(body, front_pages + 1)
+        front_html = _html("front.html", with_pages(book, seen, pages))
+        front = press.laid_out(front_html, 1, lambda page: tell("front", page, 0))
+        if len(front.pages) == front_pages:
             break
-        pages = found
+        front_pages = len(front.pages)
     else:
-        raise BookletError("page numbers do not settle; a page is set differently each time")
-    tell("write", 0, len(document.pages))
-    pdf = written(document)
-    tell("write", len(document.pages), len(document.pages))
-    return pdf, len(document.pages), pages
+        raise BookletError("the front matter does not settle on a number of pages")
+    pages = pages_of(front) | pages
+    whole = bound([front, body])
+    count = len(whole.pages)
+    tell("write", 0, count)
+    pdf = written(whole)
+    tell("write", count, count)
+    return pdf, count, pages
 
 
-def html_of(
-    seen: Look,
-    trim: style.Trim,
-    mark: str,
-    pages: dict[str, int],
-    chosen: dict[str, None] | None,
-    cautions: tuple[str, ...],
-) -> str:
-    """The pages as HTML, every character checked against the type."""
-    book = booklet_view(seen, trim, mark, pages, chosen, cautions)
-    html = environment().get_template("booklet.html").render(book=book)
-    fonts.refuse_uncovered([html])
+def _html(template: str, book: BookletView) -> str:
+    """A part's pages as HTML, every character checked against the type."""
+    html = environment().get_template(template).render(book=book)
+    fonts.refuse_uncovered([_without_pictures(html)])
     return html
+
+
+def _without_pictures(html: str) -> str:
+    """The words of a page; drawings are addresses that hold plain letters only."""
+    return re.sub(r'src="data:[^"]*"', "", html)
 
 
 def environment() -> Environment:

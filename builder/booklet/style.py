@@ -16,8 +16,8 @@ class Trim:
 
     width: float
     height: float
-    top: float = 8.0
-    bottom: float = 10.5
+    top: float = 7.0
+    bottom: float = 9.5
     outer: float = 9.5
     inner: float = 10.5
 
@@ -33,7 +33,7 @@ class Trim:
 
 
 A6 = Trim(105, 148)
-POCKET_US = Trim(107.95, 139.7, top=7.0, bottom=9.5)
+POCKET_US = Trim(107.95, 139.7, top=6.0, bottom=8.5)
 
 
 def tab_box(look: Look, zone_id: str, trim: Trim) -> tuple[float, float]:
@@ -58,6 +58,7 @@ def page_rules(look: Look, trim: Trim, foot: str, zone_ids: list[str]) -> str:
         f" @bottom-right {{ {number}; text-align: right; }}"
         f" @bottom-center {{ {name}; text-align: right; width: 60mm; }}"
         " @bottom-left { content: none; } }",
+        f".cover {{ height: {trim.height}mm; }}",
         "@page cover { margin: 0; @bottom-left { content: none } @bottom-center { content: none }"
         " @bottom-right { content: none } }",
         "@page :blank { @bottom-left { content: none } @bottom-center { content: none }"

@@ -12,10 +12,10 @@ def constancy_bar(
     width: float = 22, height: float = 3.2,
 ) -> str:  # fmt: skip
     """How many of a hundred plots hold the plant, as a filled bar."""
-    full = rect(0.1, 0.1, width - 0.2, height - 0.2, f'fill="{palette.well}"')
-    bar = rect(0.1, 0.1, (width - 0.2) * share, height - 0.2, "{more}")
-    rim = bar.replace("{more}", f'fill="none" stroke="{palette.ink}" stroke-width=".25"')
-    body = defs([belt], palette, 0.16) + full + paint(bar, belt, palette) + rim
+    full = rect(0, 0.1, width, height - 0.2, f'fill="{palette.well}"')
+    bar = rect(0.12, 0.12, max(0.1, (width - 0.24) * share), height - 0.24, "{more}")
+    rim = f'stroke="{palette.ink}" stroke-width=".24"'
+    body = defs([belt], palette, 0.16) + full + paint(bar, belt, palette, rim)
     return svg(width, height, title, body, palette, "constancy")
 
 

@@ -115,12 +115,14 @@ class Belt:
         )
 
 
-def paint(shape: str, belt: Belt, palette: Palette) -> str:
+def paint(shape: str, belt: Belt, palette: Palette, rim: str = "") -> str:
     """A shape filled with a belt; {more} in the shape takes the fill.
+
+    rim  stroke of the outline, where the shape has one
 
     On paper plain colour lies under the marks, or seams would show between tiles.
     """
-    pattern = f'fill="url(#{belt.pattern_id})"'
+    pattern = f'fill="url(#{belt.pattern_id})" {rim}'.rstrip()
     if not palette.inline:
         return shape.replace("{more}", pattern)
     return shape.replace("{more}", f'fill="{belt.colour}"') + shape.replace("{more}", pattern)

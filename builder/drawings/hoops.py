@@ -14,6 +14,8 @@ RADIUS = 44.0
 
 GROUND = math.pi * RADIUS**2
 POINTS = 10
+POINTS_SMALL = 6
+SMALL_MM = 8.0
 TRIES = 6000
 GAP = 0.5
 WOBBLE = 0.14
@@ -21,9 +23,10 @@ WOBBLE = 0.14
 
 def hoop(share: float, title: str, palette: Palette, size: float = 4.6) -> str:
     """A hoop of the given size whose dark share is true."""
+    points = POINTS_SMALL if palette.inline and size < SMALL_MM else POINTS
     body = (
         f'<circle cx="50" cy="50" r="{num(RADIUS)}" fill="{palette.sheet}"/>'
-        f'<path fill="{palette.ink}" fill-rule="evenodd" d="{hoop_path(share)}"/>'
+        f'<path fill="{palette.ink}" fill-rule="evenodd" d="{hoop_path(share, points)}"/>'
         f'<circle cx="50" cy="50" r="{num(RADIUS + 2)}" fill="none"'
         f' stroke="{palette.line}" stroke-width="4"/>'
     )
@@ -35,10 +38,11 @@ def hoop(share: float, title: str, palette: Palette, size: float = 4.6) -> str:
 
 
 @cache
-def hoop_path(share: float) -> str:
+def hoop_path(share: float, points: int = POINTS) -> str:
     """Path data of the dark part, in a box of 100, for the even-odd rule.
 
-    share  of the ground covered, 0..1 [-]
+    share   of the ground covered, 0..1 [-]
+    points  control points of each patch; few are enough in small print
 
     Under a half, patches are drawn; over it, the whole ground less its gaps.
     """
@@ -47,21 +51,21 @@ def hoop_path(share: float) -> str:
     if share > 0.5:
         r = num(RADIUS)
         ground = f"M{num(50 - RADIUS)} 50a{r} {r} 0 1 0 {num(2 * RADIUS)} 0a{r} {r} 0 1 0 {num(-2 * RADIUS)} 0z"
-        return ground + _patches(1 - share)
-    return _patches(share)
+        return ground + _patches(1 - share, points)
+    return _patches(share, points)
 
 
-def _patches(share: float) -> str:
+def _patches(share: float, points: int) -> str:
     """Patches that cover a share of the ground, none touching another."""
     if share == 0:
         return ""
     places = _scattered(share)
     wanted = share * GROUND
-    grown = math.sqrt(wanted / sum(_area(_outline(*place)) for place in places))
+    grown = math.sqrt(wanted / sum(_area(_outline(*place, points)) for place in places))
     best, error = "", math.inf
     for step in range(400):
         factor = grown * (1 + ((step + 1) // 2) * (-1) ** step * 2e-6)
-        outlines = [_rounded(_outline(x, y, r * factor, turn)) for x, y, r, turn in places]
+        outlines = [_rounded(_outline(x, y, r * factor, turn, points)) for x, y, r, turn in places]
         off = abs(sum(_area(outline) for outline in outlines) / wanted - 1)
         if off < error:
             best, error = "".join(_written(outline) for outline in outlines), off
@@ -108,11 +112,13 @@ def _place(radii: list[float], shrink: float) -> list[tuple[float, float, float,
     return placed
 
 
-def _outline(x: float, y: float, radius: float, turn: float) -> list[tuple[float, float]]:
+def _outline(
+    x: float, y: float, radius: float, turn: float, count: int
+) -> list[tuple[float, float]]:
     """Control points of a closed, smooth, lumpy patch."""
     points = []
-    for step in range(POINTS):
-        angle = 2 * math.pi * (step + turn) / POINTS
+    for step in range(count):
+        angle = 2 * math.pi * (step + turn) / count
         lump = 1 + WOBBLE * math.sin(3 * angle + 9 * turn) * (0.6 + 0.4 * math.cos(step * 2.4))
         reach = radius * lump
         points.append((x + reach * math.cos(angle), y + reach * math.sin(angle)))

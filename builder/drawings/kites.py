@@ -117,36 +117,17 @@ def amplitude(
 ) -> str:
     """A strip of the belts with a bar over each that holds the plant, as tall as its constancy."""
     columns = Columns(belts, width)
-    foot = height - 2.2
-    letters = min(2.0, columns.step * 0.8)
-    parts = []
+    foot = height - 0.9
+    bars, parts = "", []
     for place, belt in enumerate(belts):
         x = columns.left(place)
-        corner = ' rx=".5"' if belt.lens else ""
         fill = belt.colour if palette.inline else belt.on_screen_colour()
-        parts.append(
-            rect(
-                x + 0.08,
-                foot,
-                columns.step - 0.16,
-                0.7,
-                f'fill="{fill}" stroke="{palette.ink}" stroke-width=".1"{corner}',
-            )
-        )
+        parts.append(rect(x, foot, columns.step, 0.9, f'fill="{fill}"'))
         if shares[place] > 0:
-            tall = max(0.25, foot * shares[place])
-            parts.append(
-                rect(
-                    x + columns.step * 0.18,
-                    foot - tall,
-                    columns.step * 0.64,
-                    tall,
-                    f'fill="{palette.ink}"',
-                )
+            tall = max(0.3, (foot - 0.2) * shares[place])
+            bars += (
+                f"M{num(x + columns.step * 0.2)} {num(foot - 0.15)}v{num(-tall)}"
+                f"h{num(columns.step * 0.6)}v{num(tall)}z"
             )
-            parts.append(
-                text(
-                    columns.middle(place), height, belt.letter, letters, palette.ink, "middle", 600
-                )
-            )
+    parts.append(f'<path d="{bars}" fill="{palette.ink}"/>' if bars else "")
     return svg(width, height, title, "".join(parts), palette, "amplitude")

@@ -139,7 +139,7 @@ def heights(
     marked: str | None = None,
     palette: Palette = PRINT,
     width: float = 80,
-    height: float = 25,
+    height: float = 18.5,
 ) -> str:
     """Every belt as a block at its true heights, stepping up; lenses beside, rounded.
 

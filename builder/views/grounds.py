@@ -8,9 +8,9 @@ from builder.drawings.hoops import hoop
 from builder.formulas.soil_by_feel import FEEL_PATH, feel_water
 from builder.formulas.soil_water import layer_water_mm
 from builder.tables import Question
+from builder.tables.plants import LEVELS
 from builder.tables.sources import stated_sources
 from builder.views.look import Look
-from builder.views.plants import Warn, plant_warns, warn
 
 ORGANIC_PCT = 2.5
 """Organic matter assumed for water held by a hand texture; the source's own middle value."""
@@ -79,7 +79,16 @@ class PlantWarn:
 
     name: str
     latin: str
-    warns: tuple[Warn, ...]
+    text: str
+
+
+@dataclass(frozen=True)
+class WarnGroup:
+    """Cautions of one level: who it can hurt and how badly, then each."""
+
+    head: str
+    plants: tuple[PlantWarn, ...]
+    texts: tuple[str, ...]
 
 
 @dataclass(frozen=True)
@@ -179,28 +188,39 @@ def hoops(look: Look, size: float = 12) -> list[HoopView]:
     ]
 
 
-def people_warns(look: Look) -> list[PlantWarn]:
-    """Plants that can hurt people, deadly ones first."""
-    rows = []
-    for place, plant in enumerate(look.region.plants):
-        own = [each for each in plant_warns(look, plant) if each.people]
-        if own:
-            worst = min(_rank(each) for each in plant.cautions if each.who == "people")
-            name = look.plant_name(plant.id)
-            rows.append((worst, place, PlantWarn(name, plant.scientific, tuple(own))))
-    return [row for _, _, row in sorted(rows, key=lambda each: each[:2])]
-
-
-def _rank(caution: object) -> int:
-    return ("deadly", "harm", "care").index(getattr(caution, "level", "care"))
-
-
-def region_warns(look: Look) -> list[Warn]:
-    """The region's own cautions, worst first."""
+def people_warns(look: Look) -> list[WarnGroup]:
+    """Plants that can hurt people, grouped from deadly down; table order within."""
     words = look.region.words.get(look.phrases.language)
-    texts = words.region_cautions if words is not None else {}
-    ordered = sorted(enumerate(look.region.cautions), key=lambda each: (_rank(each[1]), each[0]))
-    return [warn(look, each, texts.get(each.id or "", "")) for _, each in ordered]
+    own = words.plant_cautions if words is not None else {}
+    groups = []
+    for level in LEVELS:
+        rows = [
+            PlantWarn(
+                look.plant_name(plant.id),
+                plant.scientific,
+                (own.get(plant.id, "") if len(plant.cautions) == 1 else "") or each.text,
+            )
+            for plant in look.region.plants
+            for each in plant.cautions
+            if each.who == "people" and each.level == level
+        ]
+        if rows:
+            head = look.phrases.say(f"cautions.people_{level}")
+            groups.append(WarnGroup(head, tuple(rows), ()))
+    return groups
+
+
+def region_warns(look: Look) -> list[WarnGroup]:
+    """The region's own cautions, grouped from deadly down."""
+    words = look.region.words.get(look.phrases.language)
+    own = words.region_cautions if words is not None else {}
+    groups: dict[str, list[str]] = {}
+    for level in LEVELS:
+        for each in look.region.cautions:
+            if each.level == level:
+                head = look.phrases.say(f"cautions.{each.who}_{level}")
+                groups.setdefault(head, []).append(own.get(each.id or "", "") or each.text)
+    return [WarnGroup(head, (), tuple(texts)) for head, texts in groups.items()]
 
 
 def sources(look: Look) -> list[SourceView]:

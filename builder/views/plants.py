@@ -50,7 +50,6 @@ class PlantView:
     kin: str
     after: str
     warns: tuple[Warn, ...]
-    origin: str
 
 
 @dataclass(frozen=True)
@@ -122,18 +121,27 @@ def plant_view(look: Look, plant: Plant) -> PlantView:
             amplitude(
                 shares, look.in_columns, say("plant.amplitude_title", zones=_home(look, shares)),
                 look.palette,
+                27,
+                3.5,
             )
         ),
         home=_home(look, shares),
         tell=plant.lookalike_tell,
-        kin=", ".join(look.plant_name(each) for each in plant.lookalikes),
-        after=say(
-            "plant.after",
-            fate=look.phrases.named("fates", plant.fate),
-            response=look.phrases.named("responses", plant.response),
+        kin=(
+            say("plant.told", names=", ".join(look.plant_name(each) for each in plant.lookalikes))
+            if plant.lookalikes
+            else ""
+        ),
+        after="; ".join(
+            words
+            for words in (
+                look.phrases.named("fates", plant.fate),
+                look.phrases.named("responses", plant.response),
+                _origin(look, plant),
+            )
+            if words
         ),
         warns=plant_warns(look, plant),
-        origin=_origin(look, plant),
     )  # fmt: skip
 
 

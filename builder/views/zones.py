@@ -17,8 +17,9 @@ from builder.tables.shape import columns
 from builder.views.figures import MINUS
 from builder.views.look import Look
 
-PLANTS_SHOWN = 13
-WEEDS_SHOWN = 14
+PLANTS_SHOWN = 12
+WEEDS_SHOWN = 12
+ALSO_SHOWN = 4
 COMMON_FROM = 0.4
 
 
@@ -88,6 +89,14 @@ class MixView:
     planted: tuple[str, ...]
     none: bool
 
+    @property
+    def pairs(self) -> tuple[tuple[MixRow, ...], ...]:
+        """The rows two abreast, read down the first column and then the second."""
+        half = (len(self.rows) + 1) // 2
+        blank = MixRow("", "", "")
+        second = (*self.rows[half:], blank)[:half]
+        return tuple(zip(self.rows[:half], second, strict=True))
+
 
 @dataclass(frozen=True)
 class ZoneView:
@@ -114,7 +123,8 @@ class ZoneView:
     rain_unit: str
     soil: tuple[str, ...]
     after: tuple[Line, ...]
-    life: tuple[Line, ...]
+    wildlife: tuple[Line, ...]
+    soil_life: tuple[Line, ...]
     weeds: str
     cautions: str
     work: tuple[Line, ...]
@@ -169,11 +179,8 @@ def zone_view(look: Look, zone_id: str) -> ZoneView:
             Line(say("zone.remnants"), zone.remnant_clues),
             Line(say("zone.absence"), zone.what_absence_means),
         ),
-        life=tuple(
-            Line(look.phrases.named(f"life.{kind}", name), text)
-            for kind, group in (("wildlife", notes.wildlife), ("soil", notes.soil_life))
-            for name, text in group.items()
-        ),
+        wildlife=_lines(look, "life.wildlife", notes.wildlife),
+        soil_life=_lines(look, "life.soil", notes.soil_life),
         weeds=_weeds(look, zone_id),
         cautions=notes.cautions,
         work=tuple(
@@ -188,19 +195,28 @@ def zone_view(look: Look, zone_id: str) -> ZoneView:
     )
 
 
+def _lines(look: Look, group: str, texts: Mapping[str, str]) -> tuple[Line, ...]:
+    """Named texts of a table as run-in heads and sentences."""
+    return tuple(Line(look.phrases.named(group, name), text) for name, text in texts.items())
+
+
 def band_line(look: Look, zone: Zone) -> str:
     """The band and how slopes shift it, in one sentence."""
     say, figures = look.phrases.say, look.figures
-    parts = [figures.heights(*zone.band_m) + "."]
-    for name, shift in (
-        ("north", zone.north_shift_m),
-        ("south", zone.south_shift_m),
-        ("exposed", zone.exposed_shift_m),
-    ):
-        if shift:
-            way = "lower" if shift < 0 else "higher"
-            parts.append(say(f"zone.{name}_{way}", metres=figures.height(abs(shift))))
-    return " ".join(parts)
+    shifts = [
+        say(
+            f"zone.{name}_{'lower' if shift < 0 else 'higher'}",
+            metres=figures.height(abs(shift)),
+        )
+        for name, shift in (
+            ("north", zone.north_shift_m),
+            ("south", zone.south_shift_m),
+            ("exposed", zone.exposed_shift_m),
+        )
+        if shift
+    ]
+    band = figures.heights(*zone.band_m)
+    return say("zone.band_shifted", band=band, shifts=", ".join(shifts)) if shifts else band
 
 
 def plant_rows(look: Look, zone_id: str) -> list[PlantRow]:
@@ -243,7 +259,7 @@ def _more(look: Look, zone_id: str, rest: list[PlantRow]) -> str:
         for row in rest
         if found[zone_id, row.plant_id].constancy >= COMMON_FROM and not row.weed
     ]
-    return look.phrases.say("zone.also", list=", ".join(names)) if names else ""
+    return look.phrases.say("zone.also", list=", ".join(names[:ALSO_SHOWN])) if names else ""
 
 
 def _growth(look: Look, zone: Zone) -> tuple[Markup, str]:
@@ -345,7 +361,7 @@ def _year(look: Look, zone: Zone) -> tuple[Markup, str]:
         look.phrases.words("months.initials"),
         line,
         look.palette,
-        height=24,
+        height=20.5,
     )
     return look.show(drawing), line
 
