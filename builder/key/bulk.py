@@ -103,6 +103,7 @@ def _one_by_one(
                 "pair": pair_at[pair[0], pair[1]] if pair else -1,
                 "finds_cb": made["finds_cb"],
                 "zone_share": made["zone_share"],
+                "scores": list(made["scores"].values()),
             }
         )
     return {name: np.array([row[name] for row in rows]) for name in rows[0]}
@@ -152,6 +153,7 @@ def judge_many(
         "pair": told,
         "finds_cb": finds,
         "zone_share": round6(weights[:, 0] / weights.sum(axis=1)),
+        "scores": scores,
     }
 
 

@@ -24,7 +24,7 @@ class AnswerTables:
     """What each answer of each plant says under one context.
 
     points [row, zone] centibans; counts [row] does it tell zones apart; best [row] its best
-    zone's points where found, else 0
+    zone's points where it is a find, else 0
     heard [row] does it enter the verdict; alone [row, zone], mixed [row, pair] logs of its
     chances, 0 where not heard
     plain [row] does it enter fit
@@ -90,7 +90,8 @@ def answer_tables(key: Key, context: Context) -> AnswerTables:
     points = np.concatenate([absent[:, None, :], found], axis=1)
     points = azonal_share(key, context, points)
     counts = points.max(axis=2) - points.min(axis=2) >= 1
-    best = np.where(np.arange(CHOICES) > 0, points.max(axis=2), 0)
+    weed = np.array([plant["weed"] != "none" for plant in key.pack["plants"]])
+    best = np.where((np.arange(CHOICES) > 0) & ~weed[:, None], points.max(axis=2), 0)
     tabled = ~context.sown[:, None] & (newcomer < 0)
     heard = tabled & counts
     alone, mixed = _logs(key, context.v)

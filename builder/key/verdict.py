@@ -28,7 +28,7 @@ def judge(key: Key, weighed: Weighed) -> dict[str, Any]:
     """Scores and verdict from what was weighed. Thin comes first, then the largest score."""
     settings = key.settings
     leader = weighed.order[0]
-    finds = int(sum(one.points.max() for one in weighed.answers if one.found))
+    finds = int(sum(one.points.max() for one in weighed.answers if is_find(key, one)))
     pairs = explanations(key, weighed)
     scores: dict[str, float] = {"zone": 0.0}
     for name in ("edge", "mosaic"):
@@ -53,6 +53,12 @@ def judge(key: Key, weighed: Weighed) -> dict[str, Any]:
         "fit": fit,
         "finds_cb": finds,
     }
+
+
+def is_find(key: Key, answer: Answer) -> bool:
+    """Does an answer count as a find: a plant or group found, weeds apart, which come anywhere."""
+    weed = answer.kind == "plant" and key.pack["plants"][answer.at]["weed"] != "none"
+    return answer.found and not weed
 
 
 def largest(scores: dict[str, float]) -> str:

@@ -8,7 +8,7 @@ export function judge(key, weighed) {
   const { settings } = key;
   const leader = weighed.order[0];
   const finds = weighed.answers
-    .filter((one) => one.found)
+    .filter((one) => isFind(key, one))
     .reduce((sum, one) => sum + Math.max(...one.points), 0);
   const heard = weighed.answers.filter((one) => one.plain && one.counts);
   const pairs = explanations(key, weighed, heard);
@@ -33,6 +33,12 @@ export function judge(key, weighed) {
     fit,
     finds_cb: finds,
   };
+}
+
+/** A plant or group found; weeds apart, which come anywhere. */
+function isFind(key, answer) {
+  const weed = answer.kind === 'plant' && key.pack.plants[answer.at].weed !== 'none';
+  return answer.found && !weed;
 }
 
 const ids = (key, pair) => pair && pair.map((z) => key.pack.zones[z].id);
