@@ -14,10 +14,10 @@ export function AskNamed({ root }) {
   const here = region.value;
   const named = site.value.findings.filter((one) => one.named).sort((a, b) => a.named - b.named);
   const wanted = here.pack.settings.named_first;
-  return html`<div class="told named"><p class="label">${t('named.label')}</p><h2>${t('named.ask')}</h2>
+  const head = html`<div class="named"><p class="label">${t('named.label')}</p><h2>${t('named.ask')}</h2>
       <ol class="lines">${Array.from({ length: wanted }, (_, i) => html`<li><b>${i + 1}</b>${named[i]
         ? html`<span class="got">${nameOf(here, named[i])} <span class="mine">${findingWords(here, named[i])}</span></span>`
         : html`<span>${t(`named.place_${Math.min(i + 1, 3)}`)}</span>`}</li>`)}</ol>
-      <${UndoLine}/></div>
-    <${Find} root=${root} naming=${true} onDone=${() => go(`${root}/next`, true)}/>`;
+      <${UndoLine}/></div>`;
+  return html`<${Find} root=${root} naming=${true} head=${head} onDone=${() => go(`${root}/next`, true)}/>`;
 }

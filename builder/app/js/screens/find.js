@@ -11,8 +11,9 @@ import { findPlants, groupsAmong } from './plant_search.js';
 
 const SHOWN = 24;
 
-/** @param {{root: string, naming: boolean, onDone?: () => void}} props naming: asks for the plants that cover most */
-export function Find({ root, naming, onDone }) {
+/** @param {{root: string, naming: boolean, head?: unknown, onDone?: () => void}} props
+ *  naming: asks for the plants that cover most; head: what stands above the list until a name is typed */
+export function Find({ root, naming, head, onDone }) {
   const here = region.value;
   const [text, setText] = useState('');
   const [form, setForm] = useState(null);
@@ -21,7 +22,7 @@ export function Find({ root, naming, onDone }) {
   const some = groupsAmong(here, text ? hits : []);
   const to = (id) => `${root}/${naming ? 'name' : 'enter'}/${id}`;
   const pick = (next) => { setForm(next === form ? null : next); setLimit(SHOWN); };
-  return html`<div class="found"><ul aria-label=${t('find.results')}>
+  return html`<div class="found">${!text && !form && head}<ul aria-label=${t('find.results')}>
       ${some.map((group) => html`<li key=${group.id}><a class="row some" href=${to(group.id)}><${Form} form=${here.plants[group.members[0]].form}/>
         <span class="what"><b>${group.name}</b><span class="quiet small">${t('find.some')}</span></span><span class="state"><${Icon} name="plus"/></span></a></li>`)}
       ${!text && !form && hits.length > 0 && html`<li class="label head">${t('find.lately')}</li>`}

@@ -61,15 +61,16 @@ function Row({ row, region: here }) {
   };
   return html`<li><a class="site" href=${`#/site/${row.id}/zone`} onClick=${open}>
     <${EdgeMini} region=${here} belief=${call?.answers ? call.belief : null}/>
-    <span class="what"><b>${row.name || t('sites.unnamed')}</b><span>${t('sites.line', { role: t(`role.${row.role}`), verdict: verdictLine(here, call), day: dayName(row.date) })}</span></span>
+    <span class="what"><b>${row.name || t('sites.unnamed')}</b><span>${row.unit_id ? t('sites.line', { role: t(`role.${row.role}`), verdict: verdictLine(here, call), day: dayName(row.date) }) : verdictLine(here, call)}</span></span>
     <${VerdictTab} call=${call?.answers ? call : null} zones=${here.zone}/></a></li>`;
 }
 
 /** One line for a verdict: "Mountain sage, about 9 in 10". */
 export function verdictLine(here, call) {
   if (!call || call.answers === 0) return t('verdict.line_empty');
-  const zone = here.zone.get(call.zone_id);
-  const next = here.zone.get(call.next_zone_id);
+  const [first, second] = call.pair ?? [call.zone_id, call.next_zone_id];
+  const zone = here.zone.get(first);
+  const next = here.zone.get(second);
   return t(`verdict.line_${call.verdict}`, {
     zone: zone?.short ?? '', next: next?.short ?? '', odds: zone ? oddsWords(call.belief[zone.id]) : '',
   });
@@ -78,8 +79,8 @@ export function verdictLine(here, call) {
 function byUnit(rows) {
   const units = new Map();
   for (const row of rows) {
-    const key = row.unit_id ?? 'lone';
-    if (!units.has(key)) units.set(key, { key, name: row.unit_id ? row.unit_name || t('sites.unit_unnamed') : t('sites.lone'), rows: [] });
+    const key = row.unit_id ?? row.date;
+    if (!units.has(key)) units.set(key, { key, name: row.unit_id ? row.unit_name || t('sites.unit_unnamed') : dayName(row.date), rows: [] });
     units.get(key).rows.push(row);
   }
   return [...units.values()];

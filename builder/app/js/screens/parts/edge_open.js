@@ -4,7 +4,7 @@ import { useState } from 'preact/hooks';
 import { sentence, t } from '../words.js';
 import { oddsWords, percentWords } from '../say.js';
 import { Fill } from './patterns.js';
-import { edgeRows } from './edge_rows.js';
+import { edgeRows, lensOf } from './edge_rows.js';
 
 /** @param {{region: object, call: object, rival: string|null, onRival: (id: string) => void, children?: unknown}} props
  *  children: what stands inside the opened belt under its name */
@@ -32,7 +32,7 @@ function Track({ zone, share }) {
 function Opened({ row, call, region, half, children }) {
   const { zone } = row;
   const share = call.belief[zone.id];
-  const lens = call.verdict === 'mosaic' ? region.zone.get(call.pair.find((id) => id !== zone.id)) : null;
+  const lens = call.verdict === 'mosaic' ? region.zone.get(lensOf(region, call)) : null;
   return html`<li class=${`opened ${half ? 'half' : ''} ${row.seam ? 'seamed' : ''}`}>${row.seam && html`<${Seam}/>`}<${Side} zone=${zone}/><${Track} zone=${zone} share=${share}/>
     <div class="said"><h2>${half ? zone.short : zone.name}</h2>
       ${call.verdict === 'edge' && html`<p class="odds"><b>${sentence(oddsWords(share))}</b></p>`}

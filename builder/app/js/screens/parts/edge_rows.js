@@ -15,10 +15,17 @@ export function opened(call) {
   return [];
 }
 
+/** Of a mosaic's two, the one drawn as a lens inside the other: ground off the slope, else the less likely. */
+export function lensOf(region, call) {
+  const off = call.pair.filter((id) => region.zone.get(id).kind === 'azonal');
+  if (off.length === 1) return off[0];
+  return call.belief[call.pair[0]] >= call.belief[call.pair[1]] ? call.pair[1] : call.pair[0];
+}
+
 /** @param {object} region  @param {object} call  @param {boolean} spread show every belt as a row  @returns {EdgeRow[]} high to low */
 export function edgeRows(region, call, spread = false) {
   const open = opened(call);
-  const inlay = call.verdict === 'mosaic' ? open.filter((id) => region.zone.get(id).kind === 'azonal').slice(0, open.length - 1) : [];
+  const inlay = call.verdict === 'mosaic' ? [lensOf(region, call)] : [];
   const wide = open.filter((id) => !inlay.includes(id));
   const shows = (zone) => wide.includes(zone.id) || (!inlay.includes(zone.id) && (spread || call.belief[zone.id] >= READABLE));
   const stack = ordered(region, (zone) => zone.kind === 'zonal' || shows(zone));

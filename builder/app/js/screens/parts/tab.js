@@ -10,15 +10,16 @@ export function Tab({ zone, size = '' }) {
 
 /** A verdict in the shape of a tab. @param {{call: object|null, zones: Map<string, object>}} props */
 export function VerdictTab({ call, zones }) {
-  const zone = call && zones.get(call.zone_id);
-  const other = call && zones.get(call.next_zone_id);
+  const [first, second] = call?.pair ?? [call?.zone_id, call?.next_zone_id];
+  const zone = zones.get(first);
+  const other = zones.get(second);
   if (!zone || call.verdict === 'thin') {
     return html`<span class="tab big thin" aria-hidden="true"><svg viewBox="0 0 44 44">
       ${[8, 15, 22, 29, 36].map((y) => html`<path d=${`M0 ${y}h44`}/>`)}</svg></span>`;
   }
   if (call.verdict === 'misfit') return html`<span class="tab big void" aria-hidden="true"><b>${t('tab.none')}</b></span>`;
   if (call.verdict === 'edge' && other) return html`<${Halves} high=${upper(zone, other)} low=${lower(zone, other)}/>`;
-  if (call.verdict === 'mosaic' && other) return html`<${Patch} zone=${zone} lens=${other}/>`;
+  if (call.verdict === 'mosaic' && other) return zone.kind === 'azonal' ? html`<${Patch} zone=${other} lens=${zone}/>` : html`<${Patch} zone=${zone} lens=${other}/>`;
   return html`<span class="tab big" aria-hidden="true"><${Fill} letter=${zone.letter}/><b>${zone.letter}</b></span>`;
 }
 
