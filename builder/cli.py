@@ -14,6 +14,7 @@ from pathlib import Path
 
 from builder import __version__, steps
 from builder.problems import in_order, render_all
+from builder.tables.start import StartRefused, start_region
 
 Command = Callable[[argparse.Namespace], int]
 STOPPED = 130
@@ -57,6 +58,11 @@ def parser() -> argparse.ArgumentParser:
     )  # fmt: skip
     call.set_defaults(run=run_call)
 
+    start = commands.add_parser("start", help="write a new region with three zones, ready to change")
+    start.add_argument("region", type=Path, help="folder to write, e.g. keydata/NAME")
+    start.add_argument("--name", default="", help="name for people; without it from the folder")
+    start.set_defaults(run=run_start)
+
     desk = commands.add_parser("desk", help="edit, prove and build in the browser, on this computer")
     desk.add_argument("--port", type=int, help="port to listen on; without it the first free one")
     desk.add_argument("--out", type=Path, default=Path("site_out"), help="folder of the built site")
@@ -98,6 +104,16 @@ def run_build(given: argparse.Namespace) -> int:
               f"booklet {note.booklet_pages} pages, {made}")
     seconds = time.monotonic() - started
     print(f"{given.out}: {len(built.site.changed)} files written, {seconds:.1f} s")
+    return 0
+
+
+def run_start(given: argparse.Namespace) -> int:
+    """Writes a new, valid region into a folder that is not there yet."""
+    try:
+        folder = start_region(given.region, given.name)
+    except StartRefused as refusal:
+        raise Told(str(refusal)) from None
+    print(f"{folder} stands. Next: beltbook check {folder}, or edit it with: beltbook desk")
     return 0
 
 

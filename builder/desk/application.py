@@ -10,7 +10,17 @@ from flask import Flask, Response, render_template, request, send_from_directory
 from jinja2 import StrictUndefined
 from werkzeug.exceptions import HTTPException
 
-from builder.desk import accounts, built, editions, guards, overview, served, tables
+from builder.desk import (
+    accounts,
+    built,
+    editions,
+    guards,
+    overview,
+    served,
+    sheets,
+    start,
+    tables,
+)
 from builder.desk.jobs import Jobs
 from builder.desk.phrases import read_phrases
 from builder.desk.shelf import Shelf
@@ -61,7 +71,7 @@ def create_app(settings: Settings) -> Flask:
     app.extensions["patience"] = guards.Patience()
     app.extensions["shelf"] = Shelf(settings.keydata)
     app.extensions["jobs"] = Jobs(settings.home)
-    for family in (accounts, overview, tables, built, editions, served):
+    for family in (accounts, overview, tables, built, editions, sheets, start, served):
         app.register_blueprint(family.pages)
     app.add_url_rule("/face/<path:name>", "face", face)
     app.register_error_handler(HTTPException, refuse)

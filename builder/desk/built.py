@@ -130,7 +130,7 @@ def show(region_id: str) -> str:
         region_id=region_id,
         built=built_view(look),
         job=job_view(jobs().last("build", region_id)),
-        stops=bool(look.errors) or look.region is None,
+        stops=look.stops,
         problems_said=counted(len(look.errors), read_phrases()["overview"]["errors"]),
     )
 
@@ -140,11 +140,11 @@ def build(region_id: str) -> BaseResponse:
     """Starts a build of every region that has nothing to mend, this one first."""
     look = shelf().look(region_id)
     say = read_phrases()["jobs"]
-    if look.errors or look.region is None:
+    if look.stops:
         flash(read_phrases()["build"]["stopped"])
         return redirect(url_for("build.show", region_id=region_id))
     others = [
-        name for name in shelf().ids() if name != region_id and not shelf().look(name).errors
+        name for name in shelf().ids() if name != region_id and not shelf().look(name).stops
     ]
     keydata: Path = current_app.config["KEYDATA"]
     folders = [str(keydata / name) for name in sorted([region_id, *others])]

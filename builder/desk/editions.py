@@ -84,7 +84,7 @@ def show(region_id: str) -> str:
         found=found[:SHOWN],
         edition=look.region.edition if look.region else "",
         today=date.today().isoformat(),
-        stops=look.region is None or bool(look.errors),
+        stops=look.stops,
     )
 
 
@@ -95,7 +95,7 @@ def keep(region_id: str) -> Response:
     say = read_phrases()["editions"]
     name, day = request.form.get("edition", "").strip(), request.form.get("date", "").strip()
     back = redirect(url_for("editions.show", region_id=region_id))
-    if look.region is None or look.errors:
+    if look.stops:
         flash(say["stopped"])
     elif not EDITION.fullmatch(name) or not _is_day(day):
         flash(say["name_form"])

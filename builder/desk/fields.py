@@ -151,7 +151,8 @@ def _children(kind: Kind, node: Node | None, path: Path) -> Iterator[Entry | Gro
             row = node if isinstance(node, Row) else None
             for name, below, item in columns(kind.record):
                 value = row.get(name) if row is not None else None
-                yield from _child(name, below, value, (*path, name), is_required(item))
+                of = kind.record.__name__
+                yield from _child(name, below, value, (*path, name), is_required(item), of)
             if row is not None and "source" in row:
                 yield from _child("source", Provenance(), row.get("source"), (*path, "source"))
         case Many() | Keyed():
@@ -177,7 +178,12 @@ def _steps(node: Node | None) -> Iterator[tuple[str | int, Node]]:
 
 
 def _child(
-    name: str, kind: Kind, node: Node | None, path: Path, required: bool = False
+    name: str,
+    kind: Kind,
+    node: Node | None,
+    path: Path,
+    required: bool = False,
+    record: str = "",
 ) -> Iterator[Entry | Group]:
     if isinstance(kind, Part) or (isinstance(kind, Many | Keyed) and not _flat(kind, node)):
         if node is not None or isinstance(kind, Many | Keyed):
@@ -186,7 +192,15 @@ def _child(
     if isinstance(kind, Series | Presence) and isinstance(node, Items):
         names = kind.names if isinstance(kind, Series) else ("constancy", "cover")
         entries = [
-            _entry(part, _below(kind, place), below, (*path, place), True, f"{label_for(name)}, {part}")
+            _entry(
+                part,
+                _below(kind, place),
+                below,
+                (*path, place),
+                True,
+                label=f"{label_for(name, record)}, {part}",
+                help=help_for(name, _below(kind, place), record),
+            )
             for place, (part, below) in enumerate(zip(names, node, strict=False))
         ]
         yield from entries
@@ -196,9 +210,10 @@ def _child(
             _entry(key, Number() if isinstance(kind, Figures) else Text(), below, (*path, key), True)
             for key, below in node.items()
         ]
-        yield Group(path, label_for(name), entries)
+        yield Group(path, label_for(name, record), entries)
         return
-    yield _entry(name, kind, node, path, required)
+    label, help = label_for(name, record), help_for(name, kind, record)
+    yield _entry(name, kind, node, path, required, label, help)
 
 
 def _flat(kind: Many | Keyed, node: Node | None) -> bool:
@@ -220,7 +235,13 @@ def _title(name: str, node: Node | None) -> str:
 
 
 def _entry(
-    name: str, kind: Kind, node: Node | None, path: Path, required: bool, label: str = ""
+    name: str,
+    kind: Kind,
+    node: Node | None,
+    path: Path,
+    required: bool,
+    label: str = "",
+    help: str = "",
 ) -> Entry:
     choices: tuple[str, ...] = ()
     match kind:
@@ -233,7 +254,7 @@ def _entry(
         path=path,
         name=name,
         label=label or label_for(name),
-        help=help_for(name, kind),
+        help=help or help_for(name, kind),
         text=text,
         choices=choices,
         known=kind.table if isinstance(kind, Ref) else "",

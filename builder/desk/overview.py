@@ -144,8 +144,8 @@ def stages(look: Look, built: BuiltView) -> list[Stage]:
     state = "done" if read else "stop"
     found = [Stage(names["rows"], rows, state), Stage(names["tables"], tables, state)]
     wrong = counted(len(look.errors), say["to_mend"]) if look.errors else say["none"]
-    found.append(Stage(names["problems"], wrong, "stop" if look.errors or not read else "done"))
-    state = "waits" if look.errors or not read or not built.current else "done"
+    found.append(Stage(names["problems"], wrong, "stop" if look.stops else "done"))
+    state = "waits" if look.stops or not built.current else "done"
     found.append(Stage(names["pack"], built.pack if state == "done" else say["waits"], state))
     found.append(Stage(names["pages"], built.pages if state == "done" else say["waits"], state))
     return found

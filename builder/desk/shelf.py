@@ -21,13 +21,18 @@ TABLE_ENDINGS = {".yaml", ".csv"}
 
 @dataclass(frozen=True)
 class Look:
-    """One region's tables at one moment. region is None when too little could be read."""
+    """One region's tables at one moment.
+
+    region  what could be read, with empty tables for the rest; None when not even the zones were
+    stops   whether a build must not go on
+    """
 
     id: str
     folder: Path
     region: Region | None
     problems: list[Problem]
     fingerprint: str
+    stops: bool
     rows: int = 0
     tables: int = 0
 
@@ -78,15 +83,22 @@ class Shelf:
                 kept = Look(
                     id=region_id,
                     folder=folder,
-                    region=loaded.region,
+                    region=loaded.region or shown_region(loaded),
                     problems=checked.problems,
                     fingerprint=print_now,
+                    stops=checked.stops,
                     rows=row_count(loaded),
                     tables=sum(root is not None for root in loaded.roots.values())
                     + (loaded.climate_sheet is not None),
                 )
                 self.looks[region_id] = kept
             return kept
+
+
+def shown_region(loaded: Loaded) -> Region | None:
+    """As much of a spoilt region as pages can show."""
+    partial = loaded.partial
+    return partial if partial is not None and partial.zones and partial.head is not None else None
 
 
 def row_count(loaded: Loaded) -> int:

@@ -220,7 +220,8 @@ def _list(look: Look, table: str, root: Row, part: str, kind: Many | Keyed) -> L
             cells = [shown(node) or ", ".join(node.nodes) if isinstance(node, Row) else shown(node)]
         rows.append((_row_name(key, node), href, [_short(cell) for cell in cells]))
     say = read_phrases()["tables"]
-    heads = [label_for(name) for name in fields] or [""]
+    of = below.record.__name__ if isinstance(below, Part) else ""
+    heads = [label_for(name, of) for name in fields] or [""]
     names = [key if not key.isdigit() else _row_name(key, node) for key, node in rows_of(root, part)]
     return ListView(label_for(part), part, counted(len(rows), say["rows_n"]), heads, rows, names)
 

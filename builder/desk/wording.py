@@ -17,59 +17,43 @@ from builder.tables.shape import (
     Series,
     Text,
 )
+from builder.words import Word, word
 
-# Endings that are units, longest first, and how they are written.
-UNITS = {
-    "c_per_km": "°C per km",
-    "pct_per_km": "% per km",
-    "per_c": "per °C",
-    "vol_pct": "% of volume",
-    "live_seeds_m2": "live seeds/m²",
-    "kg_ha": "kg/ha",
-    "t_ha": "t/ha",
-    "ds_m": "dS/m",
-    "per_g": "per g",
-    "m2": "m²",
-    "mm": "mm",
-    "cm": "cm",
-    "deg": "°",
-    "pct": "%",
-    "m": "m",
-    "c": "°C",
-    "years": "years",
-    "minutes": "minutes",
-    "days": "days",
-    "months": "months",
-}
+# How units are written where letters allow it.
+PRETTY = {"m2": "m²", "degrees C": "°C", "degrees": "°"}
 
 
-def unit_of(name: str) -> str:
-    """The unit a name ends in, as people write it; empty without one."""
-    for ending, unit in UNITS.items():
-        if name == ending or name.endswith(f"_{ending}"):
-            return unit
-    return ""
+def known_word(name: str, record: str = "") -> Word | None:
+    """The glossary's words of a field; None for ids of rows, which are names themselves."""
+    try:
+        return word(name, record)
+    except KeyError:
+        return None
 
 
-def label_for(name: str) -> str:
+def unit_of(name: str, record: str = "") -> str:
+    """The unit of a field, as people write it; empty without one."""
+    found = known_word(name, record)
+    unit = found.unit if found is not None else ""
+    for plain, pretty in PRETTY.items():
+        unit = unit.replace(plain, pretty)
+    return unit
+
+
+def label_for(name: str, record: str = "") -> str:
     """A field's name for people, without its unit."""
-    known = read_phrases()["fields"].get(name)
-    if known:
-        return str(known)
-    for ending in UNITS:
-        if name.endswith(f"_{ending}"):
-            name = name.removesuffix(f"_{ending}")
-            break
-    words = name.replace("_", " ").strip()
+    found = known_word(name, record)
+    words = found.label if found is not None else name.replace("_", " ").strip()
     return words[:1].upper() + words[1:]
 
 
-def help_for(name: str, kind: Kind) -> str:
-    """One line below the label: the unit and what may stand here."""
-    say = read_phrases()["kinds"]
-    unit = unit_of(name)
-    said = _said(kind, say)
-    return ", ".join(part for part in (unit, said) if part)
+def help_for(name: str, kind: Kind, record: str = "") -> str:
+    """Below the label: the unit, what may stand here, and the glossary's sentence."""
+    found = known_word(name, record)
+    said = _said(kind, read_phrases()["kinds"])
+    first = ", ".join(part for part in (unit_of(name, record), said) if part)
+    sentence = found.sentence if found is not None else ""
+    return ". ".join(part for part in (first, sentence) if part)
 
 
 def _said(kind: Kind, say: dict[str, str]) -> str:

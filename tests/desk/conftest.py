@@ -1,19 +1,15 @@
-"""A desk on a copy of the demo region, in a folder of its own."""
-
-import shutil
-from pathlib import Path
+"""A desk on the three-zone region, in a folder of its own."""
 
 import pytest
+from helpers import three_zone_files, write_region
 
 from builder.desk.application import Settings, create_app
-
-KEYDATA = Path(__file__).parents[2] / "keydata"
 
 
 @pytest.fixture
 def app(tmp_path):
-    """A desk whose keydata holds the demo region and whose output is empty."""
-    shutil.copytree(KEYDATA / "sorrel_plateau", tmp_path / "keydata" / "sorrel_plateau")
+    """A desk whose keydata holds the three-zone region and whose output is empty."""
+    write_region(tmp_path / "keydata" / "willow_breaks", three_zone_files())
     (tmp_path / "site_out").mkdir()
     made = create_app(Settings(tmp_path, tmp_path / "site_out"))
     made.testing = True

@@ -3,8 +3,8 @@
 import re
 from urllib.parse import urlencode
 
-REGION = "/r/sorrel_plateau"
-OCCURRENCE = "keydata/sorrel_plateau/occurrence.yaml"
+REGION = "/r/willow_breaks"
+OCCURRENCE = "keydata/willow_breaks/occurrence.yaml"
 
 
 def token(client, path="/"):

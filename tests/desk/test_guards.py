@@ -9,7 +9,7 @@ from builder.desk.application import Settings, create_app
 from builder.desk.guards import LIMITS, Patience
 from tests.desk.helpers import token
 
-WRITES = ["/r/sorrel_plateau/editions", "/jobs/1/stop", "/r/sorrel_plateau/undo", "/r/sorrel_plateau/save", "/r/sorrel_plateau/build"]
+WRITES = ["/r/willow_breaks/editions", "/jobs/1/stop", "/r/willow_breaks/undo", "/r/willow_breaks/save", "/r/willow_breaks/build"]
 
 
 @pytest.mark.parametrize("host", ["evil.example", "127.0.0.1.evil.example", "0.0.0.0", "[::1]", ""])
@@ -60,13 +60,13 @@ def test_a_token_of_another_session_is_refused(app, client):
 
 def test_too_much_at_once_is_refused(client):
     big = {"token": token(client), "text": "x" * LIMITS["MAX_CONTENT_LENGTH"]}
-    assert client.post("/r/sorrel_plateau/save", data=big).status_code == 413
+    assert client.post("/r/willow_breaks/save", data=big).status_code == 413
     headers = {"X-Desk-Token": token(client)}
     huge = b"x" * (LIMITS["MAX_CONTENT_LENGTH"] + 1)
-    assert client.post("/r/sorrel_plateau/save", data=huge, headers=headers).status_code == 413
+    assert client.post("/r/willow_breaks/save", data=huge, headers=headers).status_code == 413
 
 
-@pytest.mark.parametrize("path", ["/", "/r/sorrel_plateau/", "/r/sorrel_plateau/tables", "/r/sorrel_plateau/editions", "/no-such-page"])
+@pytest.mark.parametrize("path", ["/", "/r/willow_breaks/", "/r/willow_breaks/tables", "/r/willow_breaks/editions", "/no-such-page"])
 def test_every_page_carries_the_policy(client, path):
     answer = client.get(path, follow_redirects=True)
     policy = answer.headers["Content-Security-Policy"]
@@ -77,7 +77,7 @@ def test_every_page_carries_the_policy(client, path):
     assert answer.headers["Cache-Control"] == "no-store"
 
 
-@pytest.mark.parametrize("path", ["/", "/r/sorrel_plateau/", "/r/sorrel_plateau/tables", "/r/sorrel_plateau/editions"])
+@pytest.mark.parametrize("path", ["/", "/r/willow_breaks/", "/r/willow_breaks/tables", "/r/willow_breaks/editions"])
 def test_no_page_needs_what_the_policy_forbids(client, path):
     page = client.get(path, follow_redirects=True).get_data(as_text=True)
     assert "<main" in page
@@ -87,7 +87,7 @@ def test_no_page_needs_what_the_policy_forbids(client, path):
     assert not re.search(r"(?:src|href)\s*=\s*[\"']?(?:https?:)?//", page)
 
 
-@pytest.mark.parametrize("name", ["../sorrel_plateau", "..", "%2e%2e", "Sorrel_Plateau", "sorrel_plateau%00", "no_such", "sorrel_plateau%2f.."])
+@pytest.mark.parametrize("name", ["../willow_breaks", "..", "%2e%2e", "Willow_Breaks", "willow_breaks%00", "no_such", "willow_breaks%2f.."])
 def test_a_region_is_a_folder_of_keydata_and_nothing_else(client, name):
     assert client.get(f"/r/{name}/tables/zones").status_code == 404
 
@@ -108,7 +108,7 @@ def test_an_open_desk_asks_for_a_login(tmp_path):
     assert client.get("/").headers["Location"].endswith("/login")
     assert client.get("/field/").status_code == 302
     form = {"token": token(client, "/login")}
-    assert client.post("/r/sorrel_plateau/editions", data=form).status_code == 401
+    assert client.post("/r/willow_breaks/editions", data=form).status_code == 401
     assert log_in(client, "ruth", "a wrong password").status_code == 403
     assert log_in(client, "nobody", "nobody has this account").status_code == 403
     assert log_in(client, "ruth", "a long password").status_code == 302

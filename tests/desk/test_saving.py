@@ -10,7 +10,7 @@ import pytest
 from builder.desk.saving import Saver, write_whole
 from tests.desk.helpers import OCCURRENCE, REGION, save, token
 
-CELL = "occurrence/juniperus_osteosperma/pj"
+CELL = "occurrence/blue_grama/prairie"
 
 
 def lines_changed(before, after):
@@ -20,19 +20,19 @@ def lines_changed(before, after):
 def test_only_the_value_changes(client, tmp_path):
     path = tmp_path / OCCURRENCE
     before = path.read_text(encoding="utf-8")
-    answer = save(client, "occurrence", (CELL, "92 12", "64 6"))
+    answer = save(client, "occurrence", (CELL, "90 18", "64 6"))
     assert answer.status_code == 200
     assert answer.json["saved"] == 1
     ((old, new),) = lines_changed(before, path.read_text(encoding="utf-8"))
-    assert new == old.replace("pj: [92, 12]", "pj: [64, 6]")
+    assert new == old.replace("prairie: [90, 18]", "prairie: [64, 6]")
 
 
 def test_a_cell_can_be_filled_and_emptied(client, tmp_path):
     path = tmp_path / OCCURRENCE
     before = path.read_text(encoding="utf-8")
-    key = "occurrence/juniperus_osteosperma/alpine"
+    key = "occurrence/blue_grama/bottom"
     assert save(client, "occurrence", (key, "", "3 0.5")).json["saved"] == 1
-    assert "alpine: [3, 0.5]}" in path.read_text(encoding="utf-8")
+    assert "bottom: [3, 0.5]}" in path.read_text(encoding="utf-8")
     assert save(client, "occurrence", (key, "3 0.5", "")).json["saved"] == 1
     assert path.read_text(encoding="utf-8") == before
 
@@ -40,7 +40,7 @@ def test_a_cell_can_be_filled_and_emptied(client, tmp_path):
 def test_undo_goes_back_step_by_step(client, tmp_path):
     path = tmp_path / OCCURRENCE
     before = path.read_text(encoding="utf-8")
-    save(client, "occurrence", (CELL, "92 12", "64 6"))
+    save(client, "occurrence", (CELL, "90 18", "64 6"))
     between = path.read_text(encoding="utf-8")
     save(client, "occurrence", (CELL, "64 6", "50 5"))
     for expected in (between, before, before):
@@ -50,7 +50,7 @@ def test_undo_goes_back_step_by_step(client, tmp_path):
 
 def test_undo_does_not_take_back_what_somebody_else_wrote(client, tmp_path):
     path = tmp_path / OCCURRENCE
-    save(client, "occurrence", (CELL, "92 12", "64 6"))
+    save(client, "occurrence", (CELL, "90 18", "64 6"))
     by_hand = path.read_text(encoding="utf-8") + "# looked at in June\n"
     path.write_text(by_hand, encoding="utf-8")
     client.post(f"{REGION}/undo", data={"token": token(client)})
@@ -58,35 +58,35 @@ def test_undo_does_not_take_back_what_somebody_else_wrote(client, tmp_path):
 
 
 def test_the_second_person_is_told_and_nothing_is_overwritten(client, tmp_path):
-    save(client, "occurrence", (CELL, "92 12", "64 6"))
-    second = save(client, "occurrence", (CELL, "92 12", "30 2"))
+    save(client, "occurrence", (CELL, "90 18", "64 6"))
+    second = save(client, "occurrence", (CELL, "90 18", "30 2"))
     assert second.status_code == 409
     (refused,) = second.json["refused"]
     assert refused["other"]
     assert "64 6" in refused["reason"]
-    assert "pj: [64, 6]" in (tmp_path / OCCURRENCE).read_text(encoding="utf-8")
+    assert "prairie: [64, 6]" in (tmp_path / OCCURRENCE).read_text(encoding="utf-8")
 
 
 def test_two_people_in_two_cells_do_not_hinder_each_other(client, tmp_path):
-    save(client, "occurrence", (CELL, "92 12", "64 6"))
-    other = save(client, "occurrence", ("occurrence/juniperus_osteosperma/mtnbrush", "35 3", "36 3"))
+    save(client, "occurrence", (CELL, "90 18", "64 6"))
+    other = save(client, "occurrence", ("occurrence/blue_grama/breaks", "35 4", "36 3"))
     assert other.status_code == 200
-    assert "pj: [64, 6], mtnbrush: [36, 3]" in (tmp_path / OCCURRENCE).read_text(encoding="utf-8")
+    assert "prairie: [64, 6], breaks: [36, 3]" in (tmp_path / OCCURRENCE).read_text(encoding="utf-8")
 
 
 @pytest.mark.parametrize(
     ("table", "key", "was", "text"),
     [
-        ("occurrence", CELL, "92 12", "64"),
-        ("occurrence", CELL, "92 12", "140 6"),
-        ("occurrence", CELL, "92 12", "a b c"),
-        ("zones", "zones/0/centre_m", "1550", "high"),
+        ("occurrence", CELL, "90 18", "64"),
+        ("occurrence", CELL, "90 18", "140 6"),
+        ("occurrence", CELL, "90 18", "a b c"),
+        ("zones", "zones/0/centre_m", "1075", "high"),
         ("zones", "zones/0/kind", "zonal", "tidal"),
         ("zones", "zones/0/no_such_field", "", "1"),
         ("zones", "zones/99/name", "", "1"),
         ("zones", "../../../etc/passwd", "", "1"),
         ("zones", "", "", "1"),
-        ("climate", "0/tmax_c", "5.5", "warm"),
+        ("climate", "0/tmax_c", "0", "warm"),
         ("climate", "0/no_such_column", "", "1"),
         ("climate", "9999/tmax_c", "", "1"),
     ],
@@ -104,33 +104,33 @@ def test_what_is_no_value_is_refused_and_the_file_stays(client, tmp_path, table,
 
 def test_trying_says_what_is_wrong_and_saves_nothing(client, tmp_path):
     before = (tmp_path / OCCURRENCE).read_bytes()
-    answer = save(client, "occurrence", (CELL, "92 12", "140 6"), **{"try": "1"})
+    answer = save(client, "occurrence", (CELL, "90 18", "140 6"), **{"try": "1"})
     assert "140" in answer.json["refused"][0]["reason"]
-    assert save(client, "occurrence", (CELL, "92 12", "64 6"), **{"try": "1"}).json == {"refused": []}
+    assert save(client, "occurrence", (CELL, "90 18", "64 6"), **{"try": "1"}).json == {"refused": []}
     assert (tmp_path / OCCURRENCE).read_bytes() == before
 
 
 def test_a_text_that_yaml_would_turn_is_written_so_that_it_stays(client, tmp_path):
-    path = tmp_path / "keydata/sorrel_plateau/zones.yaml"
+    path = tmp_path / "keydata/willow_breaks/zones.yaml"
     for text in ("no", "1:30", "2026-05-01", "# not a note", "a: b", "'", '"', "[x", "{", "ü – é"):
-        was = "Saltbush flat" if text == "no" else last
+        was = "Mixed prairie" if text == "no" else last
         assert save(client, "zones", ("zones/0/name", was, text)).json["saved"] == 1, text
         last = text
     page = client.get(f"{REGION}/tables/zones/zones/0").get_data(as_text=True)
     assert 'value="ü – é"' in page
-    assert path.read_text(encoding="utf-8").count("\n  - id: ") == 16
+    assert path.read_text(encoding="utf-8").count("\n  - id: ") == 3
 
 
 def test_line_ends_of_another_system_stay(client, tmp_path):
     path = tmp_path / OCCURRENCE
     path.write_bytes(path.read_bytes().replace(b"\n", b"\r\n"))
-    assert save(client, "occurrence", (CELL, "92 12", "64 6")).json["saved"] == 1
+    assert save(client, "occurrence", (CELL, "90 18", "64 6")).json["saved"] == 1
     content = path.read_bytes()
     assert content.count(b"\r\n") == content.count(b"\n")
 
 
 def test_climate_is_edited_cell_by_cell(client, tmp_path):
-    path = tmp_path / "keydata/sorrel_plateau/climate.csv"
+    path = tmp_path / "keydata/willow_breaks/climate.csv"
     before = path.read_text(encoding="utf-8")
     page = client.get(f"{REGION}/tables/climate").get_data(as_text=True)
     assert 'data-key="0/tmax_c"' in page
@@ -140,26 +140,26 @@ def test_climate_is_edited_cell_by_cell(client, tmp_path):
 
 
 def test_a_row_is_added_as_a_copy_and_taken_out_again(client, tmp_path):
-    path = tmp_path / "keydata/sorrel_plateau/plants.yaml"
+    path = tmp_path / "keydata/willow_breaks/plants.yaml"
     before = path.read_text(encoding="utf-8")
-    form = {"token": token(client), "table": "plants", "part": "plants", "like": "pinus_edulis"}
+    form = {"token": token(client), "table": "plants", "part": "plants", "like": "needle_grass"}
     client.post(f"{REGION}/add", data=form | {"new": "Not An Id"})
-    client.post(f"{REGION}/add", data=form | {"new": "pinus_ponderosa"})
+    client.post(f"{REGION}/add", data=form | {"new": "blue_grama"})
     assert path.read_text(encoding="utf-8") == before
-    there = client.post(f"{REGION}/add", data=form | {"new": "pinus_monophylla"}).headers["Location"]
-    assert path.read_text(encoding="utf-8").count("id: pinus_monophylla\n") == 1
+    there = client.post(f"{REGION}/add", data=form | {"new": "porcupine_grass"}).headers["Location"]
+    assert path.read_text(encoding="utf-8").count("id: porcupine_grass,") == 1
     row = there.rpartition("/")[2]
-    form |= {"row": row, "name": "pinus_monophylla"}
+    form |= {"row": row, "name": "porcupine_grass"}
     client.post(f"{REGION}/remove", data=form)
-    assert "pinus_monophylla" in path.read_text(encoding="utf-8")
-    client.post(f"{REGION}/remove", data=form | {"name": "pinus_edulis", "sure": "1"})
-    assert "pinus_monophylla" in path.read_text(encoding="utf-8")
+    assert "porcupine_grass" in path.read_text(encoding="utf-8")
+    client.post(f"{REGION}/remove", data=form | {"name": "needle_grass", "sure": "1"})
+    assert "porcupine_grass" in path.read_text(encoding="utf-8")
     client.post(f"{REGION}/remove", data=form | {"sure": "1"})
     assert path.read_text(encoding="utf-8") == before
 
 
 def test_a_problem_that_only_other_tables_show_is_told_after_the_save(client):
-    answer = save(client, "plants", ("plants/0/lookalikes", "juniperus_scopulorum", "no_such_plant"))
+    answer = save(client, "plants", ("plants/0/lookalikes", "little_bluestem", "no_such_plant"))
     assert answer.json["saved"] == 1
     assert any("no_such_plant" in problem["wrong"] for problem in answer.json["problems"])
     page = client.get(f"{REGION}/").get_data(as_text=True)
