@@ -24,7 +24,8 @@ whole). Its hash is the first 16 hex digits of SHA-256.
     disturbances id, notes, dug, disturbs, states, effect
     production, climate, soils, seed, reclaim (windows and standards), success_rule, lapse,
     seeding_methods: the tables' own figures by zone, names as in the tables
-    occurrence, season_rule, tag_stale_months, topsoil_limits: see builder.pack.sheets
+    occurrence, season_rule, ground_water_cm, peat_classes, tag_stale_months, topsoil_limits:
+                 see builder.pack.sheets
     proof        what known or simulated plots say; tested_on plots or simulated
     probes       [site, answer]: sites with the builder's own answers (builder.key.probes)
 

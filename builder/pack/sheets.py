@@ -1,4 +1,4 @@
-"""What the field sheets stand on: occurrence for the Book, the season's rule, limits of tags and piles."""
+"""What the field sheets stand on: occurrence, the season, ground water, limits of tags and piles."""
 
 from __future__ import annotations
 
@@ -17,13 +17,37 @@ TOPSOIL_LIMITS = {"ec_ds_m": 4, "stones_vol_pct": 15, "stored_months": 12, "pile
 
 def sheets(region: Region) -> dict[str, Any]:
     """occurrence: by plant [[zone, constancy per cent, cover per cent], ...]; season_rule;
-    tag_stale_months; topsoil_limits."""
+    ground_water_cm by zone; peat_classes; tag_stale_months; topsoil_limits."""
     return {
         "occurrence": occurrence(region),
-        "season_rule": asdict(SeasonRule()),
+        "season_rule": season_rule(region),
+        "ground_water_cm": {zone.id: ground_water_cm(region, zone.id) for zone in region.zones},
+        "peat_classes": [
+            {
+                "von_post": list(each.von_post),
+                "field_capacity": each.field_capacity,
+                "wilting_point": each.wilting_point,
+            }
+            for each in region.files["soils"].peat_classes
+        ],
         "tag_stale_months": TAG_STALE_MONTHS,
         "topsoil_limits": TOPSOIL_LIMITS,
     }
+
+
+def season_rule(region: Region) -> dict[str, Any]:
+    """The season's thresholds, with the region's own depth of near ground water."""
+    rules = region.files["soils"].water_rules
+    rule = SeasonRule() if rules is None else SeasonRule(near_water_cm=rules.near_water_cm)
+    return asdict(rule)
+
+
+def ground_water_cm(region: Region, zone_id: str) -> float | None:
+    """Usual depth to ground water; 0 where the zone's roots always reach it. [cm]"""
+    table = region.soils[zone_id].water_table_cm
+    if table is not None:
+        return table[1]
+    return 0 if region.zone(zone_id).ground_water_in_reach else None
 
 
 def occurrence(region: Region) -> list[list[list[float]]]:

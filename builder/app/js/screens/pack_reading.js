@@ -40,7 +40,7 @@ export function yearOf(here, zone, height_m = null) {
     ? [normals.tmax_c, normals.tmin_c, normals.precip_mm]
     : carried({ ...normals, from_m: normals.elevation_m, to_m: height_m, ...lapse });
   const capacity_mm = waterOf(here, soil).reduce((sum, layer) => sum + layer.mm, 0);
-  return { ...siteYear({ latitude_deg: here.pack.region.latitude_deg, tmax_c, tmin_c, precip_mm, capacity_mm, water_table_cm: soil.water_table_cm ?? null, rule }), capacity_mm };
+  return { ...siteYear({ latitude_deg: here.pack.region.latitude_deg, tmax_c, tmin_c, precip_mm, capacity_mm, water_table_cm: here.pack.ground_water_cm?.[zone.id] ?? null, rule }), capacity_mm };
 }
 
 /** What grows in a zone: plants with constancy and cover in percent, the most constant first. */
