@@ -18,8 +18,6 @@ from builder.rows import (
     block_text,
     descend,
     flow_text,
-    is_turned,
-    parse_csv,
     parse_yaml,
     plain,
     scalar_text,
@@ -77,7 +75,7 @@ def add_value(text: str, path: Path, value: Any) -> str:
         return _checked(text[:close].rstrip() + new + text[close:], path, value)
     first = next(iter(row.keys.values()))
     pad = " " * (first.at.column - 1)
-    at = _line_end(text, end_of(row, text))
+    at = line_end(text, end_of(row, text))
     lines = [pad + line if line else line for line in block_text({name: value})]
     return _checked(text[:at] + "\n" + "\n".join(lines) + text[at:], path, value)
 
@@ -160,61 +158,16 @@ def add_row(text: str, path: Path, row: Any) -> str:
         return new
     column = text.rfind("\n", 0, items.span[0]) + 1
     pad = " " * (items.span[0] - column)
-    at = _line_end(text, end_of(items, text))
+    at = line_end(text, end_of(items, text))
     gap = "\n\n" if _rows_stand_apart(text, items) else "\n"
-    lines = [pad + line if line else line for line in block_text([row])]
+    lines = block_text([row])
+    if isinstance(row, dict) and row and not _is_flow(items.nodes[-1]):
+        inner = block_text(row, 2)
+        lines = ["- " + inner[0].lstrip(), *inner[1:]]
+    lines = [pad + line if line else line for line in lines]
     new = text[:at] + gap + "\n".join(lines) + text[at:]
     _parsed(new)
     return new
-
-
-def replace_cell(text: str, row: int, column: str, value: Any) -> str:
-    """The CSV text with one cell replaced; `row` counts the rows below the header from 0."""
-    sheet, problems = parse_csv(text, "table")
-    if sheet is None or errors(problems):
-        raise EditRefused("The table cannot be read; mend it by hand first.")
-    if not 0 <= row < len(sheet.rows) or column not in sheet.columns:
-        raise EditRefused("There is no such cell.")
-    cell = sheet.rows[row].nodes[column]
-    new = _cell_text(value, sheet.separator)
-    changed = text[: cell.span[0]] + new + text[cell.span[1] :]
-    again, _ = parse_csv(changed, "table")
-    if again is None or plain(again.rows[row].nodes[column]) != value:
-        raise EditRefused("The value cannot be written here so that it reads back the same.")
-    return changed
-
-
-def add_cells(text: str, cells: dict[str, Any]) -> str:
-    """The CSV text with a row added at the end; columns that are not named stay empty."""
-    sheet, problems = parse_csv(text, "table")
-    if sheet is None or errors(problems):
-        raise EditRefused("The table cannot be read; mend it by hand first.")
-    row = sheet.separator.join(
-        _cell_text(cells.get(name), sheet.separator) for name in sheet.columns
-    )
-    return text.rstrip("\n") + "\n" + row + "\n"
-
-
-def remove_cells(text: str, row: int) -> str:
-    """The CSV text without a row."""
-    sheet, problems = parse_csv(text, "table")
-    if sheet is None or errors(problems) or not 0 <= row < len(sheet.rows):
-        raise EditRefused("There is no such row.")
-    cells = list(sheet.rows[row].nodes.values())
-    start, end = cells[0].span[0], _line_end(text, cells[-1].span[1])
-    return text[:start] + text[end + 1 :]
-
-
-def _cell_text(value: Any, separator: str) -> str:
-    if value is None:
-        return ""
-    text = scalar_text(value) if not isinstance(value, str) else value
-    if isinstance(value, float | int) and separator == ";":
-        return text.replace(".", ",")
-    looks_like_number = isinstance(value, str) and is_turned(text)
-    if looks_like_number or any(letter in text for letter in (separator, '"', "\n")):
-        return '"' + text.replace('"', '""') + '"'
-    return text
 
 
 def end_of(node: Node, text: str) -> int:
@@ -262,6 +215,10 @@ def _in_flow(node: Node) -> bool:
     return False
 
 
+def _is_flow(node: Node) -> bool:
+    return isinstance(node, Row | Items) and node.flow
+
+
 def _in_list(node: Node) -> int:
     return int(isinstance(node.parent, Items) and not node.parent.flow)
 
@@ -274,7 +231,7 @@ def _indent_of(text: str, line_start: int) -> int:
         rest = here + 2
         while text[rest : rest + 1] == " ":
             rest += 1
-        return rest - line_start if ":" in text[rest : _line_end(text, rest)] else here - line_start
+        return rest - line_start if ":" in text[rest : line_end(text, rest)] else here - line_start
     return here - line_start
 
 
@@ -321,13 +278,14 @@ def _whole_lines(text: str, start: int, end: int, gap: bool = True) -> tuple[int
         raise EditRefused("This row shares its line with another; change it by hand.")
     if text[line:start].strip() == "-":
         raise EditRefused("The first value of a row names it and stays.")
-    after = min(_line_end(text, end) + 1, len(text))
+    after = min(line_end(text, end) + 1, len(text))
     if gap and text[after : after + 1] == "\n":
         after += 1
     return line, after
 
 
-def _line_end(text: str, position: int) -> int:
+def line_end(text: str, position: int) -> int:
+    """Where the line of a position ends."""
     found = text.find("\n", position)
     return len(text) if found < 0 else found
 

@@ -9,7 +9,8 @@ import pytest
 import builder.tables
 from builder.checks import CHECKS, checked_region
 from builder.rows import parse_yaml, plain
-from builder.tables.edit import remove_value, replace_cell, replace_value
+from builder.tables.cells import replace_cell
+from builder.tables.edit import remove_value, replace_value
 
 START = Path(builder.tables.__file__).parent / "blank"
 SAMPLE = re.compile(r"(?P<file>\S+) (?P<path>\S+): (?P<value>.*)", re.DOTALL)
