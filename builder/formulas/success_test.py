@@ -36,20 +36,28 @@ class SuccessTest:
 
 
 def rule_of(
-    region: Mapping[str, Any], zone: Mapping[str, Any], rain_mm: float | None
+    region: Mapping[str, Any],
+    zone: Mapping[str, Any],
+    rain_mm: float | None,
+    measure: str = "cover",
+    against: str = "reference",
 ) -> dict[str, Any]:
     """The rule a unit is tested by, from the region's rule and the zone's own figures.
 
     region   success_rule of region.yaml as a mapping
-    zone     success of the zone's notes as a mapping; its share replaces the region's
+    zone     success of the zone's notes as a mapping
     rain_mm  yearly rain of the zone, which decides the years where the region has a break
+    measure  "cover", "production" or "density";  against  "reference" or "standard"
+
+    Cover against a reference takes the zone's perennial_cover_share_of_reference where it
+    is given, times the zone's own share, or the region's where the zone names none. All
+    else takes the region's share.
 
     The later of the region's years and the zone's earliest year holds. A region without
     sample adequacy takes a tenth of the mean.
     Source: cfr_816_116, beltbook_rule; golden: success_test.json
     """
     reverse, adequacy = region.get("reverse_null"), region.get("sample_adequacy")
-    shares = (zone.get("share"), region.get("share"), 1.0)
     years = zone.get("earliest_year")
     if region.get("rain_break_mm") is not None:
         wait = responsibility_years(
@@ -61,7 +69,7 @@ def rule_of(
         years = max(wait, years or 0)
     return {
         "null_kind": region["null_kind"],
-        "share": next(share for share in shares if share is not None),
+        "share": _share(region, zone, measure, against),
         "alpha_direct": region["alpha"],
         "alpha_reverse": reverse["alpha"] if reverse else region["alpha"],
         "precision": adequacy["d"] if adequacy else 0.1,
@@ -70,6 +78,15 @@ def rule_of(
         else 2,
         "years": years,
     }
+
+
+def _share(region: Mapping[str, Any], zone: Mapping[str, Any], measure: str, against: str) -> float:
+    usual = 1.0 if region.get("share") is None else float(region["share"])
+    line = zone.get("perennial_cover_share_of_reference")
+    if measure != "cover" or against != "reference" or line is None:
+        return usual
+    own = zone.get("share")
+    return float(line) * (usual if own is None else float(own))
 
 
 def success_test(

@@ -5,12 +5,19 @@ import { oneSample, responsibilityYears, standardLine, twoSample, verdict } from
 
 const NULLS = ['direct', 'reverse'];
 
+function shareOf(region, zone, measure, against) {
+  const usual = region.share ?? 1;
+  const line = zone.perennial_cover_share_of_reference ?? null;
+  if (measure !== 'cover' || against !== 'reference' || line === null) return usual;
+  return line * (zone.share ?? usual);
+}
+
 /**
  * The rule a unit is tested by, from the region's success_rule, the zone's success and its
- * yearly rain.
- * @param {{region: object, zone: object, rain_mm: number | null}} of
+ * yearly rain. Cover against a reference takes the zone's own share of the reference.
+ * @param {{region: object, zone: object, rain_mm: number | null, measure?: string, against?: string}} of
  */
-export function ruleOf({ region, zone, rain_mm }) {
+export function ruleOf({ region, zone, rain_mm, measure = 'cover', against = 'reference' }) {
   const { reverse_null: reverse, sample_adequacy: adequacy, null_kind, alpha } = region;
   let years = zone.earliest_year ?? null;
   if ((region.rain_break_mm ?? null) !== null) {
@@ -19,7 +26,7 @@ export function ruleOf({ region, zone, rain_mm }) {
   }
   return {
     null_kind,
-    share: zone.share ?? region.share ?? 1,
+    share: shareOf(region, zone, measure, against),
     alpha_direct: alpha,
     alpha_reverse: reverse ? reverse.alpha : alpha,
     precision: adequacy ? adequacy.d : 0.1,

@@ -17,7 +17,7 @@ export function Success({ stand }) {
   const kept = { measure: 'cover', against: 'reference', values: [], reference: [], standard: null, years_since: null, ...record.reclaim.test };
   const put = (patch) => change({ reclaim: { ...record.reclaim, test: { ...kept, ...patch } } });
   const rain_mm = normalsOf(here, stand.zone)?.precip_mm.reduce((sum, mm) => sum + mm, 0) ?? null;
-  const rule = ruleOf({ region: here.pack.success_rule, zone: standardsOf(here, stand.zone.id) ?? {}, rain_mm });
+  const rule = ruleOf({ region: here.pack.success_rule, zone: standardsOf(here, stand.zone.id) ?? {}, rain_mm, measure: kept.measure, against: kept.against });
   const unit = MEASURES[kept.measure];
   return html`<${Frame} tab="reclaim" edge=${false} class="whole-width" title=${t('success.title')} line=${record.unit_name || record.name} back=${`#/site/${record.id}/reclaim`}>
     <section class="part lead0"><${Choice} label=${t('success.measure')} options=${Object.keys(MEASURES).map((value) => ({ value, label: t(`success.${value}`) }))} value=${kept.measure} onPick=${(measure) => put({ measure })} row/>
