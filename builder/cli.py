@@ -99,9 +99,9 @@ def run_build(given: argparse.Namespace) -> int:
     except (steps.BuilderBusy, OSError) as error:
         raise Told(str(error)) from None
     for region_id, note in built.notes.items():
-        made = "made" if region_id in built.fresh else "unchanged"
-        print(f"{region_id}: edition {note.edition}, pack {note.pack_hash}, "
-              f"booklet {note.booklet_pages} pages, {made}")
+        made = "made" if region_id in built.fresh else "as it was"
+        booklet = "" if given.no_booklet else f", booklet {note.booklet_pages} pages, {made}"
+        print(f"{region_id}: edition {note.edition}, pack {note.pack_hash}{booklet}")
     seconds = time.monotonic() - started
     print(f"{given.out}: {len(built.site.changed)} files written, {seconds:.1f} s")
     return 0
@@ -130,9 +130,7 @@ def run_call(given: argparse.Namespace) -> int:
     except steps.Stopped as stopped:
         print(render_all(in_order(stopped.problems)))
         return 1
-    except KeyError as name:
-        raise Told(f"there is no cover scale or disturbance named {name}") from None
-    except OSError as error:
+    except (steps.UnknownName, OSError) as error:
         raise Told(str(error)) from None
     if called.problems:
         print(render_all(in_order(called.problems)))
@@ -141,6 +139,11 @@ def run_call(given: argparse.Namespace) -> int:
         print(f"note: not plants of this region: {rows}")
     print(f"{given.out}: {called.plots} plots called")
     return 0
+
+
+def say_line(words: str) -> None:
+    """One line for the person, at once."""
+    print(words, flush=True)
 
 
 def say_step(done: int, of: int, words: str) -> None:
@@ -152,16 +155,19 @@ def run_desk(given: argparse.Namespace) -> int:
     """Serves the desk until Ctrl-C."""
     from builder.desk.opening import CannotOpen, open_desk
 
+    waiting: list[Path] = []
     if given.demo:
-        folders = steps.regions_in(Path("keydata"))
-        if not folders:
+        waiting = steps.regions_in(Path("keydata"))
+        if not waiting:
             raise Told("there is no region in keydata/")
-        if not all(steps.is_current(folder, given.out) for folder in folders):
-            made = run_build(argparse.Namespace(region=folders, out=given.out, no_booklet=False))
+        if all(steps.is_current(folder, given.out) for folder in waiting):
+            waiting = []
+        else:
+            made = run_build(argparse.Namespace(region=waiting, out=given.out, no_booklet=True))
             if made != 0:
                 return made
     try:
-        open_desk(given, print)
+        open_desk(given, say_line, waiting)
     except CannotOpen as refusal:
         raise Told(str(refusal)) from None
     return 0

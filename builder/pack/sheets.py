@@ -43,10 +43,10 @@ def season_rule(region: Region) -> dict[str, Any]:
 
 
 def ground_water_cm(region: Region, zone_id: str) -> float | None:
-    """Usual depth to ground water; 0 where the zone's roots always reach it. [cm]"""
-    table = region.soils[zone_id].water_table_cm
-    if table is not None:
-        return table[1]
+    """Usual depth to ground water; 0 where roots always reach it, None unknown. [cm]"""
+    soil = region.soils.get(zone_id)
+    if soil is not None and soil.water_table_cm is not None:
+        return soil.water_table_cm[1]
     return 0 if region.zone(zone_id).ground_water_in_reach else None
 
 

@@ -4,7 +4,7 @@ Each only calls; values are made in the parts. Nothing here prints.
 """
 
 from builder.steps.building import Built, build
-from builder.steps.calling import Called, call_file
+from builder.steps.calling import Called, UnknownName, call_file
 from builder.steps.checking import Checked, Stopped, check_region, check_regions
 from builder.steps.notes import (
     BuilderBusy,
@@ -22,6 +22,7 @@ __all__ = [
     "Called",
     "Checked",
     "Stopped",
+    "UnknownName",
     "build",
     "call_file",
     "check_region",

@@ -4,7 +4,7 @@ from __future__ import annotations
 
 import csv
 import os
-from collections.abc import Callable
+from collections.abc import Callable, Iterable
 from dataclasses import dataclass
 from pathlib import Path
 
@@ -38,13 +38,22 @@ class Called:
     problems: list[Problem]
 
 
+class UnknownName(ValueError):
+    """A scale or disturbance that neither the region nor the house knows; says which there are."""
+
+    def __init__(self, what: str, name: str, known: Iterable[str]) -> None:
+        super().__init__(f'there is no {what} named "{name}". Known: {", ".join(known) or "none"}.')
+
+
 def scale_of(region: Region, name: str | None) -> dict[str, float] | None:
-    """Percent by class code. KeyError where no scale has this name."""
+    """Percent by class code. UnknownName where no scale has this name."""
     if name is None:
         return None
     own = region.cover_scale
     if name == own.id:
         return {one.code: one.mid_pct for one in own.classes}
+    if name not in SCALES:
+        raise UnknownName("cover scale", name, [own.id, *SCALES])
     return dict(SCALES[name])
 
 
@@ -63,10 +72,14 @@ def call_file(
 ) -> Called:
     """Calls every plot of a file and writes one line a plot, whole or not at all.
 
-    Raises Stopped when tables or plots have errors, KeyError for an unknown scale.
+    Raises Stopped when tables or plots have errors, UnknownName for a scale or
+    disturbance nobody knows.
     """
     (checked,) = check_regions([folder])
     region = region_of(checked)
+    known = [one.id for one in region.disturbances]
+    if disturbance is not None and disturbance not in known:
+        raise UnknownName("disturbance", disturbance, known)
     written, problems = read_plots(plots_csv, scale_of(region, scale))
     if written is None or errors(problems):
         raise Stopped(problems)
