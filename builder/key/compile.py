@@ -109,7 +109,7 @@ def weigh_region(arrays: Arrays, weights: Weights) -> Evidence:
 def compile_key(region: Region, fitted: Fitted | None = None) -> dict[str, Any]:
     """settings, cover, zones, plants, groups, evidence, questions, rules and disturbances.
 
-    settings.fit stays empty; builder.key.usual fills it from simulated sites.
+    settings.fit stays empty where no fit from plots brings it; builder.key.usual fills it then.
     """
     weights = fitted.weights if fitted else Weights()
     if fitted is None:
@@ -176,7 +176,7 @@ def _settings(
         "temper": weights.temper,
         "area_cb": weigh.round_half_up(np.log(share) * weigh.CENTIBANS_PER_NAT).tolist(),
         "heat_load": _heat_load(region.latitude_deg),
-        "fit": [],
+        "fit": fitted.session.get("fit", []) if fitted else [],
     }
 
 

@@ -103,7 +103,7 @@ def _build(pack: Pack) -> Key:
         implied=tables[:, 9:12],
         presence=tables[:, 12] / 10000.0,
         cover=cover,
-        lowered=_lowered(cover, pack["settings"]["mosaic_lower"]),
+        lowered=lowered_cover(cover, pack["settings"]["mosaic_lower"]),
         plant_at=_by_id(pack["plants"]),
         zone_at=_by_id(pack["zones"]),
         group_at=_by_id(pack["groups"]),
@@ -118,7 +118,7 @@ def _newcomers(tables: list[Any], zones: int) -> Ints:
     """[row, found or absent, v, zone]; what no disturbance can reach stays 0."""
     made = np.zeros((len(tables), 2, 5, zones), np.int32)
     for row, short in enumerate(tables):
-        table = lengthen(short, zones).reshape(2, -1, zones)
+        table = lengthen(short, zones).reshape(2, -1, zones).cumsum(axis=1)
         made[row, :, : table.shape[1]] = table
     return made
 
@@ -135,7 +135,7 @@ def _cover_shares(pack: Pack, found: Ints) -> Floats:
     return np.asarray(shares / shares.sum(axis=1, keepdims=True))
 
 
-def _lowered(cover: Floats, share: float) -> Floats:
+def lowered_cover(cover: Floats, share: float) -> Floats:
     """In patches a plant may look one step less plentiful."""
     lowered = (1.0 - share) * cover
     lowered[:, 0] = cover[:, 0]

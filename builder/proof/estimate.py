@@ -6,7 +6,7 @@ docs/method_key.md says what each part was worth on open plot sets.
 
 from __future__ import annotations
 
-from collections.abc import Callable
+from collections.abc import Callable, Sequence
 from dataclasses import dataclass, replace
 from typing import Any
 
@@ -56,12 +56,25 @@ class Tuned:
 
 
 @dataclass(frozen=True)
+class Inner:
+    """A key that one inner fold's plots were kept out of, and those plots."""
+
+    arrays: Arrays
+    weights: Weights
+    rows: Whole
+
+
+@dataclass(frozen=True)
 class Learned:
-    """A fit and the nats behind its corrections, [plant, threshold, zone]; inner loss [nats]."""
+    """A fit and the nats behind its corrections, [plant, threshold, zone].
+
+    loss   inner log loss [nats]; inner: the keys of the inner folds at the fitted temper
+    """
 
     fitted: Fitted
     learned: Floats
     loss: float
+    inner: list[Inner]
 
 
 def counts_of(plots: Plots, zone: Whole, zones: int) -> Arrays:
@@ -108,6 +121,14 @@ def fit_key(
         ),
         learned,
         tuned.loss,
+        [
+            Inner(
+                replace(arrays, **dict(zip(CORRECTED, one.nats(), strict=True))),
+                Weights(temper=tuned.temper, tau=one.tau),
+                rows[fold == k],
+            )
+            for k, (arrays, one) in enumerate(zip(held_out, crossed, strict=True))
+        ],
     )
 
 
@@ -116,13 +137,21 @@ def _usual(arrays: Arrays) -> Floats:
     return usual_shares(arrays.present, arrays.cover_counts, arrays.plots)
 
 
-def key_for(arrays: Arrays, weights: Weights, session: dict[str, Any]) -> Key:
-    """A bare key of counts and figures, for sessions without a region around them."""
+def key_for(
+    arrays: Arrays,
+    weights: Weights,
+    session: dict[str, Any],
+    near: Sequence[set[int]] | None = None,
+) -> Key:
+    """A bare key of counts and figures, for sessions without a region around them.
+
+    near  neighbours of each zone
+    """
     evidence = weigh_region(arrays, weights)
     share = evidence.prior * len(evidence.prior)
     area = round_half_up(np.log(share) * CENTIBANS_PER_NAT).tolist()
     settings = {**SESSION, **session, "temper": weights.temper, "area_cb": area}
-    return bare_key(evidence, settings)
+    return bare_key(evidence, settings, near)
 
 
 def _some(zone: Whole, rng: np.random.Generator) -> Whole:

@@ -20,12 +20,14 @@ from builder.formulas.fidelity import indval, indval_p, phi
 from builder.key.fitted import COLUMNS, FIT_CSV, FIT_YAML
 from builder.key.weigh import STEPS
 from builder.problems import Place, Problem, in_order, problem_at
-from builder.proof.estimate import Learned, Progress, fit_key
+from builder.proof.estimate import Learned, Progress
 from builder.proof.known import Known, in_slope_order
+from builder.proof.known_fit import fit_known
 from builder.proof.reading import read_known
 from builder.proof.region_tables import (
     LETTERS,
     empty_tables,
+    neighbours_of,
     occurrence_table,
     plain_ids,
     plants_table,
@@ -96,7 +98,7 @@ def fit_region(
     if known is None:
         return FitResult(None, in_order(problems))
     known = in_slope_order(known)
-    learned = fit_key(known.plots, known.zone, len(known.zone_ids), seed, tell)
+    learned = fit_known(known, neighbours_of(known), seed, tell)
     digest = hashlib.sha256(plots_path.read_bytes() + zones_path.read_bytes()).hexdigest()[:16]
     day = date or datetime.date.today().isoformat()
     files = region_files(

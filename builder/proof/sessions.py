@@ -6,6 +6,7 @@ that temper, drag and the weight of implication can be fitted afterwards.
 
 from __future__ import annotations
 
+from collections.abc import Sequence
 from dataclasses import dataclass, replace
 from typing import Any
 
@@ -17,7 +18,7 @@ from builder.key.bulk_session import hear_all, hear_session
 from builder.key.bulk_weigh import Heard, implied_many, weigh_many
 from builder.key.context import Context, context_of
 from builder.key.plots import Plots
-from builder.key.prepare import Floats, Key
+from builder.key.prepare import Floats, Key, lowered_cover
 from builder.key.tables_bulk import AnswerTables, answer_tables
 from builder.key.weigh import Evidence
 
@@ -54,17 +55,35 @@ class Sums:
     belief: Floats
 
 
-def bare_key(evidence: Evidence, settings: dict[str, Any]) -> Key:
-    """A key of plants alone, for fitting: no ground questions, no seasons, no prices."""
+HALF_GONE: dict[str, Any] = {
+    "id": "half_gone",
+    "notes": False,
+    "dug": False,
+    "states": {},
+    "effect": {"kept": {"any": 0.5}},
+    "disturbs": True,
+}
+
+
+def bare_key(
+    evidence: Evidence, settings: dict[str, Any], near: Sequence[set[int]] | None = None
+) -> Key:
+    """A key of plants alone, for fitting: no ground questions, no seasons, no prices.
+
+    near  neighbours of each zone; none if not given
+    """
     plants, _, zones = evidence.found.shape
     pack = {
         "settings": settings,
-        "zones": [{"id": str(z), **PLAIN_ZONE} for z in range(zones)],
+        "zones": [
+            {"id": str(z), **PLAIN_ZONE, "neighbours": sorted(near[z]) if near else []}
+            for z in range(zones)
+        ],
         "plants": [{"id": str(p), **PLAIN_PLANT} for p in range(plants)],
         "groups": [],
         "questions": [],
         "rules": [],
-        "disturbances": [],
+        "disturbances": [HALF_GONE],
     }
     none = np.zeros((0, 5, zones), np.int32)
     return Key(
@@ -74,7 +93,7 @@ def bare_key(evidence: Evidence, settings: dict[str, Any]) -> Key:
         implied=evidence.implied,
         presence=evidence.presence,
         cover=evidence.cover,
-        lowered=evidence.cover,
+        lowered=lowered_cover(evidence.cover, settings["mosaic_lower"]),
         plant_at={},
         zone_at={},
         group_at={},
