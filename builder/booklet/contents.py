@@ -21,9 +21,10 @@ RULE_STRIP_MM = 7.0
 COVER_PAPER = "#f6f1e4"
 FORM_PLANTS = 22
 FORM_CLIPS = 9
-FIRST_LINES, REST_LINES = 21, 54
+FIRST_LINES, REST_LINES = 20, 52
 """Lines that fit a zone's first page and its last two beside their drawings, counted on pages."""
 WIDE_NAME = 18
+CHART_WIDTH, CHART_HEAD_MM, KITE_MM = 50.0, 21.0, 3.5
 
 
 @dataclass(frozen=True)
@@ -58,6 +59,16 @@ class Spread:
 
 
 @dataclass(frozen=True)
+class ChartPage:
+    """One page of the diagonal chart, under its own head of letters."""
+
+    anchor: str
+    first: bool
+    note: str
+    rows: tuple[plants.KiteRow, ...]
+
+
+@dataclass(frozen=True)
 class FormView:
     """The blank site check: the record's fields in the phone's order."""
 
@@ -89,6 +100,7 @@ class BookletView:
     zones: tuple["Spread", ...]
     year_note: str
     chart: plants.Chart
+    chart_pages: tuple[ChartPage, ...]
     forms: tuple[plants.FormGroup, ...]
     questions: tuple[grounds.QuestionView, ...]
     feel: tuple[grounds.FeelStep, ...]
@@ -150,7 +162,8 @@ def booklet_view(
         people_warns=tuple(grounds.people_warns(look)),
         zones=tuple(spread(zone) for zone in zones),
         year_note=own.say("zone.year_note", unit=look.figures.rain_unit),
-        chart=plants.chart(look),
+        chart=(drawn := plants.chart(look, CHART_WIDTH)),
+        chart_pages=chart_pages(drawn, trim, own.say("chart.note")),
         forms=tuple(plants.by_form(look)),
         questions=tuple(grounds.questions(look)),
         feel=tuple(grounds.feel_steps(look)),
@@ -267,9 +280,26 @@ def _belts(look: Look, zones: tuple[ZoneView, ...], pages: Mapping[str, int]) ->
 
 
 def _rest(own: Phrases, pages: Mapping[str, int]) -> tuple[Entry, ...]:
-    names = ("chart", "plants", "questions", "feel", "form", "sources")
+    """What follows the belts, by anchor and name."""
+    names = {"chart-0": "chart"} | {
+        name: name for name in ("plants", "questions", "feel", "form", "sources")
+    }
     return tuple(
-        Entry(Markup(""), own.say(f"{name}.title"), "", name, _page(pages, name)) for name in names
+        Entry(Markup(""), own.say(f"{name}.title"), "", anchor, _page(pages, anchor))
+        for anchor, name in names.items()
+    )
+
+
+def chart_pages(chart: plants.Chart, trim: Trim, note: str) -> tuple[ChartPage, ...]:
+    """The chart's rows in pages, evenly filled."""
+    most = int((trim.text_height - CHART_HEAD_MM) / KITE_MM)
+    pages = -(-len(chart.rows) // most)
+    each = -(-len(chart.rows) // max(1, pages))
+    return tuple(
+        ChartPage(
+            f"chart-{number}", number == 0, note, chart.rows[number * each : (number + 1) * each]
+        )
+        for number in range(pages)
     )
 
 

@@ -60,7 +60,7 @@ def kite_row(
     title: str,
     palette: Palette = PRINT,
     width: float = 56,
-    height: float = 3.6,
+    height: float = 3.5,
     grid: bool = True,
 ) -> str:
     """One plant's row.
