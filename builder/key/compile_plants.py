@@ -37,12 +37,18 @@ def compile_plants(region: Region) -> list[dict[str, Any]]:
             "response": plant.response,
             "groups": member[plant.id],
             "lookalikes": [at[one] for one in plant.lookalikes],
-            "caution": any(c.who == "people" and c.level in BLOCKING for c in plant.cautions),
-            "sensitive": plant.sensitive,
             "price_micronats": round(MICRO * price_nats(plant)),
+            **_marks(plant),
         }
         for plant in region.plants
     ]
+
+
+def _marks(plant: Plant) -> dict[str, bool]:
+    """What only few plants carry: a caution that interrupts the hand, a place to keep vague."""
+    interrupts = any(c.who == "people" and c.level in BLOCKING for c in plant.cautions)
+    marks = {"caution": interrupts, "sensitive": plant.sensitive}
+    return {name: True for name, holds in marks.items() if holds}
 
 
 def price_nats(plant: Plant) -> float:
@@ -107,7 +113,8 @@ def newcomer_tables(
 
     rows    [plant, level, half]; half 1 is for plants known when dry, out of season
     tables  by row, in short (builder.key.sparse): found at v = 0..most, then not found at
-            v = 0..most, most the largest share any disturbance of that level leaves
+            v = 0..most, each less the one before (a kilobyte less after gzip), most the largest
+            share any disturbance of that level leaves
     most_kept  {level: most quarters left of each plant by what brings that level}
     """
     rows, tables = [], []
@@ -123,8 +130,12 @@ def newcomer_tables(
                     continue
                 rows.append([int(p), level, half])
                 most = int(weigh.round_half_up(most_kept[level][p] * seen)) + 1
-                tables.append(shorten(np.concatenate([f[k, :most], a[k, :most]])))
+                tables.append(shorten(np.concatenate([_risen(f[k, :most]), _risen(a[k, :most])])))
     return {"levels": levels, "rows": rows, "tables": tables}
+
+
+def _risen(points: weigh.Ints) -> weigh.Ints:
+    return np.diff(points, axis=0, prepend=np.zeros_like(points[:1]))
 
 
 def arrivals(region: Region, inside: Any) -> Floats:

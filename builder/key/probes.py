@@ -17,7 +17,7 @@ FIELDS = (
     "look_again",
     "difference_cb",
 )
-PROMPTS = 3
+PROMPTS = 2
 
 
 def probe_answer(pack: Pack, site: Site) -> dict[str, Any]:
@@ -25,6 +25,12 @@ def probe_answer(pack: Pack, site: Site) -> dict[str, Any]:
     made: Call = call(pack, site, prompts=PROMPTS)
     return {
         **{name: made[name] for name in FIELDS},
-        "belief": [made["belief"][zone["id"]] for zone in pack["zones"]],
+        "belief": [made["belief"][made["zone_id"]], made["belief"][made["next_zone_id"]]],
+        "belief_sum": belief_sum(made["belief"]),
         "prompts": [[one["id"], one["gain"]] for one in made["prompts"]],
     }
+
+
+def belief_sum(belief: dict[str, float]) -> int:
+    """One whole number that moves with any zone's belief: sum of place times millionths."""
+    return sum(place * round(share * 1e6) for place, share in enumerate(belief.values(), 1))

@@ -11,7 +11,8 @@ whole). Its hash is the first 16 hex digits of SHA-256.
     cover        scale_id, classes [code, low_pct, high_pct, mid_pct, step 0..3]
     zones        id, letter, kind, band_m, centre_m, soft_edge_m, shifts, neighbours [index]
     plants       id, form, layer, months, known_when_dry, weed, mix, fate, response, groups and
-                 lookalikes [index], caution (deadly or harmful to people), price_micronats, ...
+                 lookalikes [index], price_micronats; true where it holds: caution (deadly or
+                 harmful to people), sensitive
     groups       id, use, members [index]
     evidence     plants: by plant a table of 13 rows in short (builder.key.sparse): 0..3 found by
                  cover step less row 4; 4 found; 5..8 not found at v = 1/4..1; 9..11 covers no

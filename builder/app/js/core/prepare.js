@@ -95,7 +95,7 @@ function loweredCover(cover, P, Z, share) {
   return lowered;
 }
 
-/** Rows of the newcomer tables by plant, level and half; points per v, then per zone. */
+/** Newcomers by plant, level and half; points per v, then zone, each v less the one before. */
 function newcomerRows({ rows, tables }, Z) {
   const at = new Map();
   rows.forEach(([plant, level, half], row) => at.set(`${plant}/${level}/${half}`, row));
@@ -103,7 +103,13 @@ function newcomerRows({ rows, tables }, Z) {
   const absent = [];
   tables.forEach((short) => {
     const steps = short[0].length / 2;
-    const read = (from) => Array.from({ length: steps }, (none, v) => rowOf(short, from + v, Z));
+    const read = (from) => {
+      const points = Array.from({ length: steps }, (none, v) => rowOf(short, from + v, Z));
+      for (let v = 1; v < steps; v += 1) {
+        for (let z = 0; z < Z; z += 1) points[v][z] += points[v - 1][z];
+      }
+      return points;
+    };
     found.push(read(0));
     absent.push(read(steps));
   });
