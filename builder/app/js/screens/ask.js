@@ -1,8 +1,9 @@
 /** Ask me: the plant or ground question that would help most now, with its answers under the thumb. */
 import { html } from 'htm/preact';
+import { useEffect, useRef } from 'preact/hooks';
 import { signal } from '@preact/signals';
 import { sentence, t } from './words.js';
-import { call, change, region, site } from './state.js';
+import { call, lastChange, region, say, site } from './state.js';
 import { enter, findingOf } from './findings.js';
 import { answerQuestion } from './question.js';
 import { oddsWords } from './say.js';
@@ -26,8 +27,8 @@ export function Ask({ root }) {
   const skip = () => { aside.value = { id: record.id, ids: [...skipped, prompt.id] }; };
   if (!prompt) return html`<${Enough} root=${root} again=${skipped.length > 0 ? () => { aside.value = { id: null, ids: [] }; } : null}/>`;
   return prompt.kind === 'plant'
-    ? html`<${AskPlant} key=${prompt.id} plant=${region.value.plant.get(prompt.id)} skip=${skip} root=${root}/>`
-    : html`<${AskGround} key=${prompt.id} question=${region.value.question.get(prompt.id)} skip=${skip}/>`;
+    ? html`<${AskPlant} plant=${region.value.plant.get(prompt.id)} skip=${skip} root=${root}/>`
+    : html`<${AskGround} question=${region.value.question.get(prompt.id)} skip=${skip}/>`;
 }
 
 function pairOf() {
@@ -37,8 +38,9 @@ function pairOf() {
 
 function AskPlant({ plant, skip, root }) {
   const here = region.value;
+  const told = useNewPrompt(plant.id, `${t('plants.look_for')}: ${plant.common}`);
   const sure = call.value.sure ? t('plants.sure_already', { odds: sentence(oddsWords(call.value.belief[call.value.zone_id])) }) : null;
-  return html`<${Danger} plant=${plant}/><div class="told">
+  return html`<${Danger} plant=${plant}/><div class="told" ref=${told}>
       <${PlantCard} plant=${plant} why=${t('plants.look_for')} pair=${pairOf()}/>
       ${sure && html`<p class="hint"><${Icon} name="zone"/><span>${sure} <a class="link" href=${root.replace(/plants$/, 'zone')}>${t('plants.to_zone')}</a></span></p>`}
       <div class="push"></div><${UndoLine}/></div>
@@ -50,7 +52,8 @@ function AskPlant({ plant, skip, root }) {
 function AskGround({ question, skip }) {
   const record = site.value;
   const pick = (value) => answerQuestion(question, value);
-  return html`<div class="told"><div class="why"><span class="label">${t(question.digs_cm ? 'plants.dig_next' : 'plants.look_at')}</span></div>
+  const told = useNewPrompt(question.id, question.ask);
+  return html`<div class="told" ref=${told}><div class="why"><span class="label">${t(question.digs_cm ? 'plants.dig_next' : 'plants.look_at')}</span></div>
       <div class="title"><div><h2>${question.ask}</h2></div>${question.digs_cm > 0 && html`<${Icon} name="dig" class="big"/>`}</div>
       ${question.why && html`<p class="hint"><${Icon} name="zone"/><span>${question.why}</span></p>`}
       ${question.digs_cm > 0 && html`<${Safety} record=${record}/>`}
@@ -69,7 +72,14 @@ function Enough({ root, again }) {
       ${again && html`<button type="button" class="btn wide" onClick=${again}>${t('plants.again')}</button>`}</div></div>`;
 }
 
-/** Marks the whole plot as searched, or takes that back. */
-export function setSearched(all) {
-  change({ whole_plot_searched: all }, t(all ? 'undo.searched' : 'undo.not_searched'));
+/** A new prompt stands at its top and is read out after the answer that led to it. The page is not
+ *  built anew for it: that would cost more than the answer. */
+function useNewPrompt(id, words) {
+  const told = useRef(null);
+  useEffect(() => {
+    told.current.scrollTop = 0;
+    const before = lastChange.value?.told;
+    say(before ? `${before}. ${words}` : words);
+  }, [id]);
+  return told;
 }

@@ -65,7 +65,7 @@ function In({ told, tell }) {
   };
   return html`<section class="part stack"><h2>${t('hand.title_in')}</h2><p>${t('hand.in_why')}</p>
     <label class="btn">${t('hand.in')}<input class="spoken" type="file" accept=".json,application/json" onChange=${take}/></label>
-    ${told && html`<ul class="plain-list" role="status">${Object.entries(told).filter(([, n]) => n > 0).map(([name, n]) => html`<li key=${name}>${t(`hand.${name}`, { n })}</li>`)}</ul>`}</section>`;
+    <div role="status">${told && html`<ul class="plain-list">${Object.entries(told).filter(([, n]) => n > 0).map(([name, n]) => html`<li key=${name}>${t(`hand.${name}`, { n })}</li>`)}</ul>`}</div></section>`;
 }
 
 function Sides({ told }) {

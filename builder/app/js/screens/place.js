@@ -28,7 +28,8 @@ export function Place() {
       ${done.map((question) => html`<${Question} key=${question.id} question=${question} value=${record.questions[question.id]}/>`)}</section>
     ${around.length > 0 && html`<section class="part"><h2>${t('place.around')}</h2>
       ${around.map((question) => html`<${Question} key=${question.id} question=${question} value=${record.questions[question.id]}/>`)}</section>`}
-    ${digs.length > 0 && html`<section class="part"><h2><${Icon} name="dig"/>${t('place.dig')}</h2><${Digging} questions=${digs} record=${record}/></section>`}
+    ${digs.length > 0 && html`<section class="part"><h2><${Icon} name="dig"/>${t('place.dig')}</h2><${Digging} questions=${digs} record=${record}/>
+      <p class="deep"><a class="btn" href="#/book/soil"><${Icon} name="pit"/>${t('feel.title')}</a></p></section>`}
     <${Header} record=${record} region=${here}/>
     <${Photos} record=${record}/>
     <div class="act"><a class="btn go" href=${`#/site/${record.id}/plants`}><${Icon} name="plants"/>${t(call.value.answers ? 'place.on' : 'place.start')}</a></div>

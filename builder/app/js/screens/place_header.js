@@ -3,7 +3,7 @@ import { html } from 'htm/preact';
 import { t } from './words.js';
 import { change, units } from './state.js';
 import { observer } from './settings.js';
-import { dropSite, unitNamed } from './records.js';
+import { dropSite, startSpot, unitNamed } from './records.js';
 import { Choice, Field, Typed } from './parts/choice.js';
 import { Confirm } from './parts/confirm.js';
 
@@ -29,5 +29,6 @@ export function Header({ record }) {
     <${Field} label=${t('place.observer')} value=${record.observer} onChange=${by}/>
     <${Field} label=${t('place.date')} type="date" value=${record.date} onChange=${dated}/>
     <label class="field"><span>${t('place.notes')}</span><${Typed} rows=${3} value=${record.notes} onChange=${(notes) => change({ notes })}/></label>
+    <p class="deep"><button type="button" class="btn" onClick=${() => startSpot(t('place.duplicate_name', { name: record.name }), { role: 'duplicate' })}>${t('place.duplicate')}</button></p>
     <${Confirm} ask=${t('place.remove')} sure=${t('place.remove_sure')} yes=${t('place.remove_yes')} onYes=${() => dropSite(record.id)}/></section>`;
 }

@@ -18,15 +18,17 @@ export async function startSite(start = {}) {
   if (kept) go(`#/site/${kept.id}/place`);
 }
 
-/** Another look from the same place: keeps where, who and which unit; asks the plants again.
- *  @param {string} name */
-export async function startSpot(name) {
+/** Another look from here: keeps where, who and which unit; asks the plants again. A spot is noted
+ *  on the site check it belongs to; a duplicate stands for itself.
+ *  @param {string} name  @param {{role?: string}} [more] */
+export async function startSpot(name, more = {}) {
   const { id, unit_id, unit_name, place, disturbance, role, observer: who, spots = [] } = site.value;
-  const near = { ...place, latitude_deg: null, longitude_deg: null, accuracy_m: null };
-  const kept = await makeSite({ unit_id, unit_name, place: near, disturbance, role, name, observer: who });
+  const same = more.role === 'duplicate';
+  const near = same ? place : { ...place, latitude_deg: null, longitude_deg: null, accuracy_m: null };
+  const kept = await makeSite({ unit_id, unit_name, place: near, disturbance, role, name, observer: same ? '' : who, ...more });
   if (!kept || site.value?.id !== id) return;
-  change({ spots: [...spots, kept.id] });
-  go(`#/site/${kept.id}/plants`);
+  if (!same) change({ spots: [...spots, kept.id] });
+  go(`#/site/${kept.id}/${same ? 'place' : 'plants'}`);
 }
 
 async function makeSite(start) {

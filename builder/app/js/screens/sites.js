@@ -11,6 +11,7 @@ import { ModeKey } from './parts/bar.js';
 import { VerdictTab } from './parts/tab.js';
 import { Hills } from './parts/hills.js';
 import { rowCall, startSite } from './records.js';
+import { start } from './start.js';
 
 /** @returns the list of site checks, with search and a new one under the thumb */
 export function Sites() {
@@ -22,6 +23,7 @@ export function Sites() {
     <main>
       <div class="top"><${Hills}/><${ModeKey}/><h1 tabindex="-1">${t('sites.title')}</h1>
         <p>${t('sites.tables', { region: here.name, edition: here.edition })}<br/>${t('sites.kept', { n: sites.value.length })}</p>
+        ${start.value.bookOnly && html`<p class="care">${t('app.probes')}</p>`}
         ${here.pack.region.invented && html`<p class="stamp">${t('sites.invented')}</p>`}</div>
       ${sites.value.length === 0 && html`<${Empty}/>`}
       ${wanted !== null && found.length === 0 && html`<p class="part quiet">${t('sites.none_found', { text: wanted })}</p>`}

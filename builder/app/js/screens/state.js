@@ -55,6 +55,7 @@ let writer = null;
 
 /** Opens a record for change, or closes with null; undo starts anew with each record. */
 export function openSite(record) {
+  writeNow();
   undoable.value = [];
   trouble.value = null;
   writer = record && siteWriter(store.value, record, { onSaved, onFault, onLittleRoom });
@@ -75,10 +76,13 @@ function onFault(fault) {
 }
 
 /** Settles when everything changed so far is on the disk; rejects with the store's fault. */
-export const saved = () => (writer ? writer.flush() : Promise.resolve());
+export function saved() {
+  writeNow();
+  return writer ? writer.flush() : Promise.resolve();
+}
 
 /** True while something entered is not on the disk. */
-export const unsaved = () => Boolean(writer?.unsaved);
+export const unsaved = () => due !== null || Boolean(writer?.unsaved);
 
 /** Changes fields of the open site check, keeps them at once, and remembers the way back.
  *  @param {object} patch  @param {string|null} [told] what was done, for the line beside Undo; without it (typing) Undo skips it */
@@ -89,10 +93,20 @@ export function change(patch, told = null) {
   put({ ...before, ...patch });
 }
 
+let due = null;
+
+/** Paints first: writing begins in the next turn, a few thousandths of a second later. */
 function put(next) {
   site.value = next;
+  due ??= setTimeout(writeNow, 0);
+}
+
+function writeNow() {
+  if (due === null) return;
+  clearTimeout(due);
+  due = null;
   // A fault is told by onFault; the writer keeps the change for its next try.
-  writer.write(next).catch(() => {});
+  writer.write(site.value).catch(() => {});
 }
 
 /** The last change that Undo would take back, or null. */

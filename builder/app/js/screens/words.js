@@ -11,13 +11,23 @@ export function setWords(table, code) {
   language.value = code;
 }
 
+const makers = new Map();
+
+/** An Intl formatter, made once: making one costs more than a whole answer does. */
+function maker(kind, options) {
+  const tag = language.value === 'en' ? 'en-GB' : language.value;
+  const name = `${kind} ${tag} ${JSON.stringify(options)}`;
+  if (!makers.has(name)) makers.set(name, new Intl[kind](tag, options));
+  return makers.get(name);
+}
+
 /** The words under a dotted key, with {places} filled; a plural entry {one, other} is chosen by `n`.
  *  @param {string} key  @param {Record<string, string|number>} [places] */
 export function t(key, places = {}) {
   let entry = words.value;
   for (const part of key.split('.')) entry = entry?.[part];
   if (entry === undefined) throw new Error(`no words for ${key}`);
-  if (typeof entry === 'object') entry = entry[new Intl.PluralRules(language.value).select(places.n)] ?? entry.other;
+  if (typeof entry === 'object') entry = entry[maker('PluralRules', {}).select(places.n)] ?? entry.other;
   return entry.replace(/\{(\w+)\}/g, (_, name) => {
     if (!(name in places)) throw new Error(`${key} wants {${name}}`);
     const value = places[name];
@@ -27,7 +37,7 @@ export function t(key, places = {}) {
 
 /** A figure as it is, with two decimals at most. @param {number} value */
 function figure(value) {
-  return new Intl.NumberFormat(language.value, { maximumFractionDigits: 2 }).format(value);
+  return maker('NumberFormat', { maximumFractionDigits: 2 }).format(value);
 }
 
 /** With a capital first letter, to begin a line. @param {string} text */
@@ -40,22 +50,22 @@ export function has(key) {
 
 /** A figure as people write it. @param {number} value  @param {number} [decimals] digits after the point */
 export function number(value, decimals = 0) {
-  return new Intl.NumberFormat(language.value, { minimumFractionDigits: decimals, maximumFractionDigits: decimals }).format(value);
+  return maker('NumberFormat', { minimumFractionDigits: decimals, maximumFractionDigits: decimals }).format(value);
 }
 
 /** "a, b and c". @param {string[]} parts */
 export function listed(parts) {
-  return new Intl.ListFormat(language.value, { type: 'conjunction' }).format(parts);
+  return maker('ListFormat', { type: 'conjunction' }).format(parts);
 }
 
 /** Friday 11 July, from "2026-07-11". @param {string} iso */
 export function dayName(iso) {
   const [year, month, day] = iso.split('-').map(Number);
-  return new Intl.DateTimeFormat(language.value === 'en' ? 'en-GB' : language.value, { weekday: 'long', day: 'numeric', month: 'long' })
+  return maker('DateTimeFormat', { weekday: 'long', day: 'numeric', month: 'long' })
     .format(new Date(year, month - 1, day));
 }
 
 /** July, from 7. @param {number} month  @param {'long'|'short'|'narrow'} [style] */
 export function monthName(month, style = 'long') {
-  return new Intl.DateTimeFormat(language.value === 'en' ? 'en-GB' : language.value, { month: style }).format(new Date(2000, month - 1, 1));
+  return maker('DateTimeFormat', { month: style }).format(new Date(2000, month - 1, 1));
 }

@@ -27,14 +27,17 @@ export function EdgeAjar({ region, call, mark, href }) {
 
 function Belt({ zone, share }) {
   return html`<span class="belt" style=${{ '--b': zone.colour }}>
-    <i class="fill" style=${{ width: `${Math.max(share * 100, share > 0 ? 0.8 : 0)}%` }}><${Fill} letter=${zone.letter}/></i>
+    <i class="fill" style=${{ '--s': level(share, 0.008) }}><${Fill} letter=${zone.letter}/></i>
     <b>${zone.letter}</b>${share >= 0.1 && html`<em>${percentWords(share)}</em>`}</span>`;
 }
 
 function Lens({ zone, share, bottom }) {
   return html`<span class="lens" style=${{ bottom: `${bottom}%`, height: `${LENS_PCT}%` }}>
-    <i class="fill" style=${{ height: `${Math.max(share * 100, share > 0 ? 2 : 0)}%` }}><${Fill} letter=${zone.letter}/></i><b>${zone.letter}</b></span>`;
+    <i class="fill" style=${{ '--s': level(share, 0.02) }}><${Fill} letter=${zone.letter}/></i><b>${zone.letter}</b></span>`;
 }
+
+/** How far a fill is drawn in: its share, or a sliver that can still be seen; a whole step out at none. */
+const level = (share, least) => (share > 0 ? Math.max(share, least).toFixed(4) : -0.1);
 
 /** Hand-drawn seams between belts; the same wobble every time. */
 function Wobble({ count }) {

@@ -1,5 +1,6 @@
 /** How the open edge is laid: which belts open, which stay readable, which are pressed into strata.
  *  Always in order, high at the top; ground off the slope stands at its own height. */
+import { upslope } from './edge_index.js';
 import { lensHeight } from './edge_shut.js';
 
 /** A belt this likely stays readable even away from the called one. */
@@ -28,7 +29,7 @@ export function edgeRows(region, call, spread = false) {
   const inlay = call.verdict === 'mosaic' ? [lensOf(region, call)] : [];
   const wide = open.filter((id) => !inlay.includes(id));
   const shows = (zone) => wide.includes(zone.id) || (!inlay.includes(zone.id) && (spread || call.belief[zone.id] >= READABLE));
-  const stack = ordered(region, (zone) => zone.kind === 'zonal' || shows(zone));
+  const stack = upslope(region).filter((zone) => zone.kind === 'zonal' || shows(zone));
   const anchors = anchorsOf(call, wide, stack);
   const near = (zone, i) => spread || shows(zone) || anchors.some((at) => Math.abs(at - i) === 1);
   const rows = [];
@@ -43,13 +44,6 @@ export function edgeRows(region, call, spread = false) {
   if (call.verdict === 'misfit') openGap(call, tidy);
   placePools(region, tidy, stack, inlay);
   return tidy;
-}
-
-/** High to low; lenses that show stand between the belts at their own height. */
-function ordered(region, keeps) {
-  const count = region.belts.length;
-  const at = (zone) => (zone.kind === 'zonal' ? zone.place + 0.5 : lensHeight(region, zone) * count + 0.01);
-  return region.zones.filter(keeps).sort((a, b) => at(b) - at(a));
 }
 
 function anchorsOf(call, wide, stack) {

@@ -19,7 +19,7 @@ export function Frame({ tab, line, edge = true, class: shape = '', back = '#/sit
   return html`<div class=${`page p-${tab} ${two ? 'two' : ''}`}>
     <${Bar} title=${title ?? (record.name || t('sites.unnamed'))} line=${line} back=${back}/>
     ${two && html`<aside class="left" aria-label=${t('zone.title')}><${ZonePane}/></aside>`}
-    ${!two && edge && html`<${EdgeAjar} region=${here} call=${call.value} mark=${heightMark(here, record)} href=${`#/site/${record.id}/zone`}/>`}
+    ${!two && edge && html`<aside class="asis" aria-label=${t('edge.label')}><${EdgeAjar} region=${here} call=${call.value} mark=${heightMark(here, record)} href=${`#/site/${record.id}/zone`}/></aside>`}
     <main class=${shape}>${children}</main>
     <${Foot} current=${tab} siteId=${record.id}/></div>`;
 }

@@ -21,7 +21,7 @@ export function Pit({ soil, water, textures }) {
       return html`<rect class="layer" x="28" y=${top} width="80" height=${at(layer.bottom_cm) - top} style=${{ fillOpacity: Math.max(0.1, 0.62 - i * 0.2) }}/>
         ${stones(layer, top, at(layer.bottom_cm), i).map((place) => html`<path class="stone" d=${`M${place}${STONE}`}/>`)}
         <text class="tick" x="22" y=${top + 10} text-anchor="end">${layer.top_cm}</text>
-        <text class="end" x="120" y=${text}>${textures[i]}</text><text class="tick" x="120" y=${text + 17}>${[water[i] && t('book.holds', { water: waterWords(water[i].mm) }), layer.ph && t('book.ph', { ph: number(layer.ph, 1) })].filter(Boolean).join(', ')}</text>`;
+        <text class="end" x="120" y=${text}>${textures[i]}</text><text class="tick" x="120" y=${text + 17}>${[water[i] && (water[i].mm > 0 ? t('book.holds', { water: waterWords(water[i].mm) }) : t('book.below_roots')), layer.ph && t('book.ph', { ph: number(layer.ph, 1) })].filter(Boolean).join(', ')}</text>`;
     })}
     <path class="turf" d="M28 12q10-6 20 0t20 0 20 0 20 0"/><text class="tick" x="22" y=${at(deep)} text-anchor="end">${deep}</text><text class="tick" x="28" y=${at(deep) + 18}>cm</text></svg>`;
 }
