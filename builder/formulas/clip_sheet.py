@@ -45,6 +45,8 @@ def clip_sheet(
     Source: student_1908, hand_arithmetic; golden: clip_sheet.json
     """
     need_open_share("precision", precision)
+    need_open_share("confidence", confidence)
+    clip_kg_ha(0, plot_m2, air_dry_share)
     grown = [clip_kg_ha(weight, plot_m2, air_dry_share) for weight in green_g]
     running = [sum(grown[: i + 1]) / (i + 1) for i in range(len(grown))]
     if len(grown) < 2:
@@ -82,6 +84,7 @@ def double_sheet(
     Refused: a clipped plot without its estimate.
     Source: cochran_1977; golden: clip_sheet.json
     """
+    need_open_share("confidence", confidence)
     estimated: list[float] = []
     clipped: list[float] = []
     others: list[float] = []

@@ -7,7 +7,7 @@ from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
 from typing import Any
 
-from builder.formulas.refusal import RefusedError, need_above_zero, need_share
+from builder.formulas.refusal import RefusedError, need_above_zero, need_count, need_share
 from builder.formulas.seeding import (
     bulk_kg,
     method_factor,
@@ -78,6 +78,9 @@ def seed_order(
     Source: hand_arithmetic, common_practice; golden: seed_order.json
     """
     area = need_above_zero("area_ha", area_ha)
+    need_count("stale_months", stale_months)
+    for month in (sow_month, *window_months):
+        need_count("month", month)
     remarks = _season(sow_month, window_months)
     if not lots:
         remarks.append(Remark("refuse", "mix_empty", {}))

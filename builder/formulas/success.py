@@ -16,6 +16,7 @@ from builder.formulas.quantiles import t_above, t_quantile
 from builder.formulas.refusal import (
     RefusedError,
     need_above_zero,
+    need_count,
     need_not_negative,
     need_open_share,
     need_same_length,
@@ -168,8 +169,9 @@ def verdict(passes: bool, n: int, needed: float, least: int, null_kind: str) -> 
     sample that still shows success has shown it.
     Source: colorado_4_15_11; golden: success.json
     """
-    reverse, short = _null(null_kind), n < need_not_negative("needed", needed)
-    if n < least or (short and not (reverse and passes)):
+    reverse = _null(null_kind)
+    short = need_count("n", n) < need_not_negative("needed", needed)
+    if n < need_count("least", least) or (short and not (reverse and passes)):
         return "too_few"
     return "met" if passes else "not_shown"
 
@@ -183,7 +185,8 @@ def responsibility_years(
     Source: cfr_816_116; golden: success.json
     """
     wet = need_not_negative("rain_mm", rain_mm) > need_above_zero("rain_break_mm", rain_break_mm)
-    return years_wet if wet else years_dry
+    wet_wait, dry_wait = need_count("years_wet", years_wet), need_count("years_dry", years_dry)
+    return wet_wait if wet else dry_wait
 
 
 def weighted_standard(values: Sequence[float], weights: Sequence[float]) -> float:

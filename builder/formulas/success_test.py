@@ -8,7 +8,7 @@ from collections.abc import Mapping, Sequence
 from dataclasses import dataclass
 from typing import Any
 
-from builder.formulas.refusal import RefusedError, need_not_negative
+from builder.formulas.refusal import RefusedError, need_not_negative, need_number
 from builder.formulas.sample import plots_for_precision, summary
 from builder.formulas.success import (
     Judgement,
@@ -113,6 +113,10 @@ def success_test(
     """
     if (standard is None) == (reference is None):
         raise RefusedError("one_standard")
+    if standard is not None:
+        need_not_negative("standard", standard)
+    for value in (*values, *(reference or ())):
+        need_number("plot", value)
     null_kind = rule["null_kind"]
     if null_kind not in NULLS:
         raise RefusedError("unknown_choice", field="null_kind", value=null_kind)

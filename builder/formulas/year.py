@@ -149,11 +149,10 @@ def is_fed(water_table_cm: float | None, near_water_cm: float) -> bool:
 
     Source: beltbook_rule; golden: year.json
     """
+    near = need_not_negative("near_water_cm", near_water_cm)
     if water_table_cm is None:
         return False
-    return need_number("water_table_cm", water_table_cm) <= need_not_negative(
-        "near_water_cm", near_water_cm
-    )
+    return need_number("water_table_cm", water_table_cm) <= near
 
 
 @dataclass(frozen=True)

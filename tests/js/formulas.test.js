@@ -27,7 +27,6 @@ const BUILDER_ONLY = new Set([
   'terrain.log_heat_load',
 ]);
 const BUILDER_TOPICS = new Set(['diversity', 'fidelity', 'organic_matter']);
-/** Functions that take their whole list in the builder and as an object here are named alike. */
 const camel = (name) => name.replace(/_([a-z0-9])/g, (_, letter) => letter.toUpperCase());
 
 function* blocks() {
@@ -109,6 +108,40 @@ test('the runner sees a wrong number', () => {
     assert.notDeepEqual([...differences(got, wanted, 0.1)], []);
   }
   assert.deepEqual([...differences({ a: [1, 2.05], b: 'x', c: null }, wanted, 0.1)], []);
+});
+
+function* poisoned(given) {
+  for (const [name, value] of Object.entries(given)) {
+    if (name === 'digits') continue;
+    if (typeof value === 'number') {
+      yield [name, { ...given, [name]: NaN }];
+      yield [name, { ...given, [name]: Infinity }];
+    } else if (Array.isArray(value) && typeof value[0] === 'number') {
+      yield [name, { ...given, [name]: [...value.slice(0, -1), NaN] }];
+    }
+  }
+}
+
+test('no formula lets a NaN or infinity through', async () => {
+  let tried = 0;
+  const through = new Set();
+  for (const { formula, cases } of blocks()) {
+    if (!formula.includes('.') || BUILDER_TOPICS.has(formula.split('.')[0]) || BUILDER_ONLY.has(formula)) continue;
+    const work = await twin(formula);
+    for (const each of cases.filter((one) => !one.refused).slice(0, 3)) {
+      for (const [name, given] of poisoned(each.in)) {
+        tried += 1;
+        try {
+          call(work, formula, given);
+          through.add(`${formula} ${name}`);
+        } catch (no) {
+          if (!(no instanceof RangeError)) throw no;
+        }
+      }
+    }
+  }
+  assert.deepEqual([...through], []);
+  assert.ok(tried > 300, `${tried} tried`);
 });
 
 test('nothing left to the builder has a twin after all', async () => {

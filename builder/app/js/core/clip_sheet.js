@@ -12,6 +12,8 @@ import { meanInterval, plotsInAll, summary } from './sample.js';
  */
 export function clipSheet({ green_g, plot_m2, air_dry_share, precision, confidence }) {
   needOpenShare('precision', precision);
+  needOpenShare('confidence', confidence);
+  clipKgHa({ green_g: 0, plot_m2, air_dry_share });
   const kg_ha = green_g.map((weight) => clipKgHa({ green_g: weight, plot_m2, air_dry_share }));
   const running_kg_ha = kg_ha.map((_, i) => sum(kg_ha.slice(0, i + 1)) / (i + 1));
   const sheet = { kg_ha, running_kg_ha, mean_kg_ha: running_kg_ha[0] ?? null, low_kg_ha: null, high_kg_ha: null };
@@ -29,6 +31,7 @@ export function clipSheet({ green_g, plot_m2, air_dry_share, precision, confiden
  *   air_dry_share: number, confidence: number}} of
  */
 export function doubleSheet({ rows, plot_m2, air_dry_share, confidence }) {
+  needOpenShare('confidence', confidence);
   for (const { estimated_g } of rows) needNotNegative('estimated_g', estimated_g);
   const both = rows.filter(({ clipped_g }) => clipped_g !== null && clipped_g !== undefined);
   const estimated = both.map((row) => row.estimated_g);

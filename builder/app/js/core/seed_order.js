@@ -2,7 +2,7 @@
  * The seed order sheet: lot tags in, kilograms out, and what must be refused or warned of.
  * Remarks are {level: "refuse" | "warn", key, values}; an order with a refusal may not print.
  */
-import { needAboveZero, needShare } from './refusal.js';
+import { needAboveZero, needCount, needShare } from './refusal.js';
 import { bulkKg, methodFactor, plsKgHa, plsShare, tagAgeMonths, viableShare } from './seeding.js';
 
 const remark = (level, key, values = {}) => ({ level, key, values });
@@ -87,6 +87,8 @@ function line(lot, area, factor, today, stale_months) {
  */
 export function seedOrder({ lots, area_ha, base_method, method, factors, sow_month, window_months, today, stale_months }) {
   const area = needAboveZero('area_ha', area_ha);
+  needCount('stale_months', stale_months);
+  for (const month of [sow_month, ...window_months]) needCount('month', month);
   const remarks = season(sow_month, window_months);
   if (!lots.length) remarks.push(remark('refuse', 'mix_empty'));
   const [factor, no] = refusal(() => methodFactor({ base: base_method, wanted: method, factors }));

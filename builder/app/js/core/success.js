@@ -5,7 +5,7 @@
 import { wilsonBound } from './cover.js';
 import { tAbove, tQuantile } from './quantiles.js';
 import {
-  needAboveZero, needNotNegative, needOpenShare, needSameLength, needShare, needSomeShare, refuse, sum,
+  needAboveZero, needCount, needNotNegative, needOpenShare, needSameLength, needShare, needSomeShare, refuse, sum,
 } from './refusal.js';
 import { summary } from './sample.js';
 
@@ -100,8 +100,8 @@ export function proportion({ successes, n, line, alpha, null_kind }) {
  */
 export function verdict({ passes, n, needed, least, null_kind }) {
   const reverse = isReverse(null_kind);
-  const short = n < needNotNegative('needed', needed);
-  if (n < least || (short && !(reverse && passes))) return 'too_few';
+  const short = needCount('n', n) < needNotNegative('needed', needed);
+  if (n < needCount('least', least) || (short && !(reverse && passes))) return 'too_few';
   return passes ? 'met' : 'not_shown';
 }
 
@@ -111,7 +111,8 @@ export function verdict({ passes, n, needed, least, null_kind }) {
  */
 export function responsibilityYears({ rain_mm, rain_break_mm, years_wet, years_dry }) {
   const wet = needNotNegative('rain_mm', rain_mm) > needAboveZero('rain_break_mm', rain_break_mm);
-  return wet ? years_wet : years_dry;
+  const [wetWait, dryWait] = [needCount('years_wet', years_wet), needCount('years_dry', years_dry)];
+  return wet ? wetWait : dryWait;
 }
 
 /** Standard of several reference areas by their ground. @param {{values: number[], weights: number[]}} of */

@@ -1,5 +1,5 @@
 /** A success test as it is signed: the null that decides, the other beside it, and why not yet. */
-import { needNotNegative, refuse } from './refusal.js';
+import { needNotNegative, needNumber, refuse } from './refusal.js';
 import { plotsForPrecision, summary } from './sample.js';
 import { oneSample, responsibilityYears, standardLine, twoSample, verdict } from './success.js';
 
@@ -61,6 +61,8 @@ export function successTest({
   values, rule, standard = null, reference = null, share_already_taken = false, years_since = null,
 }) {
   if ((standard === null) === (reference === null)) refuse('one_standard');
+  if (standard !== null) needNotNegative('standard', standard);
+  for (const value of [...values, ...(reference ?? [])]) needNumber('plot', value);
   const { null_kind } = rule;
   if (!NULLS.includes(null_kind)) refuse('unknown_choice', { field: 'null_kind', value: null_kind });
   const nothing = { null_kind, deciding: null, other: null, plots_needed: null };

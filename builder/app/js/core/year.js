@@ -33,8 +33,8 @@ export function carried({
 
 /** Whether ground water feeds the roots. @param {{water_table_cm: number | null, near_water_cm: number}} of */
 export function isFed({ water_table_cm, near_water_cm }) {
-  if (water_table_cm === null) return false;
-  return needNumber('water_table_cm', water_table_cm) <= needNotNegative('near_water_cm', near_water_cm);
+  const near = needNotNegative('near_water_cm', near_water_cm);
+  return water_table_cm !== null && needNumber('water_table_cm', water_table_cm) <= near;
 }
 
 /**
