@@ -63,6 +63,11 @@ def parser() -> argparse.ArgumentParser:
     start.add_argument("--name", default="", help="name for people; without it from the folder")
     start.set_defaults(run=run_start)
 
+    docs = commands.add_parser("docs", help="write the generated pages of docs/ anew")
+    docs.add_argument("--keydata", type=Path, default=Path("keydata"), help="folder of regions")
+    docs.add_argument("--out", type=Path, default=Path("docs"), help="folder of the pages")
+    docs.set_defaults(run=run_docs)
+
     desk = commands.add_parser("desk", help="edit, prove and build in the browser, on this computer")
     desk.add_argument("--port", type=int, help="port to listen on; without it the first free one")
     desk.add_argument("--out", type=Path, default=Path("site_out"), help="folder of the built site")
@@ -114,6 +119,17 @@ def run_start(given: argparse.Namespace) -> int:
     except StartRefused as refusal:
         raise Told(str(refusal)) from None
     print(f"{folder} stands. Next: beltbook check {folder}, or edit it with: beltbook desk")
+    return 0
+
+
+def run_docs(given: argparse.Namespace) -> int:
+    """Writes docs/tables.md, checks.md, sources.md and the editors' schemas."""
+    try:
+        written = steps.write_docs(given.keydata, given.out)
+    except steps.Stopped as stopped:
+        print(render_all(in_order(stopped.problems)))
+        return 1
+    print("\n".join(map(str, written)) if written else "every page was right already")
     return 0
 
 

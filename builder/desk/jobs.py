@@ -44,6 +44,7 @@ class Job:
     lines: deque[str] = field(default_factory=lambda: deque(maxlen=LINES_KEPT))
     ended: float | None = None
     code: int | None = None
+    finished: threading.Event = field(default_factory=threading.Event)
 
     @property
     def seconds(self) -> float:
@@ -59,12 +60,14 @@ class Job:
                 self.done, self.of, self.step = int(found[1]), int(found[2]), found[3]
             else:
                 self.lines.append(line)
+        self.process.stdout.close()
         self.code = self.process.wait()
         self.ended = time.monotonic()
         if self.state == "running":
             self.state = "done" if self.code == 0 else "failed"
             if self.code == 0:
                 self.done = self.of
+        self.finished.set()
 
     def stop(self) -> None:
         """Ends the command and all it started."""

@@ -18,8 +18,13 @@ class CannotOpen(Exception):  # noqa: N818 - told to the person
     """The desk cannot be opened as asked; the text says why and what to do."""
 
 
-def open_desk(given: Namespace, say: Callable[[str], None]) -> None:
-    """Serves until Ctrl-C. Raises CannotOpen with a sentence."""
+def open_desk(
+    given: Namespace, say: Callable[[str], None], set_booklets: list[Path] | None = None
+) -> None:
+    """Serves until Ctrl-C. Raises CannotOpen with a sentence.
+
+    set_booklets  folders of regions whose booklets are still to be made, while serving
+    """
     home = Path.cwd()
     settings = Settings(home=home, out=given.out.resolve())
     words = read_phrases()["opening"]
@@ -37,7 +42,7 @@ def open_desk(given: Namespace, say: Callable[[str], None]) -> None:
         address = given.open
         say(words["tls"])
     try:
-        serve(settings, given.port, address, say)
+        serve(settings, given.port, address, say, set_booklets)
     except CannotServe as refusal:
         raise CannotOpen(str(refusal)) from None
 

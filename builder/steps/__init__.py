@@ -6,6 +6,7 @@ Each only calls; values are made in the parts. Nothing here prints.
 from builder.steps.building import Built, build
 from builder.steps.calling import Called, UnknownName, call_file
 from builder.steps.checking import Checked, Stopped, check_region, check_regions
+from builder.steps.documents import write_docs
 from builder.steps.notes import (
     BuilderBusy,
     BuildNote,
@@ -31,4 +32,5 @@ __all__ = [
     "last_build",
     "regions_in",
     "tables_hash",
+    "write_docs",
 ]
