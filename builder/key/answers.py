@@ -128,7 +128,7 @@ def absent_points(key: Key, context: Context, p: int) -> Ints:
     if context.sown[p] or context.seen[p] == GONE:
         return np.zeros(key.zones, np.int32)
     if row is not None:
-        return key.newcomer_absent[row, v]
+        return np.asarray(key.newcomer_absent[row, v], np.int32)
     return key.absent[p, v - 1] if v else np.zeros(key.zones, np.int32)
 
 

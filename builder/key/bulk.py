@@ -79,16 +79,17 @@ def _call_batch(
     return judge_many(key, context, tables, heard, weighing)
 
 
-def _one_by_one(
-    key: Key, shared: Shared, plots: Plots, answers: int
-) -> dict[str, NDArray[Any]]:
+def _one_by_one(key: Key, shared: Shared, plots: Plots, answers: int) -> dict[str, NDArray[Any]]:
     """Sessions in which a rule may come to hold half way: asked as a person would be."""
     index = {name: at for at, name in enumerate(VERDICTS)}
     first, second, _ = key.pairs
     pair_at = {(int(i), int(j)): at for at, (i, j) in enumerate(zip(first, second, strict=True))}
     rows = []
     for at in range(len(plots)):
-        site = {**plots.site(at, None, None), **{k: shared.site[k] for k in ("month", "disturbance")}}
+        site = {
+            **plots.site(at, None, None),
+            **{k: shared.site[k] for k in ("month", "disturbance")},
+        }
         made, asked = ask(key, site, plots.steps[at], plots.cover[at], answers)
         pair = sorted(key.zone_at[one] for one in made["pair"] or [])
         rows.append(
@@ -165,9 +166,7 @@ def _best_pair(key: Key, gain: Floats, mask: Mask) -> tuple[Floats, NDArray[np.i
     return inside[np.arange(len(gain)), at], at
 
 
-def _named_columns(
-    key: Key, plots: Plots, made: dict[str, NDArray[Any]]
-) -> dict[str, list[Any]]:
+def _named_columns(key: Key, plots: Plots, made: dict[str, NDArray[Any]]) -> dict[str, list[Any]]:
     zones = np.array([zone["id"] for zone in key.pack["zones"]], object)
     rows = np.arange(len(plots))
     if not len(plots):

@@ -59,9 +59,7 @@ def _questions_in(when: dict[str, Any]) -> set[str]:
     return own.union(*(_questions_in(one) for one in inner))
 
 
-def _by_rules(
-    key: Key, plots: Plots, site: Site, rows: NDArray[np.int64]
-) -> Iterator[Shared]:
+def _by_rules(key: Key, plots: Plots, site: Site, rows: NDArray[np.int64]) -> Iterator[Shared]:
     part = plots.take(rows)
     fired = np.zeros((len(rows), len(key.pack["rules"])), bool)
     for r, rule in enumerate(key.pack["rules"]):
@@ -86,9 +84,9 @@ def _effect_by_evidence(key: Key, site: Site) -> bool:
 
 def _holds(key: Key, plots: Plots, site: Site, when: dict[str, Any]) -> Floats:
     if "all" in when:
-        return np.min([_holds(key, plots, site, one) for one in when["all"]], axis=0)
+        return np.asarray(np.min([_holds(key, plots, site, one) for one in when["all"]], axis=0))
     if "any" in when:
-        return np.max([_holds(key, plots, site, one) for one in when["any"]], axis=0)
+        return np.asarray(np.max([_holds(key, plots, site, one) for one in when["any"]], axis=0))
     if "not" in when:
         return np.asarray(1.0 - _holds(key, plots, site, when["not"]))
     if "plant" in when:

@@ -42,9 +42,7 @@ class Weighing:
     belief: Floats
 
 
-def weigh_many(
-    key: Key, context: Context, tables: AnswerTables, heard: Heard
-) -> Weighing:
+def weigh_many(key: Key, context: Context, tables: AnswerTables, heard: Heard) -> Weighing:
     """Belief of every plot of a batch from what was heard."""
     summed = tables.summed(heard.steps)
     points = summed.points + heard.ground.points

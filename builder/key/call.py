@@ -124,6 +124,4 @@ def _said(key: Key, verdict: str, stand: str | None) -> float:
 
 
 def _by_zone(key: Key, belief: Floats) -> dict[str, float]:
-    return {
-        zone["id"]: float(share) for zone, share in zip(key.pack["zones"], belief, strict=True)
-    }
+    return {zone["id"]: float(share) for zone, share in zip(key.pack["zones"], belief, strict=True)}

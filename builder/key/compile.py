@@ -19,11 +19,13 @@ from builder.key.compile_plants import compile_groups, compile_plants, newcomer_
 from builder.key.cover import cover_step
 from builder.key.defaults import HEAT_LOAD, REFERENCE_SLOPE_PCT, SESSION
 from builder.key.height import heat_load
+from builder.key.rounding import round_half_up
 from builder.key.sparse import shorten
 from builder.key.weigh import Evidence, Floats, Weights
 from builder.tables import Region
 
 PER_10000 = 10000
+HAND_WRITTEN = Weights()
 
 
 @dataclass(frozen=True)
@@ -59,7 +61,7 @@ class Fitted:
     session: dict[str, Any] = field(default_factory=dict)
 
 
-def arrays_of(region: Region, weights: Weights = Weights()) -> Arrays:
+def arrays_of(region: Region, weights: Weights = HAND_WRITTEN) -> Arrays:
     """Counts of a region typed by hand: constancy times an assumed number of plots."""
     zones = {zone.id: z for z, zone in enumerate(region.zones)}
     plants = {plant.id: p for p, plant in enumerate(region.plants)}
@@ -75,7 +77,9 @@ def arrays_of(region: Region, weights: Weights = Weights()) -> Arrays:
         present,
         np.full(len(zones), behind),
         cover_mean_pct=cover,
-        overlooked=np.array([missing if p.overlooked is None else p.overlooked for p in region.plants]),
+        overlooked=np.array(
+            [missing if p.overlooked is None else p.overlooked for p in region.plants]
+        ),
         wrongly_named=np.array(
             [_named_for_others(p.misnamed, weights) for p in region.plants], float
         ),
@@ -125,7 +129,8 @@ def compile_key(region: Region, fitted: Fitted | None = None) -> dict[str, Any]:
         "zones": _zones(region),
         "plants": plants,
         "groups": [
-            {"id": g.id, "use": g.use, "members": _indexes(region, g.members)} for g in region.groups
+            {"id": g.id, "use": g.use, "members": _indexes(region, g.members)}
+            for g in region.groups
         ],
         "evidence": {
             "plants": [shorten(table) for table in stacked(evidence)],
@@ -149,7 +154,7 @@ def stacked(evidence: Evidence) -> weigh.Ints:
     """
     found = evidence.found.copy()
     found[:, :4] -= found[:, 4:]
-    expected = weigh.round_half_up(evidence.presence * PER_10000)[:, None, :]
+    expected = round_half_up(evidence.presence * PER_10000)[:, None, :]
     return np.concatenate([found, evidence.absent, evidence.implied, expected], axis=1)
 
 
@@ -157,7 +162,7 @@ def _found_share(evidence: Evidence) -> list[Any]:
     """How often each cover step is given where the plant is reported, over the region."""
     seen = evidence.presence[:, None, :] * evidence.prior
     share = (seen * evidence.cover).sum(axis=2) / seen.sum(axis=2)
-    whole: list[Any] = weigh.round_half_up(np.maximum(share * 1000.0, 1.0)).tolist()
+    whole: list[Any] = round_half_up(np.maximum(share * 1000.0, 1.0)).tolist()
     return whole
 
 
@@ -174,7 +179,7 @@ def _settings(
         **SESSION,
         **(fitted.session if fitted else {}),
         "temper": weights.temper,
-        "area_cb": weigh.round_half_up(np.log(share) * weigh.CENTIBANS_PER_NAT).tolist(),
+        "area_cb": round_half_up(np.log(share) * weigh.CENTIBANS_PER_NAT).tolist(),
         "heat_load": _heat_load(region.latitude_deg),
         "fit": fitted.session.get("fit", []) if fitted else [],
     }

@@ -10,6 +10,7 @@ from builder.key import weigh
 from builder.key.compile_plants import MICRO
 from builder.key.context import trait_value
 from builder.key.defaults import PRICES
+from builder.key.rounding import round_half_up
 from builder.key.weigh import Evidence, Floats, Weights
 from builder.tables import Condition, Disturbance, Effect, Question, Region
 
@@ -80,8 +81,8 @@ def _answers(
     if tells:
         chance = question_chance(odds, share / share.sum(), weights.answer_error)
         nats = weigh.centred_nats(chance, evidence.prior)
-        points = weigh.round_half_up(weights.temper * nats * weigh.CENTIBANS_PER_NAT)
-        mean = weigh.round_half_up(chance @ evidence.prior * 10000)
+        points = round_half_up(weights.temper * nats * weigh.CENTIBANS_PER_NAT)
+        mean = round_half_up(chance @ evidence.prior * 10000)
     for at, one in enumerate(question.answers):
         row: dict[str, Any] = {"value": one.value}
         if tells:
@@ -106,7 +107,7 @@ def compile_rules(
         if rule.zone_log_odds:
             odds = np.exp(np.array(_by_zone(region, rule.zone_log_odds)))
             nats = weigh.centred_nats(odds, evidence.prior)
-            points = weigh.round_half_up(weights.temper * nats * weigh.CENTIBANS_PER_NAT)
+            points = round_half_up(weights.temper * nats * weigh.CENTIBANS_PER_NAT)
             row["evidence"] = points.tolist()
         if rule.effect is not None:
             row["effect"] = compile_effect(rule.effect, levels)
@@ -159,7 +160,7 @@ def compile_effect(effect: Effect, levels: list[float]) -> dict[str, Any]:
 
 
 def _quarters(share: float) -> int:
-    return int(weigh.round_half_up(4.0 * share))
+    return int(round_half_up(4.0 * share))
 
 
 def compile_disturbances(region: Region, levels: list[float]) -> list[dict[str, Any]]:

@@ -8,6 +8,7 @@ import numpy as np
 
 from builder.key import weigh
 from builder.key.defaults import PRICES, SESSION
+from builder.key.rounding import round_half_up
 from builder.key.sparse import shorten
 from builder.key.weigh import Evidence, Floats, Weights
 from builder.tables import Plant, Region
@@ -62,14 +63,14 @@ def price_nats(plant: Plant) -> float:
 def compile_groups(region: Region, evidence: Evidence, weights: Weights) -> list[dict[str, Any]]:
     """Evidence of "some of these" by group; empty where the group is no answer."""
     at = {plant.id: p for p, plant in enumerate(region.plants)}
-    made = []
+    made: list[dict[str, Any]] = []
     for group in region.groups:
         if group.use != "answer":
             made.append({"found": [], "expected": []})
             continue
         chance = group_chance(evidence.presence[[at[one] for one in group.members]])
         points = group_points(chance, evidence.prior, weights.temper)
-        expected = weigh.round_half_up(chance * 10000)
+        expected = round_half_up(chance * 10000)
         made.append({"found": points.tolist(), "expected": expected.tolist()})
     return made
 
@@ -98,7 +99,7 @@ def group_points(chance: Floats, prior: Floats, temper: float) -> weigh.Ints:
             low, high = (middle, high) if most(middle) <= SESSION["group_most"] else (low, middle)
     else:
         low = 1.0
-    return weigh.round_half_up(low * nats * weigh.CENTIBANS_PER_NAT)
+    return round_half_up(low * nats * weigh.CENTIBANS_PER_NAT)
 
 
 def newcomer_tables(
@@ -129,7 +130,7 @@ def newcomer_tables(
                 if half and not (plant.known_when_dry and tuple(plant.months) != (1, 12)):
                     continue
                 rows.append([int(p), level, half])
-                most = int(weigh.round_half_up(most_kept[level][p] * seen)) + 1
+                most = int(round_half_up(most_kept[level][p] * seen)) + 1
                 tables.append(shorten(np.concatenate([_risen(f[k, :most]), _risen(a[k, :most])])))
     return {"levels": levels, "rows": rows, "tables": tables}
 

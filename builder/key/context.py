@@ -12,7 +12,7 @@ from numpy.typing import NDArray
 from builder.key.prepare import Key, Site
 from builder.key.rounding import round_half_up
 
-Quarters = NDArray[np.int64]
+Quarters = NDArray[np.integer[Any]]
 NOW, DRY, GONE = 2, 1, 0
 
 
@@ -119,13 +119,13 @@ def told_answers(key: Key, site: Site) -> dict[str, str]:
     """Ground answers by question: the site's own, else what its disturbance answers beforehand."""
     states = (disturbance_of(key, site) or {}).get("states") or {}
     given = site.get("questions") or {}
-    told = {}
+    told: dict[str, str] = {}
     for question in key.pack["questions"]:
         values = [answer["value"] for answer in question["answers"]]
-        for value in (given.get(question["id"]), states.get(question["id"])):
-            if value in values:
-                told[question["id"]] = value
-                break
+        both = (given.get(question["id"]), states.get(question["id"]))
+        known = [value for value in both if value is not None and value in values]
+        if known:
+            told[question["id"]] = known[0]
     return told
 
 

@@ -31,9 +31,7 @@ def cover_shares_from_counts(counts: Floats, shrink_plots: float) -> Floats:
     by_plant = counts.sum(axis=2)
     pooled = by_plant.sum(axis=0) + 0.5
     pooled /= pooled.sum()
-    own = (by_plant + shrink_plots * pooled) / (
-        by_plant.sum(axis=1, keepdims=True) + shrink_plots
-    )
+    own = (by_plant + shrink_plots * pooled) / (by_plant.sum(axis=1, keepdims=True) + shrink_plots)
     return np.asarray(
         (counts + shrink_plots * own[:, :, None])
         / (counts.sum(axis=1, keepdims=True) + shrink_plots)

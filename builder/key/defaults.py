@@ -69,4 +69,4 @@ HEAT_LOAD: dict[str, float] = {
 """Equation 3 of McCune and Keon (2002), J. Veg. Sci. 13: 603-606; slopes to 60 degrees."""
 
 REFERENCE_SLOPE_PCT = 40.0
-"""Slope on which a zone's full north or south shift is taken to hold (common practice). [percent]"""
+"""Slope on which a zone's full north or south shift is taken to hold. [percent] common practice"""

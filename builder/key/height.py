@@ -21,7 +21,8 @@ def height_points(key: Key, site: Site, context: Context) -> Ints:
     if height is None or context.height_off:
         return np.zeros(key.zones, np.int32)
     at = np.array([height + context.elevation_shift_m], float)
-    return height_points_at(key, at, np.array([heat_share(key, site)]))[0]
+    points: Ints = height_points_at(key, at, np.array([heat_share(key, site)]))[0]
+    return points
 
 
 def height_points_at(key: Key, height_m: Floats, heat: Floats) -> Ints:
@@ -37,7 +38,8 @@ def height_points_at(key: Key, height_m: Floats, heat: Floats) -> Ints:
         steps = np.maximum(outside, 0.0) / zone["soft_edge_m"]
         nats = np.minimum(0.5 * steps * steps, settings["cap_nats"])
         points[:, z] = -round_half_up(nats / NATS_PER_CENTIBAN)
-    return np.maximum(points, points.max(axis=1, keepdims=True) - settings["most_cb"])
+    floor = points.max(axis=1, keepdims=True) - int(settings["most_cb"])
+    return np.asarray(np.maximum(points, floor), np.int32)
 
 
 def bands_at(key: Key, heat: float) -> list[tuple[float, float] | None]:
@@ -60,7 +62,8 @@ def heat_share(key: Key, site: Site) -> float:
         return 0.0
     heat = key.settings["heat_load"]
     gain = heat_load(heat, slope, aspect) - heat["level"]
-    return min(gain / heat["hot"], 1.0) if gain >= 0 else -min(-gain / heat["cool"], 1.0)
+    share: float = min(gain / heat["hot"], 1.0) if gain >= 0 else -min(-gain / heat["cool"], 1.0)
+    return share
 
 
 def heat_load(heat: dict[str, float], slope_pct: float, aspect_deg: float) -> float:

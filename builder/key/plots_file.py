@@ -54,7 +54,10 @@ def read_plots(
     if PLOT not in table.frame.columns:
         found = ", ".join(table.frame.columns[:6])
         wrong = f'the header has no column "{PLOT}" (it has {found})'
-        return None, [*problems, problem_at(Place(shown, table.header, 1), "plots-header", wrong, LONG_FIX)]
+        return None, [
+            *problems,
+            problem_at(Place(shown, table.header, 1), "plots-header", wrong, LONG_FIX),
+        ]
     rows, more = _wide(table, shown) if PLANT not in table.frame.columns else _long(table, shown)
     problems += more
     if rows is None:
@@ -95,7 +98,12 @@ def _long(table: Table, shown: str) -> tuple[pd.DataFrame | None, list[Problem]]
     column = list(frame.columns).index
     empty = [
         (PLOT, "plots-empty-cell", "the plot has no id", "Write the plot's id."),
-        (PLANT, "plots-empty-cell", "the plant has no name", "Write the plant's id, or drop the line."),
+        (
+            PLANT,
+            "plots-empty-cell",
+            "the plant has no name",
+            "Write the plant's id, or drop the line.",
+        ),
     ]
     problems: list[Problem] = []
     for name, check, wrong, fix in empty:
@@ -158,7 +166,9 @@ def _cover(
     ]
     for mask, check, wrong, fix in kinds:
         bad = np.flatnonzero(mask)
-        problems += _at(rows, bad, shown, check, [f'cover "{words[at]}" {wrong}' for at in bad], fix)
+        problems += _at(
+            rows, bad, shown, check, [f'cover "{words[at]}" {wrong}' for at in bad], fix
+        )
     return numbers, problems
 
 
@@ -189,7 +199,9 @@ def _at(
         Place(shown, int(rows["line"][at]), int(rows["column"][at]) if "column" in rows else 1)
         for at in bad
     ]
-    return _some([problem_at(*one, fix) for one in zip(places, [check] * len(bad), wrongs, strict=True)])
+    return _some(
+        [problem_at(*one, fix) for one in zip(places, [check] * len(bad), wrongs, strict=True)]
+    )
 
 
 def _some(problems: list[Problem]) -> list[Problem]:
@@ -200,4 +212,3 @@ def _some(problems: list[Problem]) -> list[Problem]:
     last = problems[SHOWN_OF_A_KIND]
     note = problem_at(last.place, last.check, f"{more} more lines like this one", last.fix)
     return [*problems[:SHOWN_OF_A_KIND], note]
-

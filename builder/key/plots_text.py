@@ -45,7 +45,10 @@ def read_table(path: Path) -> tuple[Table | None, list[Problem]]:
         (at for at, line in enumerate(lines) if line.strip() and not line.startswith("#")), None
     )
     if first is None or first == 200:
-        return None, [*problems, _stop(shown, "the file is empty", "Write a header and one line a finding.")]
+        return None, [
+            *problems,
+            _stop(shown, "the file is empty", "Write a header and one line a finding."),
+        ]
     separator = max(SEPARATORS, key=lambda one: lines[first].count(one))
     body = text.split("\n", first)[first]
     head = next(csv.reader(io.StringIO(body), delimiter=separator))

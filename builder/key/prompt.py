@@ -70,7 +70,10 @@ def mutual_information(key: Key, belief: Floats, v: int, bound: int) -> Floats:
     chance, certain = plant_chances(key, v, bound)
     flat = key.kept.get(("flat", v, bound))
     if flat is None:
-        flat = np.ascontiguousarray(chance.reshape(-1, key.zones).T), np.ascontiguousarray(certain.T)
+        flat = (
+            np.ascontiguousarray(chance.reshape(-1, key.zones).T),
+            np.ascontiguousarray(certain.T),
+        )
         key.kept["flat", v, bound] = flat
     shares = (belief @ flat[0]).reshape(len(belief), key.plants, 5)
     logs = np.log(np.where(shares > 0, shares, 1.0))

@@ -55,9 +55,7 @@ def _group_holds(key: Key, findings: Findings, when: dict[str, Any]) -> float:
     return FALSE if found + still_open < wanted else UNKNOWN
 
 
-def _cover_holds(
-    key: Key, findings: Findings, members: list[int], when: dict[str, Any]
-) -> float:
+def _cover_holds(key: Key, findings: Findings, members: list[int], when: dict[str, Any]) -> float:
     """Summed cover of the members, between the lower and upper limits of their classes."""
     least, most, found = 0.0, 0.0, False
     for p in members:

@@ -10,7 +10,7 @@ from collections.abc import Mapping
 from builder.formulas.cover import SIX_CLASSES
 
 SCALES: dict[str, dict[str, float]] = {
-    "six_class": {str(row["code"]): float(row["mid_pct"]) for row in SIX_CLASSES},
+    "six_class": {str(row["code"]): float(str(row["mid_pct"])) for row in SIX_CLASSES},
     "braun_blanquet": {
         "r": 0.05,
         "+": 0.55,

@@ -29,7 +29,9 @@ def ask(
     is passed over and is no answer.
     """
     told = site.get("questions") or {}
-    states = {q["id"] for q in key.pack["questions"] if not any("evidence" in a for a in q["answers"])}
+    states = {
+        q["id"] for q in key.pack["questions"] if not any("evidence" in a for a in q["answers"])
+    }
     known = {name: value for name, value in told.items() if name in states}
     record: dict[str, Any] = {**site, "questions": known, "findings": []}
     names = most_plentiful(key, site, steps, cover)[: min(key.settings["named_first"], answers)]

@@ -93,4 +93,3 @@ def observe(
     steps = np.where(found, cover_step(cover), ABSENT).astype(np.int8)
     ids = [f"s{at:06d}" for at in range(len(present))]
     return Plots(ids, steps, cover.astype(np.float32))
-

@@ -12,7 +12,7 @@ from numpy.typing import NDArray
 from scipy.sparse import csr_array
 
 from builder.key.answers import NO_COVER, azonal_share
-from builder.key.context import GONE, Context
+from builder.key.context import GONE, Context, Quarters
 from builder.key.prepare import Floats, Ints, Key
 from builder.key.rounding import round_half_up
 
@@ -122,7 +122,7 @@ def _newcomers(key: Key, context: Context) -> Ints:
 def _found(key: Key, context: Context) -> Ints:
     base = key.found[:, NO_COVER, None]
     cover, weight = (one[:, None, None] for one in (context.cover_weight, context.found_weight))
-    points = base + _quarters(key.found - base, cover)
+    points = np.asarray(base + _quarters(key.found - base, cover), np.int32)
     rows = _newcomers(key, context)[:, 1]
     here = rows >= 0
     points[here] = key.newcomer_found[rows[here], context.kept[here]][:, None, :]
@@ -133,9 +133,7 @@ def _found(key: Key, context: Context) -> Ints:
 
 def _absent(key: Key, context: Context) -> Ints:
     plants = np.arange(key.plants)
-    points = np.where(
-        (context.v > 0)[:, None], key.absent[plants, np.maximum(context.v - 1, 0)], 0
-    )
+    points = np.where((context.v > 0)[:, None], key.absent[plants, np.maximum(context.v - 1, 0)], 0)
     rows = _newcomers(key, context)[:, 0]
     here = rows >= 0
     points[here] = key.newcomer_absent[rows[here], context.v[here]]
@@ -143,11 +141,11 @@ def _absent(key: Key, context: Context) -> Ints:
     return points
 
 
-def _quarters(points: Ints, weight: NDArray[np.int64]) -> Ints:
+def _quarters(points: Ints, weight: Quarters) -> Ints:
     return np.where(weight == 4, points, round_half_up(points * weight / 4.0))
 
 
-def _logs(key: Key, v: NDArray[np.int64]) -> tuple[Floats, Floats]:
+def _logs(key: Key, v: Quarters) -> tuple[Floats, Floats]:
     """Logs of chances [plant, 6, zone] and of shared plots [plant, 6, pair]."""
     made = key.kept.get("logs")
     if made is None:

@@ -58,7 +58,7 @@ def _zones_of(check: Site) -> list[str]:
 
 def _same_side(a: Site, b: Site, apart_m: float) -> bool:
     places = [one.get("place") or {} for one in (a, b)]
-    points = [(one.get("latitude_deg"), one.get("longitude_deg")) for one in places]
+    points: list[Any] = [(one.get("latitude_deg"), one.get("longitude_deg")) for one in places]
     if any(value is None for point in points for value in point):
         return False
     (lat_a, lon_a), (lat_b, lon_b) = points

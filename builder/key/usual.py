@@ -91,4 +91,3 @@ def _by_zone(zones: Any, surprise: Any, miss: Any) -> dict[str, list[float]]:
         made[name] = [round(float(one.mean()), DIGITS) for one in groups]
         made[f"{name}_sd"] = [round(max(float(one.std()), LEAST_SPREAD), DIGITS) for one in groups]
     return made
-

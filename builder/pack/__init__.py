@@ -6,8 +6,8 @@ whole). Its hash is the first 16 hex digits of SHA-256.
     format 1
     region       id, edition, date, latitude_deg, elevation_m, units, invented, languages,
                  address, sensitive_rounding_deg, plots_behind
-    settings     every figure of the method: builder.key.defaults.SESSION and temper, area_cb [zone],
-                 heat_load, fit (usual surprise and miss, by plants asked and zone)
+    settings     every figure of the method: builder.key.defaults.SESSION and temper,
+                 area_cb [zone], heat_load, fit (usual surprise and miss, by plants asked and zone)
     cover        scale_id, classes [code, low_pct, high_pct, mid_pct, step 0..3]
     zones        id, letter, kind, band_m, centre_m, soft_edge_m, shifts, neighbours [index]
     plants       id, form, layer, months, known_when_dry, weed, mix, fate, response, groups and
@@ -34,6 +34,7 @@ Read evidence through builder.key.prepare (or core/prepare.js), never by hand.
 texts.<language>.json: see builder.pack.texts.
 """
 
-from builder.pack.compile import compile_pack, compile_texts, pack_bytes, pack_hash, texts_bytes
+from builder.pack.compile import compile_pack, pack_bytes, pack_hash, texts_bytes
+from builder.pack.texts import compile_texts
 
 __all__ = ["compile_pack", "compile_texts", "pack_bytes", "pack_hash", "texts_bytes"]

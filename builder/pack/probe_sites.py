@@ -22,11 +22,9 @@ def make_probes(pack: Pack, arrays: Arrays) -> list[dict[str, Any]]:
     """Probes that between them meet every verdict that came up, and every month, disturbance,
     look-alike group and question of the pack, height, and plots searched whole or struck."""
     key = prepare(pack)
-    candidates = [
-        (site, probe_answer(pack, site)) for site in candidate_sites(key, pack, arrays)
-    ]
+    candidates = [(site, probe_answer(pack, site)) for site in candidate_sites(key, pack, arrays)]
     met: set[Any] = set()
-    chosen = []
+    chosen: list[dict[str, Any]] = []
     rest = list(candidates)
     while rest:
         gains = [len(_features(site, answer) - met) for site, answer in rest]

@@ -1,4 +1,4 @@
-"""What the field sheets stand on: occurrence, the season, ground water, limits of tags and piles."""
+"""What field sheets stand on: occurrence, the season, ground water, limits of tags and piles."""
 
 from __future__ import annotations
 

@@ -37,13 +37,20 @@ def field(demo, pack):
         picked = rng.integers(0, len(values) + 2, count)
         answers[name] = [values[at] if at < len(values) else None for at in picked]
     disturbance = [kinds[at % 5] for at in range(count)]
-    return Plots(
-        plots.ids, steps, plots.cover, place, np.arange(count) % 13, disturbance, answers
-    )
+    return Plots(plots.ids, steps, plots.cover, place, np.arange(count) % 13, disturbance, answers)
 
 
 def row(made, at):
-    names = ("verdict", "zone_id", "belief", "next_zone_id", "fit", "pair", "finds_cb", "zone_share")
+    names = (
+        "verdict",
+        "zone_id",
+        "belief",
+        "next_zone_id",
+        "fit",
+        "pair",
+        "finds_cb",
+        "zone_share",
+    )
     return {name: made[name][at] for name in names}
 
 
@@ -53,7 +60,9 @@ def one(called):
 
 
 def row_names(called):
-    return [n for n in ("verdict", "zone_id", "next_zone_id", "fit", "pair", "finds_cb", "zone_share")]
+    return [
+        n for n in ("verdict", "zone_id", "next_zone_id", "fit", "pair", "finds_cb", "zone_share")
+    ]
 
 
 @pytest.mark.parametrize("answers", [1, 3, 8])
@@ -75,7 +84,9 @@ def test_all_plants_in_bulk_are_a_plot_searched_whole(pack, field):
         site = field.site(at, None, None)
         names = most_plentiful(key, site, field.steps[at], field.cover[at])[:3]
         rows = [
-            finding(key, p, field.steps[at], field.cover[at], names.index(p) + 1 if p in names else None)
+            finding(
+                key, p, field.steps[at], field.cover[at], names.index(p) + 1 if p in names else None
+            )
             for p in range(key.plants)
         ]
         site["findings"] = [row for row in rows if row["state"] != "cant_tell"]
@@ -99,7 +110,8 @@ def test_no_plots_and_plots_without_plants(pack):
     assert call_plots(pack, none)["verdict"] == []
     bare = np.full((2, plants), -2, np.int8)
     made = call_plots(pack, Plots(["a", "b"], bare, np.zeros((2, plants), np.float32)), answers=8)
-    assert made["verdict"] == ["thin", "thin"] and made["answers"] == [0, 0]
+    assert made["verdict"] == ["thin", "thin"]
+    assert made["answers"] == [0, 0]
 
 
 def test_simulated_sites_are_called_right(demo, pack):
@@ -117,7 +129,8 @@ def test_simulated_sites_are_called_right(demo, pack):
 def test_progress_is_told_and_ends_whole(pack, field):
     told = []
     call_plots(pack, field, progress=lambda done, whole: told.append((done, whole)))
-    assert told[-1] == (64, 64) and [done for done, _ in told] == sorted(done for done, _ in told)
+    assert told[-1] == (64, 64)
+    assert [done for done, _ in told] == sorted(done for done, _ in told)
 
 
 def test_ten_thousand_plots_do_not_take_minutes(demo, pack):

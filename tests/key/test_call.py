@@ -1,4 +1,4 @@
-"""What a call must hold to: silence of the unsearched, sums that add up, thin without a headline."""
+"""What a call must hold to: silence of the unsearched, sums that add up."""
 
 import copy
 import random
@@ -151,7 +151,8 @@ def test_what_is_named_says_something_of_what_is_not(pack):
 def test_thin_evidence_is_said(pack):
     weeds = [p["id"] for p in pack["plants"] if p["weed"] == "ruderal"][:3]
     made = call(pack, {"findings": [found(one, "1") for one in weeds]})
-    assert made["verdict"] == "thin" and not made["look_again"]
+    assert made["verdict"] == "thin"
+    assert not made["look_again"]
 
 
 def test_drag_stops_at_its_cap(pack):

@@ -79,7 +79,8 @@ def test_a_rule_flips_the_call_and_can_be_struck_out(pack):
     made = call(pack, site)
     assert made["rules_fired"] == ["sown_stand"]
     struck = call(pack, {**site, "struck": ["sown_stand"]})
-    assert struck["rules_fired"] == [] and struck["belief"] != made["belief"]
+    assert struck["rules_fired"] == []
+    assert struck["belief"] != made["belief"]
 
 
 def test_question_odds_make_probabilities():
@@ -93,9 +94,7 @@ def test_question_odds_make_probabilities():
 @pytest.mark.parametrize("question", ["water_table", "salt_crust", "shallow_lime", "deep_sand"])
 def test_each_azonal_question_can_flip_a_call(pack, question):
     values = [a for q in pack["questions"] if q["id"] == question for a in q["answers"]]
-    leaders = {
-        call(pack, {"questions": {question: one["value"]}})["zone_id"] for one in values
-    }
+    leaders = {call(pack, {"questions": {question: one["value"]}})["zone_id"] for one in values}
     assert len(leaders) > 1
 
 
@@ -121,14 +120,17 @@ def test_heat_load_is_that_of_the_formulas(pack):
     for slope in (0, 10, 30):
         for aspect in range(0, 360, 45):
             ours = heat_load({**heat, "latitude_deg": 40}, 100 * np.tan(np.radians(slope)), aspect)
-            assert ours == pytest.approx(formula_heat_load(40, slope, aspect if slope else None), abs=1e-12)
+            assert ours == pytest.approx(
+                formula_heat_load(40, slope, aspect if slope else None), abs=1e-12
+            )
 
 
 def test_warm_slopes_lift_the_band_and_cool_ones_lower_it(pack):
     key = prepare(pack)
     hot = heat_share(key, {"place": {"slope_pct": 40, "aspect_deg": 225}})
     cool = heat_share(key, {"place": {"slope_pct": 40, "aspect_deg": 45}})
-    assert hot == pytest.approx(1, abs=1e-6) and cool == pytest.approx(-1, abs=1e-6)
+    assert hot == pytest.approx(1, abs=1e-6)
+    assert cool == pytest.approx(-1, abs=1e-6)
     assert heat_share(key, {"place": {"slope_pct": 40}}) == 0
     zone = pack["zones"][0]
     assert bands_at(key, hot)[0][0] == pytest.approx(zone["band_m"][0] + zone["south_shift_m"])

@@ -42,7 +42,8 @@ SAME = [("p1", "a", 5.0), ("p1", "b", None), ("p2", "a", 0.0)]
 )
 def test_long_files_of_every_make(tmp_path, text, encoding):
     made, problems = read_plots(written(tmp_path, text, encoding))
-    assert problems == [] and rows(made) == SAME
+    assert problems == []
+    assert rows(made) == SAME
 
 
 def test_a_wide_table_reads_the_same(tmp_path):
@@ -98,13 +99,15 @@ def test_torn_lines_are_named_and_the_rest_is_read(tmp_path):
 )
 def test_files_that_hold_no_plots(tmp_path, text, place):
     made, problems = read_plots(written(tmp_path, text))
-    assert made is None and places(problems) == [place]
+    assert made is None
+    assert places(problems) == [place]
 
 
 def test_a_missing_file_and_a_folder(tmp_path):
     for path in (tmp_path / "none.csv", tmp_path):
         made, problems = read_plots(path)
-        assert made is None and len(problems) == 1
+        assert made is None
+        assert len(problems) == 1
 
 
 def test_classes_need_their_scale(tmp_path):
@@ -128,7 +131,8 @@ def test_scales_by_name_the_regions_own_first():
 def test_many_faults_of_a_kind_are_counted(tmp_path):
     lines = "".join(f"p{at},a,200\n" for at in range(300))
     _, problems = read_plots(written(tmp_path, "plot_id,plant_id,cover_pct\n" + lines))
-    assert len(problems) == 51 and "250 more" in problems[-1].wrong
+    assert len(problems) == 51
+    assert "250 more" in problems[-1].wrong
 
 
 def test_binding_to_the_plants_of_a_pack(tmp_path, demo):
@@ -150,7 +154,8 @@ def test_binding_to_the_plants_of_a_pack(tmp_path, demo):
 def test_known_zones(tmp_path):
     path = written(tmp_path, "plot_id,zone_id\np1,x\np2,y\np1,y\np3,\n")
     zones, lines, problems = read_zones(path)
-    assert zones == {"p1": "x", "p2": "y"} and lines["p2"] == 3
+    assert zones == {"p1": "x", "p2": "y"}
+    assert lines["p2"] == 3
     assert places(problems) == [(4, 1, "plots-twice"), (5, 1, "plots-empty-cell")]
 
 
@@ -171,5 +176,7 @@ def test_a_site_table_and_its_faults(tmp_path, demo, pack):
         (3, 4, "error"),
         (4, 1, "caution"),
     ]
-    assert sited.place["height_m"][1] == 2000.5 and np.isnan(sited.place["height_m"][0])
-    assert sited.answers["water_table"] == [None, "lt30"] and sited.disturbance[1] == "burn"
+    assert sited.place["height_m"][1] == 2000.5
+    assert np.isnan(sited.place["height_m"][0])
+    assert sited.answers["water_table"] == [None, "lt30"]
+    assert sited.disturbance[1] == "burn"

@@ -23,7 +23,8 @@ def test_only_plants_that_can_be_seen_this_month(pack, month):
         if (p["months"][0] <= month <= p["months"][1]) or p["months"] == [1, 12]
     }
     asked = plants_of(pack, {"month": month})
-    assert asked and asked <= inside
+    assert asked
+    assert asked <= inside
 
 
 def test_what_was_answered_is_not_asked_again(pack):

@@ -96,7 +96,8 @@ def test_a_constancy_of_0_or_100_never_vetoes(one, other, shrink):
     made = weigh.evidence([[one, 0]], [one, other], weights)
     assert np.abs(made.found).max() < 400
     assert made.found[0, 4, 0] >= 0 >= made.found[0, 4, 1]
-    assert (made.presence > 0).all() and (made.presence < 1).all()
+    assert (made.presence > 0).all()
+    assert (made.presence < 1).all()
 
 
 @given(st.lists(st.floats(0, 20), min_size=3, max_size=3))
@@ -118,7 +119,8 @@ def test_newcomers_hold_their_absence_back_and_find_little_alone():
     made = weigh.evidence([[19, 1]], [20, 20])
     arrival = np.array([[0.3, 0.3]])
     found, absent = weigh.newcomer_evidence(made.presence, arrival, weigh.Weights())
-    assert found[0, 0].tolist() == [0, 0] and absent[0, 0].tolist() == [0, 0]
+    assert found[0, 0].tolist() == [0, 0]
+    assert absent[0, 0].tolist() == [0, 0]
     assert np.ptp(found[0, 4]) < np.ptp(made.found[0, 4])
     p = made.presence[0]
     by_hand = 1 - (1 - p * 0.5) * (1 - 0.3)
@@ -159,8 +161,9 @@ def test_corrections_are_added_after_tau():
 
 
 @pytest.mark.parametrize(
-    ("present", "plots"), [([[1, 2]], [3]), ([[5, 1]], [4, 4]), ([[1, 1]], [0, 4]), ([[-1, 1]], [4, 4])]
+    ("present", "plots"),
+    [([[1, 2]], [3]), ([[5, 1]], [4, 4]), ([[1, 1]], [0, 4]), ([[-1, 1]], [4, 4])],
 )
 def test_counts_that_cannot_be_are_refused(present, plots):
-    with pytest.raises(ValueError):
+    with pytest.raises(ValueError, match="must be|at least|cannot"):
         weigh.evidence(present, plots)
