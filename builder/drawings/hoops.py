@@ -18,6 +18,7 @@ POINTS_SMALL = 6
 SMALL_MM = 8.0
 TRIES = 6000
 GAP = 0.5
+PLACES = 3
 WOBBLE = 0.14
 
 
@@ -128,13 +129,13 @@ def _outline(
 def _middles(points: list[tuple[float, float]]) -> list[tuple[float, float]]:
     following = points[1:] + points[:1]
     return [
-        (round((a + c) / 2, 2), round((b + d) / 2, 2))
+        (round((a + c) / 2, PLACES), round((b + d) / 2, PLACES))
         for (a, b), (c, d) in zip(points, following, strict=True)
     ]
 
 
 def _rounded(points: list[tuple[float, float]]) -> list[tuple[float, float]]:
-    return [(round(x, 2), round(y, 2)) for x, y in points]
+    return [(round(x, PLACES), round(y, PLACES)) for x, y in points]
 
 
 def _area(points: list[tuple[float, float]]) -> float:
@@ -156,7 +157,8 @@ def _cross(a: tuple[float, float], b: tuple[float, float]) -> float:
 
 def _written(points: list[tuple[float, float]]) -> str:
     middles = _middles(points)
-    parts = [f"M{num(middles[-1][0])} {num(middles[-1][1])}"]
+    parts = [f"M{num(middles[-1][0], PLACES)} {num(middles[-1][1], PLACES)}"]
     for control, end in zip(points, middles, strict=True):
-        parts.append(f"Q{num(control[0])} {num(control[1])} {num(end[0])} {num(end[1])}")
+        figures = " ".join(num(value, PLACES) for value in (*control, *end))
+        parts.append(f"Q{figures}")
     return "".join(parts) + "z"
