@@ -18,6 +18,11 @@ export async function readFile(path) {
   return response.text();
 }
 
+/** True in field.html, which carries all its files inside. */
+export function isSingleFile() {
+  return document.querySelector('script[data-path]') !== null;
+}
+
 /** The regions of this site, as the builder listed them. @returns {Promise<object[]>} */
 export async function readRegions() {
   return JSON.parse(await readFile('regions.json')).regions;

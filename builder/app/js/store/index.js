@@ -25,7 +25,7 @@ import { opened } from './tx.js';
 export { fetchTables, tablesAtStart, tablesInUse, tablesOf, useTables } from './editions.js';
 export { exportRecords, initialsOf, readRecords, takeIn } from './exchange.js';
 export { Fault, faultOf } from './faults.js';
-export { readFile, readRegions, readWords } from './files.js';
+export { isSingleFile, readFile, readRegions, readWords } from './files.js';
 export { newId } from './ids.js';
 export { addPhoto, captionPhoto, photosOf, photoUrl, removePhoto } from './photos.js';
 export { askForRoom, storageLasts } from './room.js';

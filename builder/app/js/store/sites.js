@@ -7,6 +7,8 @@ import { stamp } from './time.js';
 import { inStore } from './tx.js';
 
 export const FORMAT = 1;
+/** This page's own mark: what it goes on changing after a conflict stays one side, the latest. */
+const PAGE = newId();
 
 /**
  * A new, unsaved site check with nothing answered. Saving it gives revision 1.
@@ -82,7 +84,7 @@ export async function saveSite(store, site) {
         sites.put(next);
       } else if (!stored || canonical(stored) !== canonical(next)) {
         outcome.conflict = stored ?? next;
-        sides.put(sideOf(next, 'tab'));
+        sides.put(sideOf(next, 'tab', PAGE));
       }
     };
     return outcome;
@@ -117,7 +119,7 @@ export function mergeSites(store, incoming) {
         const mine = event.target.result;
         const verdict = mine ? standing(mine, theirs) : 'new';
         if (verdict === 'new' || verdict === 'theirs') sites.put(theirs);
-        if (verdict === 'conflict') sides.put(sideOf(theirs, 'file'));
+        if (verdict === 'conflict') sides.put(sideOf(theirs, 'file', checksum(canonical(theirs))));
         const list = { new: 'added', theirs: 'replaced', mine: 'kept', same: 'same', conflict: 'conflicts' }[verdict];
         result[list].push(theirs.id);
       };
@@ -156,8 +158,8 @@ export async function settleSide(store, key, keep) {
   });
 }
 
-function sideOf(site, origin) {
-  return { key: `${site.id} ${checksum(canonical(site))}`, site_id: site.id, origin, received_at: stamp(), site };
+function sideOf(site, origin, mark) {
+  return { key: `${site.id} ${mark}`, site_id: site.id, origin, received_at: stamp(), site };
 }
 
 /** A short mark so that the same side arriving twice is one row; no security rests on it. */

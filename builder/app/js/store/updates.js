@@ -1,6 +1,7 @@
 /**
  * New versions of the app: noticed, told, and put to use only when the person says so.
  */
+import { isSingleFile } from './files.js';
 
 /**
  * Registers the service worker and watches for a new version.
@@ -12,7 +13,7 @@
  */
 export async function watchVersions(tell) {
   const workers = globalThis.navigator?.serviceWorker;
-  if (!workers || !globalThis.isSecureContext || !location.protocol.startsWith('http')) return null;
+  if (!workers || !globalThis.isSecureContext || !location.protocol.startsWith('http') || isSingleFile()) return null;
   const wasControlled = Boolean(workers.controller);
   workers.addEventListener('controllerchange', () => (wasControlled ? tell.onReplaced() : tell.onOffline?.()));
   const registration = await workers.register(workerUrl(), { updateViaCache: 'none' });
