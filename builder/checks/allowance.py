@@ -13,7 +13,7 @@ from collections.abc import Iterator
 from builder.problems import Problem, problem_at
 from builder.tables import Loaded
 
-ID = "allowance"
+ID = "double-allowance"
 NEEDS = ("reclaim", "region")
 
 

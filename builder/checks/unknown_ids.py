@@ -6,7 +6,6 @@ from collections.abc import Iterator
 
 from builder.problems import Problem, nearest, problem_at
 from builder.tables import Loaded
-from builder.tables.references import references
 
 HOME = {
     "zones": "zones.yaml",
@@ -19,10 +18,8 @@ HOME = {
 
 def unknown(loaded: Loaded, table: str, what: str, check: str) -> Iterator[Problem]:
     """A problem for each id of a table that is used and not declared; look-alikes aside."""
-    if loaded.partial is None:
-        return
     known = loaded.declared(table)
-    for said in references(loaded.partial):
+    for said in loaded.references:
         if said.table == table and said.id not in known and said.field != "lookalikes":
             yield problem_at(
                 said.place,

@@ -7,6 +7,7 @@ for the person.
 
 from __future__ import annotations
 
+from functools import lru_cache
 from typing import Any
 
 from builder.problems import Problem, errors
@@ -180,7 +181,9 @@ def end_of(node: Node, text: str) -> int:
     return end_of(list(below)[-1], text)
 
 
+@lru_cache(maxsize=8)
 def _parsed(text: str) -> Row:
+    """The table's rows; kept, since what one change hands out is what the next one starts from."""
     root, problems = parse_yaml(text, "table")
     stop: list[Problem] = errors(problems)
     if root is None or any(problem.check in ("readable", "double-key") for problem in stop):

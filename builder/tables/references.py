@@ -3,10 +3,10 @@
 from __future__ import annotations
 
 from collections.abc import Iterator
-from typing import Any, NamedTuple
+from typing import NamedTuple
 
 from builder.problems import Place
-from builder.tables.regions import Region
+from builder.rows import Items, Node, Row, Value
 from builder.tables.shape import Keyed, Kind, Many, Part, Record, Ref, columns
 
 
@@ -19,44 +19,38 @@ class Reference(NamedTuple):
     field: str
 
 
-def references(region: Region) -> Iterator[Reference]:
-    """All references of a region, table by table."""
-    records: list[Record | None] = list(region.files.values())
-    records += list(region.words.values())
-    for months in region.climate.values():
-        records += months
-    for record in records:
-        if record is not None:
-            yield from _of_record(record)
+def references(record: type[Record], row: Row) -> Iterator[Reference]:
+    """All references of a row that is read as a record, as they are written."""
+    for name, kind, _ in columns(record):
+        node = row.get(name)
+        if node is not None and _may_refer(kind):
+            yield from _of_node(kind, node, name)
 
 
-def _of_record(record: Record) -> Iterator[Reference]:
-    for name, kind, item in columns(type(record)):
-        if name in record.row:
-            yield from _of_value(kind, getattr(record, item.name), record, (name,), name)
-
-
-def _of_value(
-    kind: Kind, value: Any, record: Record, path: tuple[str | int, ...], name: str
-) -> Iterator[Reference]:
-    if value is None:
-        return
+def _of_node(kind: Kind, node: Node, name: str) -> Iterator[Reference]:
     match kind:
         case Ref(table):
-            yield Reference(table, value, record.place(*path), name)
-        case Part():
-            yield from _of_record(value)
+            if isinstance(node, Value) and isinstance(node.value, str):
+                yield Reference(table, node.value, node.at, name)
+        case Part(record):
+            if isinstance(node, Row):
+                yield from references(record, node)
         case Many(of):
-            if isinstance(of, Part):
-                for each in value:
-                    yield from _of_record(each)
-            else:
-                for position, each in enumerate(value):
-                    yield from _of_value(of, each, record, (*path, position), name)
+            if isinstance(node, Items) and _may_refer(of):
+                for below in node:
+                    yield from _of_node(of, below, name)
         case Keyed(of, table):
-            for key, each in value.items():
-                if table:
-                    yield Reference(table, key, record.key_place(*path, key), name)
-                yield from _of_value(of, each, record, (*path, key), name)
-        case _:
-            return
+            if isinstance(node, Row):
+                deeper = _may_refer(of)
+                for key, below in node.items():
+                    if key == "source":
+                        continue
+                    if table:
+                        yield Reference(table, key, node.keys[key].at, name)
+                    if deeper:
+                        yield from _of_node(of, below, name)
+
+
+def _may_refer(kind: Kind) -> bool:
+    """Whether a kind can hold references at all, so that plain values are passed by."""
+    return isinstance(kind, Ref | Part | Many | Keyed)

@@ -3,11 +3,12 @@
 from __future__ import annotations
 
 from dataclasses import dataclass, field
+from functools import cached_property
 from pathlib import Path
-from typing import Any, TypeVar
+from typing import Any, NamedTuple, TypeVar
 
 from builder.problems import Place, Problem, errors, in_order, nearest, problem_at
-from builder.rows import Items, Node, Row, Sheet, Value, read_csv, read_yaml
+from builder.rows import Items, Node, Row, Sheet, Value, parse_yaml, read_csv, read_text
 from builder.tables.climate import Month
 from builder.tables.languages import Words
 from builder.tables.occurrence import Occurrence, OccurrenceFile
@@ -16,6 +17,7 @@ from builder.tables.production import Production, ProductionFile
 from builder.tables.questions import Question, QuestionsFile, Rule
 from builder.tables.reading import Reader
 from builder.tables.reclaim import ReclaimFile
+from builder.tables.references import Reference, references
 from builder.tables.region import CoverScale, Disturbance, RegionHead, SuccessRule
 from builder.tables.seed import Mix, SeedFile
 from builder.tables.shape import Record
@@ -190,6 +192,20 @@ class Loaded:
     partial: Region | None = field(default=None, repr=False)
     read: frozenset[str] = frozenset()
 
+    @cached_property
+    def references(self) -> list[Reference]:
+        """Every id that a table says of another one."""
+        found: list[Reference] = []
+        for name, made in YAML_TABLES.items():
+            root = self.roots.get(name)
+            if root is not None:
+                found += references(made, root)
+        for row in self.climate_sheet.rows if self.climate_sheet is not None else ():
+            found += references(Month, row)
+        for words in self.partial.words.values() if self.partial is not None else ():
+            found += references(Words, words.row)
+        return found
+
     def declared(self, table: str) -> set[str]:
         """Ids that stand in a table, read or not, so that one bad row brings no second problem."""
         return set(declared_ids(self.roots, table))
@@ -224,11 +240,8 @@ def load_region(folder: Path | str) -> Loaded:
         )
         return Loaded(folder, shown, None, [problem])
     for name, made in YAML_TABLES.items():
-        path = folder / f"{name}.yaml"
-        root, problems = read_yaml(path, str(path), folder)
+        roots[name], files[name], problems = _read_table(folder, f"{name}.yaml", made)
         reader.problems += problems
-        roots[name] = root
-        files[name] = reader.record(made, root, f"{name}.yaml") if root is not None else None
     path = folder / "climate.csv"
     sheet, problems = read_csv(path, str(path), folder)
     reader.problems += problems
@@ -304,12 +317,46 @@ def _climate(sheet: Sheet, reader: Reader) -> dict[str, tuple[Month, ...]]:
     return {zone: tuple(sorted(rows, key=lambda each: each.month)) for zone, rows in months.items()}
 
 
+class _Read(NamedTuple):
+    """A table as it was read from a text."""
+
+    text: str
+    root: Row | None
+    record: Any
+    problems: list[Problem]
+
+
+# A file whose text has not changed is not read again: on the desk one save changes one table of
+# eleven, and reading them all takes most of a second with 40 zones and 400 plants.
+_READ: dict[str, _Read] = {}
+_KEPT = 200
+
+
+def _read_table(
+    folder: Path, file: str, made: type[Record]
+) -> tuple[Row | None, Any, list[Problem]]:
+    path = folder / file
+    shown = str(path)
+    text, problems = read_text(path, shown, folder)
+    if text is None:
+        return None, None, problems
+    kept = _READ.get(shown)
+    if kept is None or kept.text != text:
+        reader = Reader()
+        root, found = parse_yaml(text, shown)
+        record = reader.record(made, root, file) if root is not None else None
+        kept = _Read(text, root, record, found + reader.problems)
+        if len(_READ) >= _KEPT:
+            _READ.clear()
+        _READ[shown] = kept
+    return kept.root, kept.record, problems + kept.problems
+
+
 def _languages(folder: Path, reader: Reader) -> dict[str, Words]:
     found: dict[str, Words] = {}
     for path in sorted((folder / "words").glob("*.yaml")):
-        root, problems = read_yaml(path, str(path), folder)
+        _, words, problems = _read_table(folder, f"words/{path.name}", Words)
         reader.problems += problems
-        words = reader.record(Words, root, path.name) if root is not None else None
         if words is not None:
             found[path.stem] = words
     return found
