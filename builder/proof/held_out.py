@@ -52,15 +52,14 @@ def session_figures(
 
     session  drag and weight of implication; near: neighbours of each zone
     """
+    thin = SESSION["thin"]
     usual = _usual_rows(parts, session, near)
     made: dict[str, Any] = {**session, "fit": usual}
     for _ in range(TURNS):
         cases = _measured(parts, made, near, rng)
-        made |= fit_lines({name: told for name, (told, _) in cases.items()})
-    made["thin"] = {
-        **SESSION["thin"],
-        "finds_cb": thin_line(cases["zone"][1], SESSION["thin"]["finds_cb"]),
-    }
+        made |= fit_lines({name: told for name, (told, _, _) in cases.items()})
+    _, finds, stated = cases["zone"]
+    made["thin"] = {**thin, "finds_cb": thin_line(finds, stated, thin)}
     return made
 
 
@@ -115,9 +114,9 @@ def _pulled(values: Floats, zone: Whole, zones: int) -> tuple[Floats, Floats]:
 
 def _measured(
     parts: list[Part], session: dict[str, Any], near: Sequence[set[int]], rng: np.random.Generator
-) -> dict[str, tuple[Floats, NDArray[Any]]]:
-    """Measures [case, 3] and finds [case] of held-out cases by true verdict."""
-    made: dict[str, list[tuple[Floats, NDArray[Any]]]] = {}
+) -> dict[str, tuple[Floats, Floats, Floats]]:
+    """Measures [case, 3], finds and stated belief [case] of held-out cases by true verdict."""
+    made: dict[str, list[tuple[Floats, Floats, Floats]]] = {}
     for part in parts:
         key = part.key(session, near)
         made.setdefault("zone", []).append(_told(key, part.plots))
@@ -135,14 +134,18 @@ def _measured(
                 blind = withheld_key(part, session, near, z)
                 made.setdefault("misfit", []).append(_told(blind, part.plots.take(rows)))
     return {
-        name: (np.concatenate([m for m, _ in rows]), np.concatenate([f for _, f in rows]))
+        name: (
+            np.concatenate([one[0] for one in rows]),
+            np.concatenate([one[1] for one in rows]),
+            np.concatenate([one[2] for one in rows]),
+        )
         for name, rows in made.items()
     }
 
 
-def _told(key: Key, plots: Plots) -> tuple[Floats, NDArray[Any]]:
+def _told(key: Key, plots: Plots) -> tuple[Floats, Floats, Floats]:
     calls = call_sites(key, plots, ANSWERS)
-    return measures(key, calls), calls.finds_cb
+    return measures(key, calls), calls.finds_cb.astype(float), calls.stated
 
 
 def withheld_key(part: Part, session: dict[str, Any], near: Sequence[set[int]], z: int) -> Key:

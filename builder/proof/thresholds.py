@@ -18,7 +18,7 @@ from builder.proof.calls import Calls
 
 NAMES = ("edge", "mosaic", "misfit")
 TRUTHS = ("zone", *NAMES)
-SHARES = {"zone": 0.34, "edge": 0.30, "mosaic": 0.18, "misfit": 0.18}
+SHARES = {"zone": 0.37, "edge": 0.29, "mosaic": 0.16, "misfit": 0.18}
 """How much each kind of case weighs; a plot inside a zone is what a crew meets most."""
 PULL = 0.02
 DIGITS = 3
@@ -66,6 +66,11 @@ def fit_lines(cases: Mapping[str, Floats]) -> dict[str, dict[str, float]]:
     }
 
 
-def thin_line(finds_cb: NDArray[Any], most: float) -> int:
-    """Finds below which a call is thin: what few sound plots fall short of, at most the default."""
-    return int(min(np.quantile(finds_cb, THIN_SHARE), most))
+def thin_line(finds_cb: NDArray[Any], stated: Floats, thin: dict[str, float]) -> int:
+    """Finds below which a call is thin: what few sound plots fall short of, at most the default.
+
+    finds_cb, stated  [site] finds and belief in the leader; a confident call is never thin
+    thin              the default line: finds_cb, and the belief that makes a call confident
+    """
+    doubtful = np.where(stated >= thin["belief"], np.inf, finds_cb)
+    return int(min(np.quantile(doubtful, THIN_SHARE, method="lower"), thin["finds_cb"]))
