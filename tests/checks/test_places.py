@@ -50,7 +50,7 @@ CASES = [
     ("soil-layers", "soils.yaml", "{top_cm: 25, bottom_cm: 100,", "{top_cm: @30, bottom_cm: 100,"),
     ("soil-layers", "soils.yaml", "sand_pct: 62,", "sand_pct: @72,"),
     ("seed-counts", "seed.yaml", "plants: {blue_grama: 150,", "plants: {@skunkbush: 150,"),
-    ("allowance", "reclaim.yaml", "reference: 0.8, share: 1,", "reference: @0.8,"),
+    ("double-allowance", "reclaim.yaml", "reference: 0.8, share: 1,", "reference: @0.8,"),
     ("success-rules", "region.yaml", "  share: 0.9\n", ""),
     ("disturbance-states", "region.yaml", "{stripped: 'yes'}", "{stripped: @'maybe'}"),
     ("traits", "questions.yaml", "kept: {killed: 0.05", "kept: {@kilt: 0.05"),
