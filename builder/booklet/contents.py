@@ -108,6 +108,7 @@ class BookletView:
     form: "FormView"
     sources: tuple[grounds.SourceView, ...]
     cautions_of_build: tuple[str, ...]
+    filler: bool = False
 
 
 class Words:
@@ -160,7 +161,7 @@ def booklet_view(
         signs=_signs(look, own),
         region_warns=tuple(grounds.region_warns(look)),
         people_warns=tuple(grounds.people_warns(look)),
-        zones=tuple(spread(zone) for zone in zones),
+        zones=tuple(spread(_linked(zone, {each.id for each in zones})) for zone in zones),
         year_note=own.say("zone.year_note", unit=look.figures.rain_unit),
         chart=(drawn := plants.chart(look, CHART_WIDTH)),
         chart_pages=chart_pages(drawn, trim, own.say("chart.note")),
@@ -174,15 +175,29 @@ def booklet_view(
     )
 
 
-def with_pages(book: BookletView, look: Look, pages: Mapping[str, int]) -> BookletView:
-    """The same booklet with page numbers where it speaks of pages."""
+def with_pages(
+    book: BookletView, look: Look, pages: Mapping[str, int], filler: bool
+) -> BookletView:
+    """The same booklet with page numbers where it speaks of pages.
+
+    filler  a page for notes ends the front, so that the first zone opens on the left
+    """
     own = phrases(look.phrases.language, WORDS)
     return replace(
         book,
+        filler=filler,
         belts=_belts(look, tuple(each.zone for each in book.zones), pages),
         rest=_rest(own, pages),
         steps=_steps(own, pages),
     )
+
+
+def _linked(zone: ZoneView, printed: set[str]) -> ZoneView:
+    """The zone with links to those neighbours only that are printed too."""
+    kin = tuple(
+        each if each.zone_id in printed else replace(each, anchor="") for each in zone.kin
+    )
+    return replace(zone, kin=kin)
 
 
 def spread(zone: ZoneView) -> Spread:

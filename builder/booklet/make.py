@@ -10,7 +10,7 @@ from jinja2 import Environment, FileSystemLoader, StrictUndefined, select_autoes
 
 from builder.booklet import fonts, style
 from builder.booklet.contents import WORDS, BookletView, booklet_view, with_pages
-from builder.booklet.render import Press, bound, no_sweeping, pages_of, written
+from builder.booklet.render import Document, Press, bound, no_sweeping, pages_of, written
 from builder.tables import Region
 from builder.views.look import Look, look
 from builder.views.phrases import phrases
@@ -111,14 +111,16 @@ def _reading_order(
     )
     book = booklet_view(seen, trim, mark, {}, chosen, cautions)
     body_html = _html("body.html", book)
-    front_pages = FRONT_PAGES
+    front_pages, filler = FRONT_PAGES, False
     for _ in range(MOST_LAYOUTS):
         body = press.laid_out(
             body_html, front_pages + 1, lambda page, add=front_pages: tell("layout", page + add, 0)
         )
         pages = pages_of(body, front_pages + 1)
-        front_html = _html("front.html", with_pages(book, seen, pages))
-        front = press.laid_out(front_html, 1, lambda page: tell("front", page, 0))
+        front = _front(press, with_pages(book, seen, pages, filler), tell)
+        if len(front.pages) % 2 == 0:
+            filler = True
+            front = _front(press, with_pages(book, seen, pages, filler), tell)
         if len(front.pages) == front_pages:
             break
         front_pages = len(front.pages)
@@ -131,6 +133,10 @@ def _reading_order(
     pdf = written(whole)
     tell("write", count, count)
     return pdf, count, pages
+
+
+def _front(press: Press, book: BookletView, tell: Progress) -> Document:
+    return press.laid_out(_html("front.html", book), 1, lambda page: tell("front", page, 0))
 
 
 def _html(template: str, book: BookletView) -> str:

@@ -46,6 +46,7 @@ class Kin:
     tab: Markup
     short: str
     tell: str
+    anchor: str
 
 
 @dataclass(frozen=True)
@@ -163,7 +164,7 @@ def zone_view(look: Look, zone_id: str) -> ZoneView:
         why_here=zone.why_here,
         limits=say("zone.limits", list=", ".join(zone.limits)) if zone.limits else "",
         kin=tuple(
-            Kin(other, look.tab(other), look.zone_short(other), tell)
+            Kin(other, look.tab(other), look.zone_short(other), tell, f"zone-{other}")
             for other, tell in zone.told_from.items()
         ),
         plants=tuple(rows[:PLANTS_SHOWN]),
