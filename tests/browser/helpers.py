@@ -7,6 +7,7 @@ import http.server
 import os
 import shutil
 import signal
+import sys
 import threading
 from pathlib import Path
 from urllib.parse import unquote, urlsplit
@@ -65,6 +66,17 @@ class Handler(http.server.BaseHTTPRequestHandler):
         """Tests look at `asked`, not at a log."""
 
 
+class Patient(http.server.ThreadingHTTPServer):
+    """A server for browsers that are killed in the middle of an answer."""
+
+    daemon_threads = True
+
+    def handle_error(self, request, client_address):
+        error = sys.exception()
+        if not isinstance(error, ConnectionError):
+            super().handle_error(request, client_address)
+
+
 class Server:
     """Serves a folder or a dict of files on loopback; can be stopped and started at one address."""
 
@@ -89,8 +101,7 @@ class Server:
         return file.read_bytes() if file.is_file() else None
 
     def start(self):
-        self.http = http.server.ThreadingHTTPServer(("127.0.0.1", self.port), Handler)
-        self.http.daemon_threads = True
+        self.http = Patient(("127.0.0.1", self.port), Handler)
         self.http.owner = self
         self.port = self.http.server_address[1]
         threading.Thread(target=self.http.serve_forever, args=(0.02,), daemon=True).start()

@@ -1,0 +1,54 @@
+"""The Book can be read with scripts off, and leads from page to page."""
+
+import posixpath
+import re
+
+
+def test_the_first_page_without_script_leads_to_every_book_page(browser, site, demo_files, tmp_path):
+    phone = browser.phone(tmp_path / "profile", java_script_enabled=False)
+    page = phone.page
+    page.goto(site.address)
+    page.get_by_role("link", name="Sorrel Plateau").click()
+    page.wait_for_url("**/book/index.html")
+    assert page.locator("h1").inner_text() == "Sorrel Plateau"
+    assert "Invented district" in page.locator("footer").inner_text()
+    reached, waiting = set(), ["regions/sorrel_plateau/book/index.html"]
+    while waiting:
+        path = waiting.pop()
+        if path in reached:
+            continue
+        reached.add(path)
+        for link in re.findall(r'href="([^"#]+)', demo_files[path].decode()):
+            target = posixpath.normpath(posixpath.join(posixpath.dirname(path), link))
+            assert target in demo_files or target.endswith("/booklet.pdf"), f"{path} leads to {target}"
+            if "/book/" in target:
+                waiting.append(target)
+    assert reached == {path for path in demo_files if "/book/" in path and "/book/es/" not in path}
+    assert len(reached) > 30
+    assert phone.errors == []
+
+
+def test_a_zone_page_says_what_the_tables_say(browser, site, region, demo_files, tmp_path):
+    page = browser.phone(tmp_path / "profile", java_script_enabled=False).page
+    for zone in region.zones:
+        page.goto(f"{site.address}regions/sorrel_plateau/book/zone-{zone.id}.html")
+        said = page.locator("main").inner_text()
+        assert zone.name in said
+        assert zone.one_line in said
+        assert zone.why_here in said
+    page.goto(f"{site.address}regions/sorrel_plateau/book/cautions.html")
+    said = page.locator("main").inner_text()
+    deadly = [p for p in region.plants if any(c.who == "people" and c.level == "deadly" for c in p.cautions)]
+    assert len(deadly) > 0
+    for plant in deadly:
+        assert plant.common in said
+
+
+def test_book_pages_fit_a_narrow_phone(browser, site, demo_files, tmp_path):
+    page = browser.phone(tmp_path / "profile", viewport={"width": 320, "height": 640}).page
+    wide = []
+    for path in [path for path in demo_files if "/book/" in path]:
+        page.goto(site.address + path)
+        if page.evaluate("document.documentElement.scrollWidth") > 320:
+            wide.append(path)
+    assert wide == []
