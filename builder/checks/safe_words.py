@@ -19,15 +19,23 @@ ID = "safe-words"
 NEEDS = ()
 SAFE = re.compile(
     r"""(?xi)
-    \b(?:edible|eatable|harmless|non-?toxic|non-?poisonous|not\ (?:poisonous|toxic|deadly)
-      | palatable\ to\ (?:people|man) | tasty | delicious | (?:good|nice|safe|sweet|pleasant)\ to\
-      (?:eat|taste|chew|drink|touch|handle) | can\ be\ (?:eaten|chewed|tasted|drunk)
-      | may\ be\ (?:eaten|chewed|tasted) | (?:eat|chew|taste|nibble|lick)\ (?:the|a|its|some|it)\b
-      | (?:tastes?|tasting)\ (?:of|like|sweet|good|bitter|salty|sour)
-      | comestibles? | inofensiv[oa]s? | no\ (?:es\ )?(?:venenos|tóxic)[oa]s?
-      | sabros[oa]s? | se\ (?:puede|pueden)\ comer | bueno?s?\ para\ comer | sabor\ agradable
-      | sabe\ a\b | prueb[ae]\ (?:la|el|un|una)\b
-    )""",
+      \b(?:edible | eatable | harmless | non-?toxic | non-?poisonous | medicinal(?:es)?)\b
+    | \bnot\s(?:poisonous|toxic|deadly)\b
+    | \b(?:tasty|delicious|palatable\sto\s(?:people|man)|good\seating)\b
+    | \b(?:good|nice|safe|sweet|pleasant|fine)\sto\s(?:eat|taste|chew|drink|touch|handle)\b
+    | \b(?:can|may)\sbe\s(?:eaten|chewed|tasted|drunk)\b
+    | (?:^|[.;:!?]\s)(?:eat|chew|taste|nibble|lick)\s(?:the|a|its|some|it|this)\b
+    | \b(?:tastes?|tasting)\s(?:of|like|sweet|good|bitter|salty|sour)\b
+    | \beaten\s(?:raw|cooked|by\speople)\b
+    | \b(?:used\s)?as\s(?:food|tea|a\sremedy)\b
+    | \bmakes?\s(?:a\s)?(?:good|fine|nice)\s(?:tea|jam|jelly|food|salad)\b
+    | \bsafe\sfor\s(?:people|children|dogs)\b
+    | \b(?:comestibles?|inofensiv[oa]s?|sabros[oa]s?|sabor\sagradable)\b
+    | \bno\s(?:(?:es|son)\s)?(?:venenos|tóxic)[oa]s?\b
+    | \bse\s(?:puede|pueden)\scomer\b
+    | \b(?:buen[oa]s?\spara\scomer|apt[oa]s?\spara\s(?:el\s)?consumo)\b
+    | \b(?:sabe\sa|prueb[ae]\s(?:la|el|un|una))\b
+    """,
 )
 NOT_SAID = re.compile(r"(?i)\b(never|do not|don't|nothing|no|nunca)\W+(?:\w+\W+){0,2}$")
 SKIPPED = {"id", "scientific", "synonyms", "codes", "members", "lookalikes"}
