@@ -5,6 +5,6 @@ a whole; a build that fails leaves the old site as it was.
 """
 
 from builder.site.build import SiteReport, build_site
-from builder.site.region import SiteRegion, site_region
+from builder.site.region import SiteRegion
 
-__all__ = ["SiteRegion", "SiteReport", "build_site", "site_region"]
+__all__ = ["SiteRegion", "SiteReport", "build_site"]

@@ -40,13 +40,18 @@ def build_site(regions: Sequence[SiteRegion], out: Path, app: Path = APP) -> Sit
     """Write the site of these regions into `out`, whole or not at all.
 
     regions  in the order the chooser shows them
-    out      folder of the site; README.md and the regions' booklets in it are left alone
+    out      folder of the site; README.md and the regions' PDFs in it are left alone
 
     Same packs and sources, same bytes; files that are already right are not written again.
     """
     files = site_files(regions, app)
-    kept = {"README.md", *(f"regions/{region.id}/{BOOKLET}" for region in regions)}
-    changed = put_in_place(out, files, keeps=lambda path: path in kept)
+    folders = {f"regions/{region.id}" for region in regions}
+
+    def keeps(path: str) -> bool:
+        folder, _, name = path.rpartition("/")
+        return path == "README.md" or (folder in folders and name.endswith(".pdf"))
+
+    changed = put_in_place(out, files, keeps)
     return SiteReport(changed=changed, sizes={path: _sizes(files[path]) for path in sorted(files)})
 
 

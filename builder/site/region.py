@@ -1,16 +1,12 @@
-"""One region made ready for the site: pack, texts and Book pages from the same tables."""
+"""One region as the site takes it: pack, texts and Book pages from the same tables."""
 
 from __future__ import annotations
 
-import hashlib
 import json
 from collections.abc import Mapping
 from dataclasses import dataclass, field
-from typing import Any
 
-from builder.pack import pack_bytes, texts_bytes
-from builder.site.book import book_pages
-from builder.tables import Region
+from builder.pack import pack_hash
 
 
 @dataclass(frozen=True)
@@ -34,7 +30,7 @@ class SiteRegion:
     @property
     def hash(self) -> str:
         """What records name as pack_hash."""
-        return hashlib.sha256(self.pack).hexdigest()[:16]
+        return pack_hash(self.pack)
 
     def files(self) -> dict[str, bytes]:
         """The region's files by path in the site."""
@@ -43,17 +39,3 @@ class SiteRegion:
         files.update({f"{folder}/texts.{tag}.json": text for tag, text in self.texts.items()})
         files.update({f"{folder}/book/{name}": page for name, page in self.book.items()})
         return files
-
-
-def site_region(
-    region: Region, fitted: Any = None, proof: dict[str, Any] | None = None
-) -> SiteRegion:
-    """A region's tables as the files of its folder in the site.
-
-    fitted, proof  as builder.pack takes them: what known plots put in place of the tables' counts
-    """
-    return SiteRegion(
-        pack=pack_bytes(region, fitted, proof),
-        texts={tag: texts_bytes(region, tag) for tag in region.head.languages},
-        book=book_pages(region),
-    )

@@ -13,6 +13,10 @@ from pathlib import Path
 import pytest
 from browser.helpers import Browser, Server
 
+from builder.site.build import site_files
+from builder.steps import check_region
+from builder.steps.building import compile_region
+
 ROOT = Path(__file__).parent.parent.parent
 DEMO = "sorrel_plateau"
 
@@ -53,18 +57,13 @@ def serve():
 @pytest.fixture(scope="session")
 def region():
     """The demo region's tables."""
-    from builder.tables import load_region
-
-    return load_region(ROOT / "keydata" / DEMO).region
+    return check_region(ROOT / "keydata" / DEMO).region
 
 
 @pytest.fixture(scope="session")
-def demo_files(region):
+def demo_files():
     """The demo site as path -> bytes, built once from the tables."""
-    from builder.site.build import site_files
-    from builder.site.region import site_region
-
-    return site_files([site_region(region)])
+    return site_files([compile_region(check_region(ROOT / "keydata" / DEMO))])
 
 
 @pytest.fixture(scope="session")

@@ -9,8 +9,8 @@ import pytest
 from browser.helpers import Crew, key_site, known_site, records
 
 from builder.site.build import site_files
-from builder.site.region import site_region
-from builder.tables import load_region
+from builder.steps import check_region
+from builder.steps.building import compile_region
 
 
 @pytest.fixture(scope="module")
@@ -26,9 +26,9 @@ def next_files(request, tmp_path_factory):
     text, n = re.subn(r"mtnsage: \[9\d, ", "mtnsage: [40, ", table.read_text("utf-8"), count=1)
     assert n == 1
     table.write_text(text, "utf-8")
-    loaded = load_region(folder)
-    assert loaded.region is not None, loaded.problems
-    return site_files([site_region(loaded.region)])
+    checked = check_region(folder)
+    assert not checked.stops, checked.problems
+    return site_files([compile_region(checked)])
 
 
 def hash_of(files):
