@@ -45,6 +45,8 @@ def build(folders: Sequence[Path], out: Path, progress: Progress, booklets: bool
     progress  called with steps done, steps in all, and what is being done
     booklets  False leaves the booklets as they are
     """
+    if out.exists() and not out.is_dir():
+        raise NotADirectoryError(f"{out} is a file; the site needs a folder")
     of = 2 + len(folders) * (2 if booklets else 1)
     progress(0, of, "checking tables")
     checked = check_regions(folders)
@@ -89,7 +91,7 @@ def compile_region(checked: Checked) -> SiteRegion:
     region = region_of(checked)
     languages = [name for name in region.head.languages if name in {ENGLISH, *region.words}]
     return SiteRegion(
-        pack=pack_bytes(region, checked.fitted),
+        pack=pack_bytes(region, checked.fitted, checked.proof),
         texts={name: texts_bytes(region, name) for name in languages},
         book=book_pages(region),
     )

@@ -26,6 +26,7 @@ COLUMNS = (
     "next_zone_id",
     "next_belief",
     "answers",
+    "fit",
 )
 
 

@@ -5,11 +5,13 @@ from __future__ import annotations
 from collections.abc import Sequence
 from dataclasses import dataclass
 from pathlib import Path
+from typing import Any
 
 from builder.checks import checked_region
 from builder.key.compile import Fitted
 from builder.key.fitted import read_fit
 from builder.problems import Problem, errors, in_order
+from builder.proof.kept import read_proof, with_session
 from builder.tables import Loaded, Region
 
 
@@ -20,6 +22,7 @@ class Checked:
     loaded: Loaded
     problems: list[Problem]
     fitted: Fitted | None = None
+    proof: dict[str, Any] | None = None
 
     @property
     def region(self) -> Region | None:
@@ -46,7 +49,13 @@ def check_region(folder: Path) -> Checked:
     if loaded.region is None:
         return Checked(loaded, loaded.problems)
     fitted, problems = read_fit(folder, loaded.region)
-    return Checked(loaded, in_order([*loaded.problems, *problems]), fitted)
+    kept, more = read_proof(folder)
+    return Checked(
+        loaded,
+        in_order([*loaded.problems, *problems, *more]),
+        with_session(loaded.region, fitted, kept),
+        kept.figures if kept else None,
+    )
 
 
 def check_regions(folders: Sequence[Path]) -> list[Checked]:
