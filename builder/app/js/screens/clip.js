@@ -21,10 +21,10 @@ export function ClipSheet({ stand }) {
   const add = () => put({ plots: [...plots, { estimated_g: null, clipped_g: null }] });
   return html`<${Frame} tab="production" edge=${false} class="whole-width" title=${t('clip.title')} line=${site.value.name} back=${`#/site/${site.value.id}/production`}>
     <${Handling}/>
-    <section class="part stack"><div class="pair"><${Field} label=${t('clip.area')} mode="decimal" unit="m²" value=${production.plot_m2 ?? own?.clip?.area_m2 ?? ''} onChange=${(text) => put({ plot_m2: readNumber(text, 0.01, 1000) })}/>
-      <${Field} label=${t('clip.dry')} mode="decimal" unit="%" value=${Math.round((production.air_dry_share ?? 1) * 100)} onChange=${(text) => put({ air_dry_share: share(text) })}/>
-      <${Field} label=${t('clip.ungrazed')} mode="decimal" unit="%" value=${Math.round((production.ungrazed_share ?? 1) * 100)} onChange=${(text) => put({ ungrazed_share: share(text) })}/>
-      <${Field} label=${t('clip.done')} mode="decimal" unit="%" value=${Math.round((production.growth_done_share ?? 1) * 100)} onChange=${(text) => put({ growth_done_share: share(text) })}/></div>
+    <section class="part stack"><div class="pair"><${Field} label=${t('clip.area')} mode="decimal" unit="m²" value=${production.plot_m2 ?? own?.clip?.area_m2 ?? ''} limits=${[0.01, 1000]} onChange=${(text) => put({ plot_m2: readNumber(text, 0.01, 1000) })}/>
+      <${Field} label=${t('clip.dry')} mode="decimal" unit="%" value=${Math.round((production.air_dry_share ?? 1) * 100)} limits=${PERCENT} onChange=${(text) => put({ air_dry_share: share(text) })}/>
+      <${Field} label=${t('clip.ungrazed')} mode="decimal" unit="%" value=${Math.round((production.ungrazed_share ?? 1) * 100)} limits=${PERCENT} onChange=${(text) => put({ ungrazed_share: share(text) })}/>
+      <${Field} label=${t('clip.done')} mode="decimal" unit="%" value=${Math.round((production.growth_done_share ?? 1) * 100)} limits=${PERCENT} onChange=${(text) => put({ growth_done_share: share(text) })}/></div>
       <p class="small quiet">${t('clip.how', { every: own?.clip?.every ?? 5 })}</p></section>
     <section class="part"><table class="sheet-table"><thead><tr><th>${t('clip.plot')}</th><th>${t('clip.guess')}</th><th>${t('clip.clipped')}</th><th>${yieldSign()}</th></tr></thead>
       <tbody>${plots.map((row, i) => html`<tr key=${i}><td>${i + 1}</td><td><${Grams} label=${t('clip.guess_n', { n: i + 1 })} value=${row.estimated_g} onChange=${(value) => set(i, { estimated_g: value })}/></td>
@@ -33,13 +33,15 @@ export function ClipSheet({ stand }) {
     <section class="part stack"><h2>${t('clip.so_far')}</h2><p>${sheetWords(sheet)}</p><p class="small quiet">${t('clip.aims', { precision: Math.round(aims(production).precision * 100), confidence: Math.round(aims(production).confidence * 100) })}</p></section></${Frame}>`;
 }
 
+const PERCENT = [1, 100];
+
 const share = (text) => {
-  const pct = readNumber(text, 1, 100);
+  const pct = readNumber(text, ...PERCENT);
   return pct === null ? 1 : pct / 100;
 };
 
 function Grams({ label, value, onChange }) {
-  return html`<${Typed} mode="decimal" label=${label} value=${value ?? ''} placeholder="–" onChange=${(text) => onChange(readNumber(text, 0, 100000))}/>`;
+  return html`<${Typed} mode="decimal" label=${label} value=${value ?? ''} placeholder="–" limits=${[0, 100000]} onChange=${(text) => onChange(readNumber(text, 0, 100000))}/>`;
 }
 
 function airDry(row, production, own) {

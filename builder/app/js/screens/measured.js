@@ -23,5 +23,5 @@ export function Measured({ record }) {
   return html`<section class="part stack"><h2 class="sides">${t('measured.title')}${sheet && html`<span class="label">${t('measured.plots', { n: sheet.plots })}</span>`}</h2>
     ${sheet?.more > 0 && html`<p class="small">${t('measured.more', { n: sheet.more, precision: Math.round(sheet.precision * 100) })}</p>`}
     <p class="deep"><a class="btn go" href=${`#/site/${site.value.id}/production/clip`}>${t(sheet ? 'measured.sheet_on' : 'measured.sheet')}</a></p>
-    ${!sheet && html`<${Field} label=${t('measured.typed')} mode="decimal" unit=${yieldSign()} value=${production.measured_kg_ha == null ? '' : number(yieldShown(production.measured_kg_ha)).replace(/\D/g, '')} onChange=${type}/>`}</section>`;
+    ${!sheet && html`<${Field} label=${t('measured.typed')} mode="decimal" unit=${yieldSign()} value=${production.measured_kg_ha == null ? '' : number(yieldShown(production.measured_kg_ha)).replace(/\D/g, '')} limits=${[0, 100000]} onChange=${type}/>`}</section>`;
 }

@@ -13,7 +13,7 @@ export function Tag({ lot, plant, strict, onKeep, onShut }) {
   const [tag, setTag] = useState(tagOf(lot));
   const put = (patch) => setTag({ ...tag, ...patch });
   const share = (name) => html`<${Field} key=${name} label=${t(`tag.${name}`)} mode="decimal" unit="%" value=${tag[name] == null ? '' : Math.round(tag[name] * 1000) / 10}
-    onChange=${(text) => { const pct = readNumber(text, 0, 100); put({ [name]: pct === null ? null : pct / 100 }); }}/>`;
+    limits=${[0, 100]} onChange=${(text) => { const pct = readNumber(text, 0, 100); put({ [name]: pct === null ? null : pct / 100 }); }}/>`;
   return html`<div class="tagform stack"><${Field} label=${t('tag.lot')} value=${tag.lot ?? ''} onChange=${(text) => put({ lot: text })}/>
     <${Field} label=${t('tag.kind')} value=${tag.kind ?? ''} hint=${t('tag.kind_why', { name: plant.scientific })} onChange=${(kind) => put({ kind, generic: strict && isGeneric(kind, plant.scientific) })}/>
     <${Field} label=${t('tag.origin')} value=${tag.origin ?? ''} onChange=${(origin) => put({ origin })}/>

@@ -25,7 +25,7 @@ export function Height({ region, record }) {
     <p class="small">${heightLine(region, record)}</p>
     <div class="pair"><button type="button" class="btn" onClick=${locate} disabled=${state === 'asking'}><${Icon} name="pin"/>${t(state === 'asking' ? 'place.asking' : 'place.here')}</button>
       <${Field} label=${t('place.height_typed')} mode="decimal" unit=${heightUnit()} value=${place.height_m === null ? '' : heightShown(place.height_m)}
-        onChange=${(text) => change({ place: { ...place, height_m: heightFrom(readNumber(text, -1500, 30000)) } })}/></div>
+        limits=${[-1500, 30000]} onChange=${(text) => change({ place: { ...place, height_m: heightFrom(readNumber(text, -1500, 30000)) } })}/></div>
     ${['refused', 'no_signal', 'none'].includes(state) && html`<p class="hint care"><${Icon} name="warn"/><span>${t(`place.${state}`)}</span></p>`}
     ${place.latitude_deg !== null && html`<p class="small quiet">${t('place.position', { latitude: place.latitude_deg.toFixed(5), longitude: place.longitude_deg.toFixed(5) })}</p>`}
   </section>`;

@@ -25,8 +25,8 @@ export function Success({ stand }) {
       ${kept.against === 'reference' && html`<p class="small">${referenceWords(here, stand.zone, record)}</p>`}</section>
     <section class="part stack"><${Numbers} label=${t('success.values', { unit })} values=${kept.values} onValues=${(values) => put({ values })}/>
       ${kept.against === 'reference' ? html`<${Numbers} label=${t('success.reference_values', { unit })} values=${kept.reference} onValues=${(reference) => put({ reference })}/>`
-        : html`<${Field} label=${t('success.standard_value')} mode="decimal" unit=${unit} value=${kept.standard ?? ''} onChange=${(text) => put({ standard: readNumber(text, 0, 1e6) })}/>`}
-      <${Field} label=${t('success.years_since')} mode="decimal" value=${kept.years_since ?? ''} onChange=${(text) => put({ years_since: readNumber(text, 0, 200) })}/></section>
+        : html`<${Field} label=${t('success.standard_value')} mode="decimal" unit=${unit} value=${kept.standard ?? ''} limits=${[0, 1e6]} onChange=${(text) => put({ standard: readNumber(text, 0, 1e6) })}/>`}
+      <${Field} label=${t('success.years_since')} mode="decimal" value=${kept.years_since ?? ''} limits=${[0, 200]} onChange=${(text) => put({ years_since: readNumber(text, 0, 200) })}/></section>
     <section class="part stack"><${Outcome} kept=${kept} rule=${rule}/></section>
     <section class="part small quiet stack"><p>${here.texts.region.success_rule}</p><p>${t('success.aims', { share: number((rule.share ?? 1) * 100), alpha: rule[`alpha_${rule.null_kind}`] })}</p><p>${t('reclaim.defer')}</p></section></${Frame}>`;
 }

@@ -1,6 +1,7 @@
 /** Every sentence of the screens comes from one words file; this looks it up and fills its places.
  *  A key that is missing throws: a page with a hole in it must not pass a test. */
 import { signal } from '@preact/signals';
+import { rounded } from '../core/rounding.js';
 
 export const words = signal({});
 export const language = signal('en');
@@ -48,9 +49,9 @@ export function has(key) {
   return key.split('.').reduce((entry, part) => entry?.[part], words.value) !== undefined;
 }
 
-/** A figure as people write it. @param {number} value  @param {number} [decimals] digits after the point */
+/** A figure as people write it, by the one rounding rule. @param {number} value  @param {number} [decimals] digits after the point */
 export function number(value, decimals = 0) {
-  return maker('NumberFormat', { minimumFractionDigits: decimals, maximumFractionDigits: decimals }).format(value);
+  return maker('NumberFormat', { minimumFractionDigits: decimals, maximumFractionDigits: decimals }).format(rounded(value, decimals));
 }
 
 /** "a, b and c". @param {string[]} parts */

@@ -1,0 +1,97 @@
+"""Figures on the screens: what is typed wrong is named at the field, and worked cases read right."""
+
+import json
+
+import pytest
+from browser.helpers import Browser
+from browser.test_screens import record, show
+
+SAGE = "b0000000-0000-4000-8000-000000000000"
+YEAR = {"rain_share": 0.7, "rain_source": "gauge", "measured_kg_ha": 496}
+PLOTS = [42, 38, 51, 45, 33, 47, 40, 55, 36, 44, 49, 41, 39, 46, 43]
+TEST = {
+    "measure": "cover",
+    "against": "standard",
+    "values": PLOTS,
+    "standard": 46,
+    "years_since": 11,
+}
+
+
+@pytest.fixture(scope="module")
+def app(engine, site, demo_files, tmp_path_factory):
+    """The app with one site check of sagebrush steppe."""
+    tables = json.loads(demo_files["regions.json"])["regions"][0]
+    sage = record(
+        tables,
+        SAGE,
+        place={"height_m": 1900},
+        overruled={"zone_id": "wyosage", "reason": "known ground"},
+        production=YEAR,
+        reclaim={"test": TEST},
+    )
+    path = tmp_path_factory.mktemp("figures") / "records.json"
+    path.write_text(json.dumps({"format": 1, "kind": "beltbook records", "sites": [sage]}))
+    here = Browser(engine)
+    phone = here.phone(tmp_path_factory.mktemp("figures") / "profile")
+    phone.page.goto(f"{site.address}#/hand")
+    phone.page.locator("input[type=file]").set_input_files(path)
+    phone.page.locator("[role=status] li").first.wait_for()
+    yield phone
+    here.put_away()
+
+
+@pytest.mark.parametrize(
+    ("page", "label", "wrong", "right"),
+    [
+        ("production/clip", "Plot area", "0", "1"),
+        ("production/clip", "Air-dry share", "450", "45"),
+        ("production/clip", "Air-dry share", "half", "50"),
+        ("place", "Slope", "400", "30"),
+        ("reclaim/test", "Standard", "-5", "46"),
+    ],
+)
+def test_a_figure_that_cannot_be_is_named_at_its_field(app, page, label, wrong, right):
+    show(app, f"site/{SAGE}/{page}")
+    field = app.page.get_by_label(label).first
+    field.fill(wrong)
+    alert = app.page.get_by_role("alert")
+    alert.wait_for()
+    assert "Type a number from" in alert.inner_text()
+    field.blur()
+    assert field.input_value() == wrong
+    assert field.get_attribute("aria-invalid") == "true"
+    field.fill(right)
+    alert.wait_for(state="detached")
+    assert app.errors == []
+
+
+def test_growth_of_496_is_inside_the_range_of_a_year_short_of_rain(app):
+    """The worked case: normal 740, rain 30 % short, 387 to 635."""
+    show(app, f"site/{SAGE}/production")
+    text = app.page.locator("main").inner_text()
+    assert "387 to 635 kg/ha" in text
+    assert "Inside this year’s range." in text
+    assert "496 yours" in text
+
+
+def test_both_nulls_of_the_worked_success_test_are_told(app):
+    """Mean 43.3 against 0.9 of 46: the direct null decides here, the other one stands beside it."""
+    show(app, f"site/{SAGE}/reclaim/test")
+    text = app.page.locator("main").inner_text()
+    assert "Met." in text
+    assert "43.3" in text
+    other = app.page.locator("main dl.notes dd").last.inner_text()
+    assert "not" in other.lower()
+
+
+def test_no_page_of_the_site_shows_a_nan(app):
+    pages = ["production", "production/clip", "reclaim", "reclaim/order", "reclaim/test"]
+    pages += ["reclaim/topsoil", "place", "plants", "zone"]
+    for page in pages:
+        show(app, f"site/{SAGE}/{page}")
+        text = app.page.locator("main").inner_text()
+        assert len(text) > 50
+        assert "NaN" not in text, page
+        assert "undefined" not in text, page
+    assert app.errors == []
