@@ -11,6 +11,7 @@ import re
 from typing import Any
 
 import numpy as np
+from numpy.typing import NDArray
 
 from builder.formulas.diversity import percent_similarity
 from builder.proof.known import Known, zone_heights, zone_means
@@ -210,7 +211,11 @@ def _band(known: Known, z: int) -> dict[str, Any]:
 
 def neighbours_of(known: Known) -> list[set[int]]:
     """Zones that may meet: the next on the slope, and the most alike in mean cover."""
-    means = zone_means(known)
+    return neighbours_by_likeness(zone_means(known))
+
+
+def neighbours_by_likeness(means: NDArray[np.float64]) -> list[set[int]]:
+    """The next zone in order, and the zone most alike; both ways. means [zone, plant] cover"""
     count = len(means)
     near: list[set[int]] = [set() for _ in range(count)]
     alike = np.full((count, count), -1.0)
