@@ -7,7 +7,7 @@ import pytest
 from builder.site.app_files import APP
 
 START = """
-  const S = await import('/store/index.js');
+  const S = { ...await import('/store/index.js'), ...await import('/store/exchange.js') };
   const tables = { region_id: 'sorrel_plateau', edition: '1', hash: 'aaaa' };
   const told = (work) => { try { return work(); } catch (fault) { return fault.code ?? String(fault); } };
 """

@@ -274,6 +274,7 @@ def test_each_verdict_opens_the_edge_in_its_own_way(app, records_file):
         seen[verdict] = count
     assert seen["zone"][".opened"] == 1
     assert seen["edge"][".opened"] == 2
+    print(seen)
     assert (seen["mosaic"][".opened"], seen["mosaic"][".inlay"]) == (1, 1)
     assert (seen["misfit"][".opened"], seen["misfit"][".gap"]) == (0, 1)
     assert seen["thin"][".even"] == 12
@@ -317,9 +318,9 @@ def test_a_site_check_by_keyboard_alone(app, records_file):
     page.keyboard.press("Enter")
     page.wait_for_url("**/place")
     page.get_by_role("heading", level=1).wait_for()
-    press_to(page, "North-east")
+    press_to(page, "North-east, NE")
     page.keyboard.press("Space")
-    assert page.get_by_role("button", name="North-east").get_attribute("aria-pressed") == "true"
+    assert page.get_by_role("button", name="North-east, NE").get_attribute("aria-pressed") == "true"
     press_to(page, "Start with plants")
     page.keyboard.press("Enter")
     for name in ("Muttongrass", "Silvery lupine", "Western yarrow"):

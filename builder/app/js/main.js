@@ -26,8 +26,7 @@ async function speak() {
 }
 
 /** Brings the region's tables in. @returns {Promise<string|null>} why not, as a key of words, or null */
-async function bringTables(code) {
-  const offers = await readRegions();
+async function bringTables(code, offers) {
   const offer = offers.find((one) => one.id === start.value.region) ?? offers[0];
   const edition = await tablesAtStart(store.value, offer, { readFile, checkProbes });
   const use = edition.tables ?? edition.unproved;
@@ -49,10 +48,14 @@ async function follow() {
 }
 
 async function run() {
+  // The disk opens while the words are read; what fails there is told below, in those words.
+  const early = Promise.all([openStore(), readRegions()]);
+  early.catch(() => {});
   const code = await speak();
   try {
-    store.value = await openStore();
-    const why = await bringTables(code);
+    const [opened, offers] = await early;
+    store.value = opened;
+    const why = await bringTables(code, offers);
     if (why) throw Object.assign(new Error(why), { code: why });
     await readAll();
     await follow();

@@ -1,7 +1,8 @@
 /** Hand over: records out to one file, records in from one, and what two phones both changed. */
 import { html } from 'htm/preact';
 import { useEffect, useState } from 'preact/hooks';
-import { exportRecords, listSides, readRecords, settleSide, takeIn } from '../store/index.js';
+import { exportRecords, readRecords, takeIn } from '../store/exchange.js';
+import { listSides, settleSide } from '../store/index.js';
 import { t } from './words.js';
 import { region, say, sites, store, trouble, units } from './state.js';
 import { readAll } from './records.js';

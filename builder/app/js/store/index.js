@@ -9,8 +9,6 @@
  *   await listSites(store); await loadSite(store, id); await removeSite(store, id);
  *   await listSides(store, id); await settleSide(store, key, 'mine' | 'theirs');
  *   await addPhoto(store, site.id, { bytes, type });     // photosOf, captionPhoto, removePhoto, photoUrl
- *   const text = await exportRecords(store, ids, { photos, names });
- *   await takeIn(store, readRecords(text));              // readRecords(…).refused, .changed to be told
  *   await getSetting(store, 'mode'); await setSetting(store, 'mode', 'sun');
  *   const [offer] = await readRegions(); await readWords('en');
  *   const start = await tablesAtStart(store, offer, { readFile, checkProbes });   // see editions.js
@@ -18,12 +16,15 @@
  *   await tablesOf(store, site);                         // the edition that scored an old record
  *   const versions = await watchVersions({ onWaiting, onReplaced, onOffline });    // versions.use()
  *   await askForRoom(store);                             // {persisted, nearly_full}, once at start
+ *
+ * Handing over is loaded when it is asked for, from exchange.js:
+ *   const text = await exportRecords(store, ids, { photos, names });
+ *   await takeIn(store, readRecords(text));              // readRecords(…).refused, .changed to be told
  */
 import { connections } from './schema.js';
 import { opened } from './tx.js';
 
 export { fetchTables, tablesAtStart, tablesInUse, tablesOf, useTables } from './editions.js';
-export { exportRecords, initialsOf, readRecords, takeIn } from './exchange.js';
 export { Fault, faultOf } from './faults.js';
 export { isSingleFile, readFile, readRegions, readWords } from './files.js';
 export { newId } from './ids.js';
