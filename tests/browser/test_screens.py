@@ -50,7 +50,8 @@ def records_file(demo_files, tmp_path_factory):
         if verdict not in sites and probe["site"].get("month"):
             own = {name: value for name, value in probe["site"].items() if value is not None}
             site_id = f"{len(sites)}0000000-0000-4000-8000-000000000000"
-            sites[verdict] = record(tables, site_id, **{**own, "date": f"2026-{own['month']:02d}-11"})
+            bare = {"place": {}, "disturbance": None, "date": f"2026-{own['month']:02d}-11"}
+            sites[verdict] = record(tables, site_id, **{**bare, **own})
     findings = [{"plant_id": plant, "state": "found", "cover": cover, "named": None} for plant, cover in FOUND]
     sites["sage"] = record(tables, "a0000000-0000-4000-8000-000000000000", findings=findings)
     path = tmp_path_factory.mktemp("records") / "records.json"
@@ -274,7 +275,6 @@ def test_each_verdict_opens_the_edge_in_its_own_way(app, records_file):
         seen[verdict] = count
     assert seen["zone"][".opened"] == 1
     assert seen["edge"][".opened"] == 2
-    print(seen)
     assert (seen["mosaic"][".opened"], seen["mosaic"][".inlay"]) == (1, 1)
     assert (seen["misfit"][".opened"], seen["misfit"][".gap"]) == (0, 1)
     assert seen["thin"][".even"] == 12

@@ -13,12 +13,12 @@ const LENS_PCT = 10.3;
 export function EdgeAjar({ region, call, mark, href }) {
   const asked = call && call.answers > 0;
   const share = (zone) => (asked ? call.belief[zone.id] : 0);
-  return html`<a class="edge ajar" href=${href} aria-label=${edgeWords(region, call)}>
-    <span class="belts">
+  return html`<a class="edge ajar" href=${href}><span class="spoken">${edgeWords(region, call)}</span>
+    <span class="belts" aria-hidden="true">
       ${[...region.belts].reverse().map((zone) => html`<${Belt} key=${zone.id} zone=${zone} share=${share(zone)}/>`)}
       <${Wobble} count=${region.belts.length}/>
     </span>
-    <span class="lenses">
+    <span class="lenses" aria-hidden="true">
       ${region.lenses.map((zone) => html`<${Lens} key=${zone.id} zone=${zone} share=${share(zone)} bottom=${lensHeight(region, zone) * (100 - LENS_PCT)}/>`)}
       ${mark?.reach && !asked && html`<span class="reach" style=${{ bottom: `${mark.reach[0] * 100}%`, height: `${(mark.reach[1] - mark.reach[0]) * 100}%` }}></span>`}
       ${mark && html`<span class="here-mark" style=${{ bottom: `${mark.at * 100}%` }}></span>`}

@@ -42,8 +42,8 @@ function Opened({ row, call, region, half, children }) {
 }
 
 function Near({ zone, share, rival, onRival }) {
-  return html`<li class="near"><button type="button" aria-pressed=${String(rival === zone.id)} onClick=${() => onRival(zone.id)} aria-label=${t('zone.beside', { zone: zone.short, share: percentWords(share) })}>
-    <${Side} zone=${zone}/><${Track} zone=${zone} share=${share}/><span class="name">${zone.short}</span><span class="pc">${percentWords(share)}</span></button></li>`;
+  return html`<li class="near"><button type="button" aria-pressed=${String(rival === zone.id)} onClick=${() => onRival(zone.id)}>
+    <${Side} zone=${zone}/><${Track} zone=${zone} share=${share}/><span class="name">${zone.short}</span><span class="pc">${percentWords(share)}</span><span class="spoken">${t('zone.beside')}</span></button></li>`;
 }
 
 function Pressed({ row, call, onSpread }) {
@@ -67,9 +67,9 @@ function Seam() {
 export function EdgeEven({ region, call, asked, mark, rival, onRival }) {
   return html`<div class="over"><ol class="edge open" aria-label=${t('zone.stack')}>${[...region.belts].reverse().map((zone) => {
     const share = asked ? call.belief[zone.id] : 0;
-    const inner = html`<${Side} zone=${zone}/><${Track} zone=${zone} share=${share}/><span class="name">${zone.short}</span>${asked && html`<span class="pc">${percentWords(share)}</span>`}`;
+    const inner = html`<${Side} zone=${zone}/><${Track} zone=${zone} share=${share}/><span class="name">${zone.short}</span>${asked && html`<span class="pc">${percentWords(share)}</span><span class="spoken">${t('zone.beside')}</span>`}`;
     return html`<li class="even" key=${zone.id}>${asked
-      ? html`<button type="button" aria-pressed=${String(rival === zone.id)} onClick=${() => onRival(zone.id)} aria-label=${t('zone.beside', { zone: zone.short, share: percentWords(share) })}>${inner}</button>`
+      ? html`<button type="button" aria-pressed=${String(rival === zone.id)} onClick=${() => onRival(zone.id)}>${inner}</button>`
       : html`<div>${inner}</div>`}</li>`;
   })}</ol>${!asked && mark?.reach && html`<${Bracket} reach=${mark.reach}/>`}</div>`;
 }

@@ -34,7 +34,7 @@ export function Wheel({ place, onPlace }) {
   return html`<svg class="rose" viewBox="0 0 260 260" role="group" aria-label=${t('place.facing')}>
     ${POINTS.map((name, i) => html`<g key=${name} role="button" tabindex="0" aria-pressed=${String(chosen === i)} aria-label=${t(`facing.${name}`)}
         onClick=${() => pick(i)} onKeyDown=${(event) => key(event, i)}>
-      <path class=${`seg8 ${chosen === i ? 'on' : ''}`} d=${piece(i)}/><text x=${at(95, i * 45).split(' ')[0]} y=${Number(at(95, i * 45).split(' ')[1]) + 5}>${t(`facing.short_${name}`)}</text></g>`)}
+      <path class=${`seg8 ${chosen === i ? 'on' : ''}`} d=${piece(i)}/><text aria-hidden="true" x=${at(95, i * 45).split(' ')[0]} y=${Number(at(95, i * 45).split(' ')[1]) + 5}>${t(`facing.short_${name}`)}</text></g>`)}
     <circle class="hub" cx="130" cy="130" r="55"/><circle class="ring" cx="130" cy="130" r="44"/>
     <path class="ring" d="M96 148q17-12 34-4t34-10M104 160q13-8 26-3t26-6"/>
     <text x="130" y="112" class="hubword">${t('place.slope')}</text>
