@@ -21,11 +21,11 @@ from flask import (
 )
 from werkzeug.wrappers import Response as BaseResponse
 
-from builder import steps
 from builder.desk.jobs import Busy, Job, Jobs
 from builder.desk.page import page
 from builder.desk.phrases import counted, read_phrases
 from builder.desk.shelf import Look, shelf
+from builder.steps.notes import last_build, tables_hash
 
 ZIP_DATE = (2020, 1, 1, 0, 0, 0)  # fixed, so that the same site gives the same file
 BAR = 300
@@ -77,7 +77,7 @@ def built_view(look: Look) -> BuiltView:
     """What stands in the output folder for a region."""
     say = read_phrases()["build"]
     out: Path = current_app.config["OUT"]
-    note = steps.last_build(out, look.id)
+    note = last_build(out, look.id)
     app = out / "index.html"
     if note is None or not app.is_file():
         return BuiltView(False, say["never"], "", "")
@@ -89,7 +89,7 @@ def built_view(look: Look) -> BuiltView:
         links.append(OutLink(say["open_booklet"], booklet_href))
     if (out / "field.html").is_file():
         links.append(OutLink(say["single"], url_for("field.send", name="field.html")))
-    current = note.tables == steps.tables_hash(look.folder)
+    current = note.tables == tables_hash(look.folder)
     said = say["current" if current else "stale"].format(edition=note.edition, at=note.at)
     return BuiltView(
         current=current,

@@ -10,9 +10,9 @@ from pathlib import Path
 
 from flask import abort, current_app
 
-from builder import steps
 from builder.problems import Problem, cautions, errors
 from builder.rows import Items, Row
+from builder.steps.checking import check_region
 from builder.tables import Loaded, Region
 
 NAME = re.compile(r"[a-z][a-z0-9_]{0,63}")
@@ -78,7 +78,7 @@ class Shelf:
         with self.lock:
             kept = self.looks.get(region_id)
             if kept is None or kept.fingerprint != print_now:
-                checked = steps.check_region(folder)
+                checked = check_region(folder)
                 loaded = checked.loaded
                 kept = Look(
                     id=region_id,

@@ -13,7 +13,7 @@ from builder.pack import pack_bytes, texts_bytes
 from builder.problems import cautions
 from builder.site import SiteRegion, SiteReport, build_site
 from builder.site.book import book_pages
-from builder.steps.checking import Checked, check_regions
+from builder.steps.checking import Checked, check_regions, region_of
 from builder.steps.notes import (
     BOOKLET,
     BuildNote,
@@ -24,7 +24,6 @@ from builder.steps.notes import (
     remember,
     tables_hash,
 )
-from builder.tables import Region
 
 ENGLISH = "en"
 Progress = Callable[[int, int, str], None]
@@ -78,12 +77,6 @@ def build(folders: Sequence[Path], out: Path, progress: Progress, booklets: bool
         remember(out, notes)
     progress(of, of, "done")
     return Built(report, notes, fresh)
-
-
-def region_of(checked: Checked) -> Region:
-    """The region of tables that do not stop a build."""
-    assert checked.region is not None
-    return checked.region
 
 
 def compile_region(checked: Checked) -> SiteRegion:

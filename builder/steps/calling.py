@@ -14,8 +14,8 @@ from builder.key.plots_file import read_plots
 from builder.key.scales import SCALES
 from builder.pack import compile_pack
 from builder.problems import Problem, errors
-from builder.steps.building import region_of
-from builder.steps.checking import Stopped, check_regions
+from builder.steps.checking import check_regions, region_of
+from builder.steps.refusals import Stopped, ToldByStep
 from builder.tables import Region
 
 COLUMNS = (
@@ -39,22 +39,22 @@ class Called:
     problems: list[Problem]
 
 
-class UnknownName(ValueError):
+class UnknownName(ToldByStep):
     """A scale or disturbance that neither the region nor the house knows; says which there are."""
 
     def __init__(self, what: str, name: str, known: Iterable[str]) -> None:
         super().__init__(f'there is no {what} named "{name}". Known: {", ".join(known) or "none"}.')
 
 
-def scale_of(region: Region, name: str | None) -> dict[str, float] | None:
-    """Percent by class code. UnknownName where no scale has this name."""
+def scale_of(region: Region | None, name: str | None) -> dict[str, float] | None:
+    """Percent by class code of a region's own or a published scale. UnknownName for another."""
     if name is None:
         return None
-    own = region.cover_scale
-    if name == own.id:
+    own = region.cover_scale if region is not None else None
+    if own is not None and name == own.id:
         return {one.code: one.mid_pct for one in own.classes}
     if name not in SCALES:
-        raise UnknownName("cover scale", name, [own.id, *SCALES])
+        raise UnknownName("cover scale", name, [*([own.id] if own is not None else []), *SCALES])
     return dict(SCALES[name])
 
 

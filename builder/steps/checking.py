@@ -12,6 +12,7 @@ from builder.key.compile import Fitted
 from builder.key.fitted import read_fit
 from builder.problems import Problem, errors, in_order
 from builder.proof.kept import read_proof, with_session
+from builder.steps.refusals import Stopped
 from builder.tables import Loaded, Region
 
 
@@ -35,14 +36,6 @@ class Checked:
         return self.region is None or bool(errors(self.problems))
 
 
-class Stopped(Exception):  # noqa: N818 - told to the person with the problems
-    """Tables that stop a build, with every problem."""
-
-    def __init__(self, problems: list[Problem]) -> None:
-        super().__init__(f"{len(errors(problems))} problems stop the build")
-        self.problems = problems
-
-
 def check_region(folder: Path) -> Checked:
     """Rows → tables → problems: reads a region and runs every check."""
     loaded = checked_region(folder)
@@ -64,3 +57,9 @@ def check_regions(folders: Sequence[Path]) -> list[Checked]:
     if any(one.stops for one in checked):
         raise Stopped([problem for one in checked for problem in one.problems])
     return checked
+
+
+def region_of(checked: Checked) -> Region:
+    """The region of tables that do not stop a build."""
+    assert checked.region is not None
+    return checked.region

@@ -11,6 +11,8 @@ from dataclasses import asdict, dataclass
 from functools import cache
 from pathlib import Path
 
+from builder.steps.refusals import ToldByStep
+
 TABLE_ENDINGS = {".yaml", ".csv"}
 NOTES = ".beltbook"
 BOOKLET = "booklet.pdf"
@@ -105,7 +107,7 @@ def remember(out: Path, notes: dict[str, BuildNote]) -> None:
     fresh.replace(path)
 
 
-class BuilderBusy(Exception):  # noqa: N818 - told to the person
+class BuilderBusy(ToldByStep):
     """Another build writes into the same folder."""
 
 

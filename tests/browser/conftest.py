@@ -14,7 +14,7 @@ import pytest
 from browser.helpers import Browser, Server
 
 from builder.site.build import site_files
-from builder.steps import check_region
+from builder.steps.checking import check_region
 from builder.steps.building import compile_region
 
 ROOT = Path(__file__).parent.parent.parent

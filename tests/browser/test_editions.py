@@ -9,7 +9,7 @@ import pytest
 from browser.helpers import Crew, key_site, known_site, records
 
 from builder.site.build import site_files
-from builder.steps import check_region
+from builder.steps.checking import check_region
 from builder.steps.building import compile_region
 
 

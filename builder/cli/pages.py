@@ -1,0 +1,77 @@
+"""Commands that make and show pages: build, desk."""
+
+from __future__ import annotations
+
+import argparse
+import time
+from pathlib import Path
+from typing import Any
+
+from builder.cli.telling import Told, say, say_step
+
+SITE = Path("site_out")
+
+
+def add_commands(commands: Any) -> None:
+    """Registers the family's commands."""
+    build = commands.add_parser("build", help="make the field app and the booklets")
+    build.add_argument("region", nargs="+", type=Path, help="folders of tables, into one site")
+    build.add_argument("--out", type=Path, default=SITE, help="folder of the site")
+    build.add_argument("--no-booklet", action="store_true", help="leave the booklets as they are")
+    build.set_defaults(run=run_build)
+
+    desk = commands.add_parser("desk", help="edit, prove and build in the browser, on this computer")
+    desk.add_argument("--port", type=int, help="port to listen on; without it the first free one")
+    desk.add_argument("--out", type=Path, default=SITE, help="folder of the built site")
+    desk.add_argument("--demo", action="store_true", help="build the regions first where needed")
+    desk.add_argument("--account", metavar="NAME", help="ask for a password, keep the account, end")
+    desk.add_argument("--open", metavar="ADDRESS", help="listen there, for people with an account")
+    desk.add_argument(
+        "--host",
+        action="append",
+        default=[],
+        metavar="NAME",
+        help="a name the open desk is called by; may be repeated",
+    )
+    desk.set_defaults(run=run_desk)
+
+
+def run_build(given: argparse.Namespace) -> int:
+    """Checks, compiles and writes."""
+    make(given.region, given.out, booklets=not given.no_booklet)
+    return 0
+
+
+def make(folders: list[Path], out: Path, booklets: bool) -> None:
+    """Builds and says what was made."""
+    from builder.steps.building import build
+
+    started = time.monotonic()
+    built = build(folders, out, say_step, booklets)
+    for region_id, note in built.notes.items():
+        made = "made" if region_id in built.fresh else "as it was"
+        booklet = f", booklet {note.booklet_pages} pages, {made}" if booklets else ""
+        say(f"{region_id}: edition {note.edition}, pack {note.pack_hash}{booklet}")
+    seconds = time.monotonic() - started
+    say(f"{out}: {len(built.site.changed)} files written, {seconds:.1f} s")
+
+
+def run_desk(given: argparse.Namespace) -> int:
+    """Serves the desk until Ctrl-C."""
+    from builder.desk.opening import CannotOpen, open_desk
+    from builder.steps.notes import is_current, regions_in
+
+    waiting: list[Path] = []
+    if given.demo:
+        waiting = regions_in(Path("keydata"))
+        if not waiting:
+            raise Told("there is no region in keydata/")
+        if all(is_current(folder, given.out) for folder in waiting):
+            waiting = []
+        else:
+            make(waiting, given.out, booklets=False)
+    try:
+        open_desk(given, say, waiting)
+    except CannotOpen as refusal:
+        raise Told(str(refusal)) from None
+    return 0
