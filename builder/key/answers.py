@@ -10,7 +10,7 @@ import numpy as np
 from builder.key.context import GONE, Context, context_of
 from builder.key.findings import Finding, Findings, read_findings, step_of
 from builder.key.prepare import Ints, Key, Site
-from builder.key.rounding import round_half_up
+from builder.key.rounding import NATS_PER_CENTIBAN, round_half_up
 from builder.key.rules import fired_rules
 
 NOT_FOUND = -1
@@ -142,25 +142,34 @@ def _group_answer(
 ) -> Answer:
     """ "Some of these": at least one member is there; not found: every member is missing.
 
-    A member found says more, then the group adds nothing; members with answers of their own are
-    not counted twice.
+    Members with answers of their own are not counted twice: a member found says more, then the
+    group adds nothing; of members not found at least one of the others must be there.
     """
     group = key.pack["groups"][g]
     found = finding["state"] == "found"
+    free = [p for p in group["members"] if p not in findings.plants]
     points = np.zeros(key.zones, np.int32)
     if found:
-        settled = any(
-            context.sown[p] or findings.plants.get(p, {}).get("state") == "found"
-            for p in group["members"]
-        )
-        if not settled and context.newcomer < 0:
-            points = np.array(key.pack["evidence"]["groups"][g]["found"], np.int32)
+        states = [findings.plants.get(p, {}).get("state") for p in group["members"]]
+        silent = "found" in states or context.sown[group["members"]].any() or not free
+        if not silent and context.newcomer < 0:
+            points = _some_of(key, g, free)
     else:
-        for p in group["members"]:
-            if p not in findings.plants:
-                points = points + absent_points(key, context, p)
-    plain = found and context.newcomer < 0
+        for p in free:
+            points = points + absent_points(key, context, p)
+    whole = len(free) == len(group["members"])
+    plain = found and whole and context.newcomer < 0
     return Answer("group", group["id"], finding["state"], found, g, -1, 4, plain, points)
+
+
+def _some_of(key: Key, g: int, free: list[int]) -> Ints:
+    """Centibans of "at least one of these members"; of all of them as the pack has it."""
+    if len(free) == len(key.pack["groups"][g]["members"]):
+        return np.array(key.pack["evidence"]["groups"][g]["found"], np.int32)
+    chance = 1.0 - np.prod(1.0 - key.presence[free], axis=0)
+    prior = np.exp(key.area * NATS_PER_CENTIBAN) / key.zones
+    nats = np.log(chance) - np.log((prior * chance).sum() / prior.sum())
+    return round_half_up(nats * key.settings["temper"] / NATS_PER_CENTIBAN)
 
 
 def _question_answers(key: Key, site: Site, context: Context) -> list[Answer]:

@@ -36,6 +36,7 @@ def call(pack: Pack, site: Site, prompts: int = 8) -> Call:
         "rules_fired": [rule["id"] for rule in weighed.reading.rules],
         "notes": {
             "height_off": context.height_off,
+            "dead_counts": context.dead_counts,
             "second_call": context.second_call,
             "move_plot": context.move_plot,
             "disturbed": context.disturbed,

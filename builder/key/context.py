@@ -42,6 +42,7 @@ class Context:
     disturbed: bool
     height_off: bool
     elevation_shift_m: float
+    dead_counts: bool
     second_call: bool
     move_plot: bool
 
@@ -73,6 +74,7 @@ def context_of(key: Key, site: Site, more: tuple[dict[str, Any], ...] = ()) -> C
         or any("newcomer" in one or one.get("sown") or one.get("layers_gone") for one in effects),
         height_off=any(effect.get("height_off") for effect in effects),
         elevation_shift_m=sum(effect.get("elevation_shift_m", 0) for effect in effects),
+        dead_counts=any(effect.get("dead_counts") for effect in effects),
         second_call=any(effect.get("second_call") for effect in effects),
         move_plot=any(effect.get("move_plot") for effect in effects),
     )

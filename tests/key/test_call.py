@@ -97,6 +97,23 @@ def test_some_of_a_kind_says_less_than_its_member(pack):
     assert call(pack, {"findings": both})["belief"] == named["belief"]
 
 
+def test_some_of_a_kind_but_not_this_one_is_some_of_the_others(pack):
+    """Two of the three big sagebrushes not found: then it is the third."""
+    members = [
+        pack["plants"][p]["id"]
+        for g in pack["groups"]
+        if g["id"] == "big_sagebrush"
+        for p in g["members"]
+    ]
+    rows = [not_found(one) for one in members[:2]]
+    some = call(pack, {"findings": [*rows, {"group_id": "big_sagebrush", "state": "found"}]})
+    third = call(pack, {"findings": [*rows, found(members[2])]})
+    for zone, share in third["belief"].items():
+        assert some["belief"][zone] == pytest.approx(share, abs=0.01)
+    none = [*rows, not_found(members[2]), {"group_id": "big_sagebrush", "state": "found"}]
+    assert call(pack, {"findings": none})["belief"] == call(pack, {"findings": none[:3]})["belief"]
+
+
 @settings(max_examples=60, deadline=None)
 @given(st.integers(0, 10**6), st.integers(0, 15), st.integers(0, 15))
 def test_reasons_add_up_for_any_pair(pack, random_sites, seed, a, b):

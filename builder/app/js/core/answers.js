@@ -2,6 +2,7 @@
 import { contextOf } from './context.js';
 import { firedRules } from './rules.js';
 import { roundHalfUp } from './rounding.js';
+import { someOf } from './group.js';
 
 /**
  * @typedef {object} Answer
@@ -126,30 +127,24 @@ function absentPoints(key, context, p, row) {
 
 const quarters = (points, weight) => (weight === 4 ? points : roundHalfUp((points * weight) / 4));
 
-/**
- * "Some of these": at least one member is there. A member found says more, then the group says
- * nothing of its own; not found is every member not found that has no answer of its own.
- */
 function groupAnswer(key, context, findings, g, finding) {
   const group = key.pack.groups[g];
   if (group.use !== 'answer') return null;
   const found = finding.state === 'found';
+  const free = group.members.filter((p) => !findings.plants.has(p));
+  const silent = group.members.some(
+    (p) => context.sown[p] || findings.plants.get(p)?.state === 'found',
+  );
   let points = key.neutral;
-  if (found) {
-    const settled = group.members.some(
-      (p) => context.sown[p] || findings.plants.get(p)?.state === 'found',
-    );
-    if (!settled && context.newcomer < 0) points = Int32Array.from(key.pack.evidence.groups[g].found);
-  } else {
-    const free = group.members.filter((p) => !findings.plants.has(p));
+  if (!found) {
     points = free.reduce((sum, p) => {
       const own = absentPoints(key, context, p, newcomerRow(key, context, p, false));
       return sum.map((one, z) => one + own[z]);
     }, new Int32Array(key.Z));
-  }
+  } else if (!silent && free.length && context.newcomer < 0) points = someOf(key, g, free);
   return {
     kind: 'group', id: group.id, answer: finding.state, found, at: g, step: -1, v: 4,
-    plain: found && context.newcomer < 0, points,
+    plain: found && free.length === group.members.length && context.newcomer < 0, points,
   };
 }
 

@@ -21,6 +21,7 @@ export function call(pack, site, { prompts = 8 } = {}) {
     rules_fired: weighed.rules.map((rule) => rule.id),
     notes: {
       height_off: context.heightOff,
+      dead_counts: context.deadCounts,
       second_call: context.secondCall,
       move_plot: context.movePlot,
       disturbed: context.disturbed,

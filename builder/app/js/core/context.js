@@ -55,6 +55,7 @@ function blank(key, site, effects) {
       effects.some((one) => one.newcomer !== undefined || one.sown || one.layers_gone),
     heightOff: has('height_off'),
     elevationShift: effects.reduce((sum, effect) => sum + (effect.elevation_shift_m ?? 0), 0),
+    deadCounts: has('dead_counts'),
     secondCall: has('second_call'),
     movePlot: has('move_plot'),
   };

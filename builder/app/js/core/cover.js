@@ -63,6 +63,17 @@ export function wilsonInterval({ successes, n, confidence }) {
 }
 
 /**
+ * Cover from points: {name: [share, low, high]} by what was hit.
+ * @param {{counts: Record<string, number>, confidence: number}} of
+ */
+export function pointShares({ counts, confidence }) {
+  const total = sum(Object.entries(counts).map(([name, count]) => needCount(name, count)));
+  if (total === 0) refuse('no_points');
+  return Object.fromEntries(Object.entries(counts).map(([name, count]) =>
+    [name, [count / total, ...wilsonInterval({ successes: count, n: total, confidence })]]));
+}
+
+/**
  * How much of a reference make-up stands here: sum of minima over its total.
  * @param {{present: Record<string, number>, reference: Record<string, number>}} of
  */

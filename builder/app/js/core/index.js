@@ -24,7 +24,8 @@
  *   reasons        leader minus runner-up, see reasonsBetween;  difference_cb  their sum
  *   prompts        what to look for or ask next, best first, see prompts
  *   rules_fired    [rule id], those that were not struck
- *   notes          {height_off, second_call, move_plot, disturbed}  true or false
+ *   notes          {height_off, dead_counts (a dead tree counts as found), second_call, move_plot,
+ *                  disturbed}  true or false
  *
  * prompts(pack, site, limit = 8) -> [{kind: "plant"|"question", id, gain}]
  *   gain is the expected fall in doubt, in nats, less the price of asking; only plants that can
