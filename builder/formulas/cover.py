@@ -143,6 +143,27 @@ def wilson_bound(successes: int, n: int, confidence: float, upper: bool) -> floa
     return (middle + (reach if upper else -reach)) / (1 + z * z / plots)
 
 
+def point_shares(
+    counts: Mapping[str, int], confidence: float
+) -> dict[str, tuple[float, float, float]]:
+    """Cover from points: share and Wilson interval by what was hit. [0..1]
+
+    counts      points by what lay under them (bare soil, litter, plant base ...)
+    confidence  of each two-sided interval
+
+    Returns {name: (share, low, high)}. Each share is taken by itself against all points.
+    Refused: no points.
+    Source: wilson_1927; golden: cover.json
+    """
+    total = sum(need_count(name, count) for name, count in counts.items())
+    if total == 0:
+        raise RefusedError("no_points")
+    return {
+        name: (count / total, *wilson_interval(count, total, confidence))
+        for name, count in counts.items()
+    }
+
+
 def likeness(present: Mapping[str, float], reference: Mapping[str, float]) -> float:
     """How much of a reference make-up stands here: sum of minima over its total. [0..1]
 

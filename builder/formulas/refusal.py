@@ -46,6 +46,7 @@ SENTENCES = {
     "unknown_choice": "{field} has no choice called {value}.",
     "same_length": "{field} and {other} must be lists of the same length.",
     "no_plots": "There are no plots yet.",
+    "no_points": "There are no points yet.",
     "one_plot": "One plot shows no spread; at least {least} are needed.",
     "no_spread": "All estimates are alike, so no line can be fitted through them.",
     "zero_mean": "The mean is zero, so nothing can be said relative to it.",

@@ -4,7 +4,7 @@ import json
 
 import pytest
 from browser.helpers import Browser
-from browser.test_screens import record, show
+from browser.test_screens import AXE, faults, record, show
 
 SAGE = "b0000000-0000-4000-8000-000000000000"
 YEAR = {"rain_share": 0.7, "rain_source": "gauge", "measured_kg_ha": 496}
@@ -26,6 +26,8 @@ def app(engine, site, demo_files, tmp_path_factory):
         tables,
         SAGE,
         place={"height_m": 1900},
+        disturbance="none",
+        whole_plot_searched=True,
         overruled={"zone_id": "wyosage", "reason": "known ground"},
         production=YEAR,
         reclaim={"test": TEST},
@@ -88,7 +90,7 @@ def test_both_nulls_of_the_worked_success_test_are_told(app):
 
 def test_no_page_of_the_site_shows_a_nan(app):
     pages = ["production", "production/clip", "reclaim", "reclaim/order", "reclaim/test"]
-    pages += ["reclaim/topsoil", "place", "plants", "zone"]
+    pages += ["reclaim/topsoil", "production/cover", "place", "plants", "zone"]
     for page in pages:
         show(app, f"site/{SAGE}/{page}")
         text = app.page.locator("main").inner_text()
@@ -96,3 +98,48 @@ def test_no_page_of_the_site_shows_a_nan(app):
         assert "NaN" not in text, page
         assert "undefined" not in text, page
     assert app.errors == []
+
+
+def test_the_year_here_names_the_limit_with_its_figures(app):
+    """Sagebrush steppe at its own height: four growing months, 101 mm held, water the limit."""
+    show(app, f"site/{SAGE}/production")
+    part = app.page.locator("section", has_text="The year here")
+    part.locator("svg").wait_for()
+    text = part.inner_text()
+    assert "Water holds plants back" in text
+    assert "soil holds 101 mm" in text
+    assert "4" in part.locator("svg").get_attribute("aria-label")
+
+
+def test_expected_and_not_found_comes_with_the_chance_of_a_miss(app):
+    """The whole plot was searched and nothing listed, so the zone's constant plants are missing."""
+    show(app, f"site/{SAGE}/production")
+    part = app.page.locator("section", has_text="Expected, not found")
+    part.wait_for()
+    rows = part.locator("li").all_inner_texts()
+    assert 1 <= len(rows) <= 6
+    chances = [float(row.split()[-1]) for row in rows]
+    assert chances == sorted(chances)
+    assert max(chances) <= 20
+    assert any("sagebrush" in row.lower() for row in rows)
+
+
+def test_points_become_cover_with_the_doubt_that_is_left(app):
+    """18 of 20 points: 90 % and a 90 % Wilson interval of 74 to 97 (STAT-09)."""
+    show(app, f"site/{SAGE}/production/cover")
+    app.page.get_by_label("Bare soil").fill("18")
+    app.page.get_by_label("Litter").fill("2")
+    assert "90 (74–97)" in app.page.locator("main").inner_text()
+    app.page.get_by_label("Codes with").fill("1 1 2 2 2 3 3 4 0 0")
+    line = app.page.locator("main p", has_text="mean cover").inner_text()
+    assert "10 plots" in line
+    assert "found in 80 % of plots" in line
+    app.page.get_by_label("Codes with").fill("1 9")
+    assert "no class 9" in app.page.get_by_role("alert").inner_text()
+    app.page.get_by_label("Codes with").fill("")
+    assert app.errors == []
+
+
+def test_the_cover_sheet_keeps_nobody_out(app):
+    show(app, f"site/{SAGE}/production/cover")
+    assert faults(app, AXE.read_text("utf-8")) == []

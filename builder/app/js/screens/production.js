@@ -8,35 +8,43 @@ import { Frame } from './parts/frame.js';
 import { RangeBar } from './parts/range_bar.js';
 import { Source } from './parts/source.js';
 import { CalledStrip, standing } from './standing_zone.js';
+import { Later } from './parts/later.js';
 import { Rain } from './rain.js';
 import { Measured, measuredOf } from './measured.js';
 import { ClipSheet } from './clip.js';
 
-/** @param {{parts: string[]}} props [] or ['clip'] */
+const CoverSheet = Later(() => import('./cover_sheet.js'), 'CoverSheet');
+const SiteYear = Later(() => import('./site_year.js'), 'SiteYear');
+const Missed = Later(() => import('./missed.js'), 'Missed');
+
+/** @param {{parts: string[]}} props [] · ['clip'] · ['cover'] */
 export function Production({ parts }) {
   const stand = standing();
   const record = site.value;
   if (parts[0] === 'clip') return html`<${ClipSheet} stand=${stand}/>`;
+  if (parts[0] === 'cover' && stand) return html`<${CoverSheet} stand=${stand}/>`;
   return html`<${Frame} tab="production" edge=${false} class="whole-width" line=${t('production.line')}>
     <${CalledStrip} stand=${stand}/>${stand && html`<${Expected} stand=${stand} record=${record}/>`}</${Frame}>`;
 }
 
-/** This year's range and the normal year's, from the zones by weight. [kg ha-1] */
-export function expected(here, stand, rainShare) {
+/** This year's range and the normal year's, from the zones by weight. [kg ha-1]
+ *  The year is known by its rain, or by its warmth alone where rain moves nothing. */
+export function expected(here, stand, rainShare, warmer = null) {
   const rows = [...stand.weights].filter(([id, weight]) => weight > 0 && here.pack.production[id]).map(([id, weight]) => ({ weight, ...here.pack.production[id] }));
-  const range = (share) => RANGE_SHARES.map((part) => mixtureQuantile({
+  const range = (share, warmth) => RANGE_SHARES.map((part) => mixtureQuantile({
     share: part, weights: rows.map((row) => row.weight),
-    centres_kg_ha: rows.map((row) => row.normal_kg_ha * yearShare({ rain_share: share, rain_response: row.rain_response })),
+    centres_kg_ha: rows.map((row) => row.normal_kg_ha * yearShare({ rain_share: share, rain_response: row.rain_response, warmer_c: warmth, warmth_response_per_c: row.warmth_response_per_c })),
     spread_cvs: rows.map((row) => row.site_spread_cv),
   }));
-  return { normal: range(1), year: rainShare === null ? null : range(rainShare) };
+  const known = rainShare !== null || (warmer !== null && here.pack.production[stand.zone.id].rain_response === 0);
+  return { normal: range(1, 0), year: known ? range(rainShare ?? 1, warmer ?? 0) : null };
 }
 
 function Expected({ stand, record }) {
   const here = region.value;
   const own = here.pack.production[stand.zone.id];
-  const { rain_share: rain = null, rain_source: from = null } = record.production;
-  const { normal, year } = expected(here, stand, rain);
+  const { rain_share: rain = null, rain_source: from = null, warmer_c: warmer = null } = record.production;
+  const { normal, year } = expected(here, stand, rain, warmer);
   const measured = measuredOf(record);
   const [low, high] = year ?? [own.low_kg_ha, own.high_kg_ha];
   const place = measured && year ? placeOf({ measured_kg_ha: measured.mean, low_kg_ha: low, high_kg_ha: high }) : null;
@@ -48,5 +56,7 @@ function Expected({ stand, record }) {
       <${RangeBar} zone=${stand.zone} range=${[low, high]} normal=${year ? normal : null} middle=${year ? null : own.normal_kg_ha} measured=${measured}/>
       <p class="small quiet">${t('production.counted', { counted: own.counted })} ${t('production.not_forage')}</p>
       <${Source} what=${t('production.these')} region=${here} keys=${[own.source]}/></section>
-    <${Rain} record=${record}/><${Measured} record=${record} zone=${stand.zone}/>`;
+    <${Rain} record=${record} own=${own}/><${Measured} record=${record} zone=${stand.zone}/>
+    <section class="part"><a class="btn" href=${`#/site/${record.id}/production/cover`}>${t('points.title')}</a></section>
+    <${Missed} zone=${stand.zone} record=${record}/><${SiteYear} zone=${stand.zone} record=${record}/>`;
 }

@@ -2,16 +2,19 @@
 import { html } from 'htm/preact';
 import { t } from './words.js';
 import { change } from './state.js';
-import { Choice, Stepper } from './parts/choice.js';
+import { Choice, Field, Stepper } from './parts/choice.js';
+import { readNumber } from './parts/read_number.js';
+import { warmerFrom, warmerShown, warmerUnit } from './say.js';
 
 const LOW = 30;
 const HIGH = 170;
 const STEP = 5;
+const WARMEST = 10;
 const SOURCES = ['gauge', 'office', 'guess'];
 
-/** @param {{record: object}} props */
-export function Rain({ record }) {
-  const { rain_share: share = null, rain_source: from = null } = record.production;
+/** Warmth of the year is asked for where the zone's growth follows it. @param {{record: object, own: object}} props */
+export function Rain({ record, own }) {
+  const { rain_share: share = null, rain_source: from = null, warmer_c: warmer = null } = record.production;
   const pct = share === null ? null : Math.round(share * 100);
   const put = (patch) => change({ production: { ...record.production, ...patch } }, t('undo.rain'));
   const step = (by) => {
@@ -20,8 +23,9 @@ export function Rain({ record }) {
   };
   return html`<section class="part"><h2 class="sides">${t('rain.title')}<span class="mine">${pct === null ? t('rain.unknown') : t('rain.of_normal', { n: pct })}</span></h2>
     <${Stepper} less=${t('rain.less')} more=${t('rain.more')} onLess=${() => step(-STEP)} onMore=${() => step(STEP)}><${Line} pct=${pct}/></${Stepper}>
-    ${pct !== null && html`<${Choice} label=${t('rain.from')} options=${SOURCES.map((value) => ({ value, label: t(`rain.${value}`) }))} value=${from} onPick=${(value) => put({ rain_source: value })} row/>
-      <button type="button" class="btn plain left" onClick=${() => put({ rain_share: null, rain_source: null })}>${t('rain.forget')}</button>`}
+    ${own.warmth_response_per_c !== 0 && html`<${Field} label=${t('rain.warmer')} hint=${t('rain.warmer_why')} mode="text" unit=${warmerUnit()} value=${warmer === null ? '' : warmerShown(warmer)} limits=${[-WARMEST, WARMEST]} onChange=${(text) => put({ warmer_c: warmerFrom(readNumber(text, -WARMEST, WARMEST)), rain_source: from ?? 'guess' })}/>`}
+    ${(pct !== null || warmer !== null) && html`<${Choice} label=${t('rain.from')} options=${SOURCES.map((value) => ({ value, label: t(`rain.${value}`) }))} value=${from} onPick=${(value) => put({ rain_source: value })} row/>
+      <button type="button" class="btn plain left" onClick=${() => put({ rain_share: null, rain_source: null, warmer_c: null })}>${t('rain.forget')}</button>`}
     <p class="small quiet">${t('rain.why')}</p></section>`;
 }
 

@@ -74,3 +74,14 @@ export const massWords = (kg) => (units.value === 'us'
 export const areaWords = (ha) => (units.value === 'us'
   ? t('unit.acre', { n: number(rounded(converted({ value: ha, unit: 'ha', to: 'acre' }), 1), 1) })
   : t('unit.ha', { n: number(rounded(ha, 1), 1) }));
+
+/** A depth in the ground. @param {number} cm */
+export const depthWords = (cm) => (units.value === 'us' ? t('unit.inch', { n: number(converted({ value: cm, unit: 'cm', to: 'in' }), 1) }) : t('unit.cm', { n: rounded(cm, 0) }));
+
+/** A temperature. @param {number} c */
+export const warmthWords = (c) => t(units.value === 'us' ? 'unit.f' : 'unit.c', { n: rounded(units.value === 'us' ? converted({ value: c, unit: 'c', to: 'f' }) : c, 1) });
+
+/** A difference of temperature, to type and to keep in degrees C. */
+export const warmerShown = (c) => rounded(units.value === 'us' ? c * 1.8 : c, 2);
+export const warmerFrom = (typed) => (typed === null ? null : units.value === 'us' ? typed / 1.8 : typed);
+export const warmerUnit = () => t(units.value === 'us' ? 'unit.f_sign' : 'unit.c_sign');
