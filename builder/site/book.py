@@ -46,7 +46,9 @@ def book_pages(region: Region) -> dict[str, bytes]:
 
     The first language lies at the top, others in a folder of their name, e.g. "es/index.html".
     """
-    spoken = [tag for tag in region.head.languages if tag in languages() and tag in languages(WORDS)]
+    spoken = [
+        tag for tag in region.head.languages if tag in languages() and tag in languages(WORDS)
+    ]
     env = environment()
     pages: dict[str, bytes] = {}
     for tag in spoken or [FIRST]:
@@ -57,6 +59,7 @@ def book_pages(region: Region) -> dict[str, bytes]:
 
 
 def _pages(env: Environment, seen: Look, say: Phrases, folder: str) -> Iterator[tuple[str, bytes]]:
+    region = seen.region
     frame = _frame(seen, say, folder)
 
     def page(name: str, template: str, title: str, **names: object) -> tuple[str, bytes]:
@@ -66,14 +69,14 @@ def _pages(env: Environment, seen: Look, say: Phrases, folder: str) -> Iterator[
         )
         return name, content
 
-    zones = [zone_view(seen, zone.id) for zone in seen.region.zones]
+    zones = [zone_view(seen, zone.id) for zone in region.zones]
     by_kind = [
         (say.say(f"zones.{place}"), [view for view in zones if (seen.belts[view.id].lens) == lens])
         for place, lens in (("slope", False), ("beside", True))
     ]
     groups = plants.by_form(seen)
     yield page("index.html", "index.html", frame.region, kinds=by_kind,
-               warns=grounds.region_warns(seen), answers_for=seen.region.head.answers_for)  # fmt: skip
+               warns=grounds.region_warns(seen), answers_for=region.head.answers_for)  # fmt: skip
     for view in zones:
         yield page(f"zone-{view.id}.html", "zone.html", view.name, zone=view)
     counts = [

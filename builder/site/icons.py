@@ -104,8 +104,14 @@ def _path(d: str) -> list[Point]:
             start = points[-1]
             if letter == "S":
                 numbers = [2 * start[0] - lead[0], 2 * start[1] - lead[1], *numbers]
-            first, lead, end = (numbers[0], numbers[1]), (numbers[2], numbers[3]), (numbers[4], numbers[5])
-            points += [_bezier(start, first, lead, end, step / STEPS) for step in range(1, STEPS + 1)]
+            first, lead, end = (
+                (numbers[0], numbers[1]),
+                (numbers[2], numbers[3]),
+                (numbers[4], numbers[5]),
+            )
+            points += [
+                _bezier(start, first, lead, end, step / STEPS) for step in range(1, STEPS + 1)
+            ]
         elif letter != "z":
             raise ValueError(f"the icon's path uses {letter}, which is not painted")
     return points

@@ -1,4 +1,4 @@
-"""Joins the scripts that the app needs at once into one, so that a phone asks for one file, not a hundred.
+"""Joins the scripts the app needs at once: a phone asks for one file, not a hundred.
 
 Each module keeps its own scope: it becomes a function that gives its exports, run in the order in
 which modules need each other. Scripts loaded later stay files of their own and take what they
@@ -56,7 +56,9 @@ def joined(scripts: Mapping[str, str], first: str) -> dict[str, str]:
     for path in order:
         module = taken_apart(path, scripts[path], numbers)
         text = _later_from(module.text, path, first)
-        parts.append(f"{REGISTRY}[{numbers[path]}]=(()=>{{\n{text}\nreturn{{{','.join(module.exports)}}}}})();")
+        parts.append(
+            f"{REGISTRY}[{numbers[path]}]=(()=>{{\n{text}\nreturn{{{','.join(module.exports)}}}}})();"
+        )
     parts.append(f"export{{{REGISTRY}}};\n")
     result = {first: "\n".join(parts)}
     for path, text in scripts.items():

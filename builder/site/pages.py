@@ -1,4 +1,4 @@
-"""Renders the pages that can be read without script. Templates loop and show; they decide nothing."""
+"""Renders the pages. Templates loop and show; they decide nothing."""
 
 from __future__ import annotations
 

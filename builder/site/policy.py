@@ -1,4 +1,4 @@
-"""The content security policy of every page: own files only, no inline script, nothing elsewhere."""
+"""The content security policy of each page: own files only, no inline script, no other host."""
 
 from __future__ import annotations
 

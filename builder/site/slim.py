@@ -72,7 +72,7 @@ def _template(text: str, at: int, open_brackets: list[str]) -> str:
 
 
 def _between(last: str, gap: str, piece: str) -> str:
-    """What must stay between two tokens: a line end always, a space where words or signs would join."""
+    """What stays between two tokens: a line end always, a space where words or signs would join."""
     if gap == "\n":
         return "\n" if last else ""
     if not gap or not last:

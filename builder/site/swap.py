@@ -62,7 +62,7 @@ def _holds(path: Path, content: bytes) -> bool:
 
 
 def _same_file(old: Path, new: Path) -> None:
-    """The same file under the new folder: a link where the disk allows it, else a copy with its time."""
+    """The same file under the new folder: a link where the disk allows it, else a copy."""
     try:
         os.link(old, new)
     except OSError:

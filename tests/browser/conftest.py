@@ -1,8 +1,8 @@
 """The built site on loopback, and Debian's Chromium beside it.
 
-    site      the demo site, built once from the tables in keydata/ and served
-    serve     serve(folder_or_files) -> Server, for tests that change what is served
-    browser   browser.phone(profile) -> Phone: one browser process with a profile that outlives it
+site      the demo site, built once from the tables in keydata/ and served
+serve     serve(folder_or_files) -> Server, for tests that change what is served
+browser   browser.phone(profile) -> Phone: one browser process with a profile that outlives it
 """
 
 from __future__ import annotations
@@ -14,8 +14,8 @@ import pytest
 from browser.helpers import Browser, Server
 
 from builder.site.build import site_files
-from builder.steps.checking import check_region
 from builder.steps.building import compile_region
+from builder.steps.checking import check_region
 
 ROOT = Path(__file__).parent.parent.parent
 DEMO = "sorrel_plateau"

@@ -4,7 +4,9 @@ import posixpath
 import re
 
 
-def test_the_first_page_without_script_leads_to_every_book_page(browser, site, demo_files, tmp_path):
+def test_the_first_page_without_script_leads_to_every_book_page(
+    browser, site, demo_files, tmp_path
+):
     phone = browser.phone(tmp_path / "profile", java_script_enabled=False)
     page = phone.page
     page.goto(site.address)
@@ -20,7 +22,9 @@ def test_the_first_page_without_script_leads_to_every_book_page(browser, site, d
         reached.add(path)
         for link in re.findall(r'href="([^"#]+)', demo_files[path].decode()):
             target = posixpath.normpath(posixpath.join(posixpath.dirname(path), link))
-            assert target in demo_files or target.endswith("/booklet.pdf"), f"{path} leads to {target}"
+            assert target in demo_files or target.endswith("/booklet.pdf"), (
+                f"{path} leads to {target}"
+            )
             if "/book/" in target:
                 waiting.append(target)
     assert reached == {path for path in demo_files if "/book/" in path and "/book/es/" not in path}
@@ -38,7 +42,11 @@ def test_a_zone_page_says_what_the_tables_say(browser, site, region, demo_files,
         assert zone.why_here in said
     page.goto(f"{site.address}regions/sorrel_plateau/book/cautions.html")
     said = page.locator("main").inner_text()
-    deadly = [p for p in region.plants if any(c.who == "people" and c.level == "deadly" for c in p.cautions)]
+    deadly = [
+        p
+        for p in region.plants
+        if any(c.who == "people" and c.level == "deadly" for c in p.cautions)
+    ]
     assert len(deadly) > 0
     for plant in deadly:
         assert plant.common in said

@@ -9,8 +9,8 @@ import pytest
 from browser.helpers import Crew, key_site, known_site, records
 
 from builder.site.build import site_files
-from builder.steps.checking import check_region
 from builder.steps.building import compile_region
+from builder.steps.checking import check_region
 
 
 @pytest.fixture(scope="module")
@@ -75,7 +75,9 @@ def test_new_tables_wait_and_old_records_keep_their_digits(
     with page.expect_navigation():
         page.get_by_role("button", name="Use it now").click()
     page.locator(".p-setup").wait_for()
-    assert zone_page(page, server.address, site_id) == before, "the new program, still the old tables"
+    assert zone_page(page, server.address, site_id) == before, (
+        "the new program, still the old tables"
+    )
     to_setup(page)
     with page.expect_navigation():
         page.get_by_role("button", name="Use the new edition").click()

@@ -19,7 +19,9 @@ WHOLE = {
 
 @pytest.fixture
 def page(browser, serve, tmp_path):
-    files = {f"store/{path.name}": path.read_bytes() for path in (APP / "js" / "store").glob("*.js")}
+    files = {
+        f"store/{path.name}": path.read_bytes() for path in (APP / "js" / "store").glob("*.js")
+    }
     files["index.html"] = b"<!doctype html><title>store</title>"
     phone = browser.phone(tmp_path / "profile")
     phone.page.goto(serve(files).address)
@@ -157,11 +159,25 @@ def test_deep_or_vast_parts_are_left_out(page):
 
 
 def test_a_photo_that_is_no_picture_is_refused(page):
-    photo = {"id": "p1", "site_id": WHOLE["id"], "type": "image/jpeg", "bytes_base64": "PHNjcmlwdD4="}
-    wrong = [photo, {**photo, "type": "image/svg+xml"}, {**photo, "bytes_base64": "%%%"}, {**photo, "bytes_base64": "/9j/4A=="}]
+    photo = {
+        "id": "p1",
+        "site_id": WHOLE["id"],
+        "type": "image/jpeg",
+        "bytes_base64": "PHNjcmlwdD4=",
+    }
+    wrong = [
+        photo,
+        {**photo, "type": "image/svg+xml"},
+        {**photo, "bytes_base64": "%%%"},
+        {**photo, "bytes_base64": "/9j/4A=="},
+    ]
     got = run(page, "return S.readRecords(arg);", file_of(WHOLE, photos=wrong))
     assert len(got["photos"]) == 1
-    assert [one["why"] for one in got["refused"]] == ["not_a_picture", "incomplete", "not_a_picture"]
+    assert [one["why"] for one in got["refused"]] == [
+        "not_a_picture",
+        "incomplete",
+        "not_a_picture",
+    ]
 
 
 def test_the_same_id_with_other_content_is_kept_beside(page):

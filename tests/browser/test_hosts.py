@@ -5,7 +5,6 @@ import threading
 
 import pytest
 
-
 # Chromium's own errands, made over a blank page or at the sight of a form; the site names no host
 # (tests/site/test_build.py looks for addresses in every file).
 BROWSERS_OWN = (".googleapis.com:443", ".google.com:443", ".googleapis.com/", ".google.com/")

@@ -20,9 +20,7 @@ def test_install_cut_answer_kill_and_find_again(browser, serve, demo_files, regi
     assert phone.page.evaluate("Boolean(navigator.serviceWorker.controller)")
 
     crew = Crew(phone, region, texts)
-    ids = {
-        zone.id: key_site(crew, known_site(region, zone.id), zone) for zone in region.zones
-    }
+    ids = {zone.id: key_site(crew, known_site(region, zone.id), zone) for zone in region.zones}
     assert len(set(ids.values())) == 16
     phone.page.evaluate("location.hash = '#/sites'")
     phone.page.get_by_role("button", name="New site").wait_for()
@@ -35,7 +33,10 @@ def test_install_cut_answer_kill_and_find_again(browser, serve, demo_files, regi
     listed = again.page.locator("main").inner_text()
     assert [zone.letter for zone in region.zones if f"Ground {zone.letter}" not in listed] == []
     kept = records(again.page)
-    called = {zone: (kept[site]["call"]["verdict"], kept[site]["call"]["zone_id"]) for zone, site in ids.items()}
+    called = {
+        zone: (kept[site]["call"]["verdict"], kept[site]["call"]["zone_id"])
+        for zone, site in ids.items()
+    }
     assert called == {zone.id: ("zone", zone.id) for zone in region.zones}
     last = region.zones[-1]
     again.page.goto(f"{server.address}#/site/{ids[last.id]}/zone")

@@ -52,10 +52,15 @@ def records_file(demo_files, tmp_path_factory):
             site_id = f"{len(sites)}0000000-0000-4000-8000-000000000000"
             bare = {"place": {}, "disturbance": None, "date": f"2026-{own['month']:02d}-11"}
             sites[verdict] = record(tables, site_id, **{**bare, **own})
-    findings = [{"plant_id": plant, "state": "found", "cover": cover, "named": None} for plant, cover in FOUND]
+    findings = [
+        {"plant_id": plant, "state": "found", "cover": cover, "named": None}
+        for plant, cover in FOUND
+    ]
     sites["sage"] = record(tables, "a0000000-0000-4000-8000-000000000000", findings=findings)
     path = tmp_path_factory.mktemp("records") / "records.json"
-    path.write_text(json.dumps({"format": 1, "kind": "beltbook records", "sites": list(sites.values())}))
+    path.write_text(
+        json.dumps({"format": 1, "kind": "beltbook records", "sites": list(sites.values())})
+    )
     return path, {name: site["id"] for name, site in sites.items()}
 
 
@@ -116,9 +121,13 @@ def test_no_page_keeps_anyone_out(app, records_file, mode):
 
 def test_axe_sees_a_bad_page(app):
     show(app, "sites")
-    app.page.evaluate("['img', 'button'].forEach((name) => document.querySelector('main').append(document.createElement(name)))")
+    app.page.evaluate(
+        "['img', 'button'].forEach((name) => document.querySelector('main').append(document.createElement(name)))"
+    )
     found = faults(app, AXE.read_text("utf-8"))
-    app.page.evaluate("document.querySelectorAll('main > img, main > button').forEach((one) => one.remove())")
+    app.page.evaluate(
+        "document.querySelectorAll('main > img, main > button').forEach((one) => one.remove())"
+    )
     app.errors.clear()
     assert {one.split(":")[0] for one in found} >= {"image-alt", "button-name"}
 
@@ -144,7 +153,9 @@ def test_every_key_is_large_enough_for_a_glove(app, records_file):
 
 def test_answers_are_larger_still(app, records_file):
     show(app, f"site/{records_file[1]['sage']}/plants/enter/bromus_tectorum")
-    sizes = app.page.locator(".covers button").evaluate_all("keys => keys.map((key) => key.offsetHeight)")
+    sizes = app.page.locator(".covers button").evaluate_all(
+        "keys => keys.map((key) => key.offsetHeight)"
+    )
     assert len(sizes) == 8
     assert min(sizes) >= 76
 
@@ -271,7 +282,10 @@ def test_each_verdict_opens_the_edge_in_its_own_way(app, records_file):
     seen = {}
     for verdict in ("zone", "edge", "mosaic", "misfit", "thin"):
         show(app, f"site/{ids[verdict]}/zone")
-        count = {name: app.page.locator(f".edge.open {name}").count() for name in (".opened", ".inlay", ".gap", ".even")}
+        count = {
+            name: app.page.locator(f".edge.open {name}").count()
+            for name in (".opened", ".inlay", ".gap", ".even")
+        }
         seen[verdict] = count
     assert seen["zone"][".opened"] == 1
     assert seen["edge"][".opened"] == 2

@@ -135,7 +135,13 @@ def test_a_full_phone_is_told_and_the_change_waits_until_there_is_room(page):
         return { filled, code, faults, unsaved: writer.unsaved, kept: (await S.loadSite(store, writer.stored.id)).notes };
         """,
     )
-    assert got == {"filled": "full", "code": "full", "faults": ["full"], "unsaved": True, "kept": ""}
+    assert got == {
+        "filled": "full",
+        "code": "full",
+        "faults": ["full"],
+        "unsaved": True,
+        "kept": "",
+    }
     limited(page, 100_000_000)
     after = run(
         page,
@@ -165,7 +171,12 @@ def test_the_reserve_takes_what_was_entered_on_a_full_phone(page):
                  room: [before.nearly_full, after.nearly_full] };
         """,
     )
-    assert got == {"filled": "full", "told": ["little room"], "length": 100_000, "room": [False, True]}
+    assert got == {
+        "filled": "full",
+        "told": ["little room"],
+        "length": 100_000,
+        "room": [False, True],
+    }
 
 
 def test_a_lost_connection_is_opened_once_more(page):
@@ -280,7 +291,10 @@ def test_merging_adds_replaces_keeps_and_holds_both_on_conflict(page):
         return { first, again, clash, repeat, sides: sides.map((side) => side.site.notes), mine: (await S.loadSite(store, a.id)).notes };
         """,
     )
-    count = {kind: {name: len(ids) for name, ids in got[kind].items()} for kind in ("first", "again", "clash", "repeat")}
+    count = {
+        kind: {name: len(ids) for name, ids in got[kind].items()}
+        for kind in ("first", "again", "clash", "repeat")
+    }
     none = {"added": 0, "replaced": 0, "kept": 0, "same": 0, "conflicts": 0}
     assert count["first"] == {**none, "added": 1, "replaced": 1}
     assert count["again"] == {**none, "same": 2, "kept": 1}

@@ -15,7 +15,7 @@ def version(mark):
     """A small site whose every file says which version it belongs to, with the real worker."""
     files = {path: f"{path} of {mark}".encode() for path in SHELL}
     files["index.html"] = (
-        f'<!doctype html><title>{mark}</title><h1>{mark}</h1>'
+        f"<!doctype html><title>{mark}</title><h1>{mark}</h1>"
         '<script type="module" src="app/js/main.js"></script>'
     ).encode()
     files["app/js/updates.js"] = slim_script(
@@ -98,7 +98,9 @@ def test_a_new_version_waits_until_the_person_puts_it_to_use(phone, serve):
     assert phone.page.locator("h1").inner_text() == "one"
     assert title(phone) == "one"
     phone.page.locator("html[data-told~=waiting]").wait_for(state="attached")
-    assert "app/js/updates.js" not in server.asked[asked:], "what did not change is not fetched again"
+    assert "app/js/updates.js" not in server.asked[asked:], (
+        "what did not change is not fetched again"
+    )
     cut(phone, server)
     assert title(phone) == "one"
     phone.page.locator("html[data-told~=waiting]").wait_for(state="attached")

@@ -21,7 +21,9 @@ from builder.site.worker import worker_script
 def region(name, edition="1", languages=("en",)):
     """A region's compiled files, as small as the site cares."""
     pack = {"region": {"id": name, "edition": edition, "date": "2026-01-01", "invented": True}}
-    said = {tag: json.dumps({"region": {"name": f"{name} {tag} <b>"}}).encode() for tag in languages}
+    said = {
+        tag: json.dumps({"region": {"name": f"{name} {tag} <b>"}}).encode() for tag in languages
+    }
     return SiteRegion(json.dumps(pack).encode(), said, {"index.html": b"<!doctype html>book"})
 
 
@@ -51,7 +53,11 @@ class Elements(HTMLParser):
 
 
 def parts(page, tag):
-    return [(attributes, text) for name, attributes, text in Elements(page.decode()).found if name == tag]
+    return [
+        (attributes, text)
+        for name, attributes, text in Elements(page.decode()).found
+        if name == tag
+    ]
 
 
 def test_same_packs_and_sources_give_the_same_bytes(files):
@@ -105,7 +111,9 @@ def test_every_import_leads_to_a_file(files):
 
 def test_the_first_page_names_only_files_that_are_there(files):
     page = files["index.html"]
-    named = [a["href"] for a, _ in parts(page, "link")] + [a["src"] for a, _ in parts(page, "script")]
+    named = [a["href"] for a, _ in parts(page, "link")] + [
+        a["src"] for a, _ in parts(page, "script")
+    ]
     assert [name for name in named if name not in files] == []
     assert {"app/js/main.js", "app/js/before.js", "manifest.webmanifest"} <= set(named)
 
@@ -127,7 +135,10 @@ def test_nothing_of_the_site_points_elsewhere(files):
     allowed = {"http://www.w3.org"}
     found = set()
     for path, content in files.items():
-        if path.endswith((".js", ".css", ".html", ".json", ".webmanifest")) and path != "field.html":
+        if (
+            path.endswith((".js", ".css", ".html", ".json", ".webmanifest"))
+            and path != "field.html"
+        ):
             found |= set(re.findall(r"https?://[\w.-]+", content.decode()))
     assert "http://www.w3.org" in found
     licence_lines = {"https://github.com"}  # one library keeps its address in its first line
@@ -190,7 +201,9 @@ def test_the_single_file_allows_exactly_what_it_holds(files):
     page = files["field.html"]
     [meta] = [a["content"] for a, _ in parts(page, "meta") if "http-equiv" in a]
     policy = {rule.split(" ", 1)[0]: rule.split(" ")[1:] for rule in meta.split("; ")}
-    scripts = [(a, text) for a, text in parts(page, "script") if a.get("type") != "application/json"]
+    scripts = [
+        (a, text) for a, text in parts(page, "script") if a.get("type") != "application/json"
+    ]
     hashes = {hash_source(text) for _, text in scripts}
     assert set(policy["script-src"]) == hashes | {"data:"}
     assert {hash_source(text) for _, text in parts(page, "style")} == set(policy["style-src"])

@@ -10,7 +10,11 @@ LIBRARIES = {"preact": "app/vendor/preact.js", "preact/hooks": "app/vendor/hooks
 @pytest.mark.parametrize(
     ("text", "path", "expected"),
     [
-        ("import { h } from 'preact';", "app/js/main.js", "import { h } from '../vendor/preact.js';"),
+        (
+            "import { h } from 'preact';",
+            "app/js/main.js",
+            "import { h } from '../vendor/preact.js';",
+        ),
         ('import"preact/hooks"', "app/js/screens/a.js", 'import"../../vendor/hooks.js"'),
         ("import('preact')", "app/vendor/x.js", "import('./preact.js')"),
         ("export*from'preact'", "app/vendor/x.js", "export*from'./preact.js'"),

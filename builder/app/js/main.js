@@ -36,7 +36,6 @@ async function bringTables(code, offers) {
   home.value = makeRegion(use.pack, use.texts[code] ?? use.texts.en);
   region.value = home.value;
   unitsFrom(use.pack.region.units);
-  prepare(use.pack);
   return null;
 }
 
@@ -65,6 +64,7 @@ async function run() {
   }
   root.replaceChildren();
   render(html`<${App}/>`, root);
+  setTimeout(() => prepare(tables.value.pack));
   addEventListener('hashchange', () => { follow().catch((fault) => { trouble.value = { code: fault.code ?? 'lost' }; }); });
   // The phone may end the page at any time once it is out of sight.
   addEventListener('visibilitychange', () => { if (document.visibilityState === 'hidden') saved().catch(() => {}); });
