@@ -71,7 +71,7 @@ def usual_shares(found: Floats, cover_counts: Floats, plots: Floats) -> Floats:
     """
     by_step = cover_counts.sum(axis=2)
     above = np.cumsum(by_step[:, ::-1], axis=1)[:, ::-1][:, 1:THRESHOLDS]
-    return np.column_stack([found.sum(axis=1), above]) / plots.sum()
+    return np.asarray(np.column_stack([found.sum(axis=1), above]) / plots.sum())
 
 
 def _by_cell(region: Region, rows: list[Row]) -> tuple[Floats, Floats, Floats]:

@@ -15,7 +15,10 @@ from numpy.typing import NDArray
 from builder.key.prepare import Floats
 
 Whole = NDArray[np.int64]
-MISSING = 'scikit-learn is not installed, so there is nothing to compare with: pip install "beltbook[proof]"'
+MISSING = (
+    "scikit-learn is not installed, so there is nothing to compare with: "
+    'pip install "beltbook[proof]"'
+)
 NAMES = (
     "random_forest",
     "logistic_regression",

@@ -27,8 +27,9 @@ ASK_ON: dict[str, Any] = {"sure": 2.0, "least_gain": -9.0}
 
 @dataclass(frozen=True)
 class Calls:
-    """Calls in arrays: belief [site, zone], verdict [site] index into VERDICTS, and the rest [site].
+    """Calls in arrays.
 
+    belief [site, zone]; verdict [site] index into VERDICTS; pair, fit, finds_cb, asked [site]
     scores [site, 4] zone, edge, mosaic, misfit; heard: what was answered
     """
 
@@ -44,7 +45,7 @@ class Calls:
     @property
     def leader(self) -> NDArray[np.int64]:
         """Index of the zone believed most, first of equals."""
-        return self.belief.argmax(axis=1)
+        return np.asarray(self.belief.argmax(axis=1))
 
     @property
     def stated(self) -> Floats:

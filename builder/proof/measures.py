@@ -1,4 +1,4 @@
-"""How good beliefs are: hits, kappa, log loss, Brier, calibration with the band of a perfect key."""
+"""How good beliefs are: hits, kappa, log loss, Brier, calibration and a perfect key's band."""
 
 from __future__ import annotations
 

@@ -7,6 +7,7 @@ simulated sites, and each names its set and n.
 from __future__ import annotations
 
 from collections.abc import Callable
+from dataclasses import replace
 from typing import Any
 
 import numpy as np
@@ -54,6 +55,7 @@ def prove_region(
     key = with_settings(pack, session)
     on_plots = None
     if known is not None:
+        known = in_region_order(known, region)
         near = neighbours_by_likeness(zone_means(known))
         name = f"known plots of {region.id} ({known.names[0]}, {known.names[1]})"
         on_plots = prove_known(known, near, seed, name, tell)
@@ -80,6 +82,20 @@ def prove_region(
     made["summary"] = summary(made)
     tell("done", 1.0)
     return made
+
+
+def in_region_order(known: Known, region: Region) -> Known:
+    """The same plots with zones in the region's order and by its ids; others follow after them.
+
+    A zone may be called by its id, its name or its short name.
+    """
+    ids = {one: zone.id for zone in region.zones for one in (zone.short, zone.name, zone.id)}
+    told = [ids.get(name, name) for name in known.zone_ids]
+    place = {zone.id: z for z, zone in enumerate(region.zones)}
+    order = sorted(range(len(told)), key=lambda z: (place.get(told[z], len(place)), z))
+    rank = np.empty(len(order), int)
+    rank[order] = np.arange(len(order))
+    return replace(known, zone_ids=tuple(told[z] for z in order), zone=rank[known.zone])
 
 
 def _printed_figures(

@@ -54,8 +54,8 @@ def read_known(
     zone_ids = tuple(dict.fromkeys(zones[plot] for plot in bound.plots.ids))
     at = {one: z for z, one in enumerate(zone_ids)}
     zone = np.array([at[zones[plot]] for plot in bound.plots.ids])
-    place, answers, more = _sites(zones_path, bound.plots.ids)
-    plots = replace(bound.plots, place=place, answers=answers)
+    ground, answers, more = _sites(zones_path, bound.plots.ids)
+    plots = replace(bound.plots, place=ground, answers=answers)
     known = Known(plots, found, zone_ids, zone, (plots_path.name, zones_path.name))
     if plants is None:
         known, told = _without_unfound(known, plots_path)
@@ -131,7 +131,7 @@ def _sizes(
 
 
 def _without_unfound(known: Known, path: Path) -> tuple[Known, list[Problem]]:
-    ever = (known.plots.steps >= 0).any(axis=0)
+    ever = np.asarray((known.plots.steps >= 0).any(axis=0))
     problems = [
         problem_at(
             Place(str(path), 1, 1),
@@ -170,14 +170,12 @@ def _sites(
             low, high = PLACE_LIMITS[name]
             wrong = (words != "").to_numpy() & ~((values >= low) & (values <= high))
             if wrong.any():
-                row = int(
-                    table.lines[list(table.frame[PLOT].str.strip()).index(ids[int(wrong.argmax())])]
-                )
-                told = f'{name} "{words.iloc[int(wrong.argmax())]}" is no number from {low:g} to {high:g}'
-                here = Place(str(path), row, column + 1)
-                problems.append(
-                    problem_at(here, "plots-site", told, "It counts as unknown.", CAUTION)
-                )
+                first = int(wrong.argmax())
+                row = list(table.frame[PLOT].str.strip()).index(ids[first])
+                told = f'{name} "{words.iloc[first]}" is no number from {low:g} to {high:g}'
+                here = Place(str(path), int(table.lines[row]), column + 1)
+                fix = "It counts as unknown."
+                problems.append(problem_at(here, "plots-site", told, fix, CAUTION))
             place[name] = np.where(wrong, np.nan, values)
         elif 2 <= words[words != ""].nunique() <= MOST_ANSWERS:
             answers[name] = [word or None for word in words]

@@ -31,7 +31,7 @@ SETTING_SITES = 480
 BLIND_ZONES = 6
 BLIND_SITES = 60
 USUAL_SITES = 60
-THREE_SITES = 60
+THREE_SITES = 120
 ANSWERS = 8
 OBSERVERS = {
     "careful": simulator.CAREFUL,
@@ -180,29 +180,49 @@ class SimulatedProof:
     def _three_looks(self) -> dict[str, Any]:
         """A plot and two spots with the stand question answered as settings.stand says."""
         made = {}
-        stand = self.key.settings["stand"]
-        look = self.key.settings["look_again"]
-        for name, case in self._cases().items():
+        cases = self._cases()
+        for name, case in cases.items():
             rows = self.rng.permutation(len(case.zones))[:THREE_SITES]
-            zones, here = case.zones[rows], case.plots.take(rows)
-            sides = [self._spots(zones[:, side], look) for side in (0, 1)]
-            first = call_sites(self.asking_on, here, ANSWERS)
-            said = []
-            for at in range(len(rows)):
-                words = list(stand[name])
-                word = words[int(self.rng.choice(len(words), p=list(stand[name].values())))]
-                records = [record_of(self.key, first.heard, here, at)]
-                records += [record_of(self.key, heard, plots, at) for heard, plots in sides]
-                verdict = call_three(self.key.pack, *records, stand=word)["verdict"]
-                said.append(VERDICTS.index(verdict))
-            made[name] = _shares(np.array(said))
+            looks = [(self.asking_on, case.plots.take(rows), ANSWERS)]
+            looks += [(self.asking_on, *self._spots(case.zones[rows, side])) for side in (0, 1)]
+            made[name] = _shares(self._judged(looks, name))
+        said = []
+        for z, pack in self.blind:
+            key = with_settings(pack, {**self.session, **ASK_ON})
+            zones = np.full(-(-THREE_SITES // len(self.blind)), z)
+            looks = [(key, self._spots(zones)[0], ANSWERS)]
+            looks += [(key, *self._spots(zones)) for _ in (0, 1)]
+            said.append(self._judged(looks, "misfit"))
+        if said:
+            made["misfit"] = _shares(np.concatenate(said))
+        poor = [self._poor().take(np.arange(THREE_SITES)) for _ in range(3)]
+        made["thin"] = _shares(
+            self._judged([(self.asking_on, plots, ANSWERS) for plots in poor], "zone")
+        )
         return made
 
-    def _spots(self, zones: Whole, look: dict[str, int]) -> Any:
+    def _judged(self, looks: list[tuple[Key, Plots, int]], name: str) -> Whole:
+        """Verdicts of three looks each; name: the truth, which decides what people say."""
+        stand = self.key.settings["stand"][name]
+        words, chances = list(stand), list(stand.values())
+        heard = [call_sites(key, plots, answers).heard for key, plots, answers in looks]
+        said = []
+        for at in range(len(looks[0][1])):
+            word = words[int(self.rng.choice(len(words), p=chances))]
+            one, two, three = (
+                record_of(key, told, plots, at)
+                for (key, plots, _), told in zip(looks, heard, strict=True)
+            )
+            verdict = call_three(looks[0][0].pack, one, two, three, word)["verdict"]
+            said.append(VERDICTS.index(verdict))
+        return np.array(said)
+
+    def _spots(self, zones: Whole) -> tuple[Plots, int]:
+        """Sites inside zones, and how many answers a spot is given."""
+        look = self.key.settings["look_again"]
         drawn = simulator.pure(self._world(), zones, self.rng)
         plots = simulator.observe(*drawn, simulator.FORGETFUL, self.rng)
-        answers = look["named"] + look["prompts"]
-        return call_sites(self.asking_on, plots, answers).heard, plots
+        return plots, look["named"] + look["prompts"]
 
     def _disturbed(self) -> dict[str, Any]:
         """Wrong calls stated at .8 and more, by disturbance; what is kept differs by site."""
