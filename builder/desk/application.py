@@ -16,10 +16,12 @@ from builder.desk import (
     editions,
     guards,
     overview,
+    proof,
     served,
     sheets,
     start,
     tables,
+    working,
 )
 from builder.desk.jobs import Jobs
 from builder.desk.phrases import read_phrases
@@ -71,7 +73,10 @@ def create_app(settings: Settings) -> Flask:
     app.extensions["patience"] = guards.Patience()
     app.extensions["shelf"] = Shelf(settings.keydata)
     app.extensions["jobs"] = Jobs(settings.home)
-    for family in (accounts, overview, tables, built, editions, sheets, start, served):
+    families = (
+        accounts, overview, tables, proof, built, working, editions, sheets, start, served,
+    )  # fmt: skip
+    for family in families:
         app.register_blueprint(family.pages)
     app.add_url_rule("/face/<path:name>", "face", face)
     app.register_error_handler(HTTPException, refuse)

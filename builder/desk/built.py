@@ -6,7 +6,6 @@ import io
 import zipfile
 from dataclasses import dataclass, field
 from pathlib import Path
-from typing import Any
 
 from flask import (
     Blueprint,
@@ -21,14 +20,14 @@ from flask import (
 )
 from werkzeug.wrappers import Response as BaseResponse
 
-from builder.desk.jobs import Busy, Job, Jobs
+from builder.desk.jobs import Busy
 from builder.desk.page import page
 from builder.desk.phrases import counted, read_phrases
 from builder.desk.shelf import Look, shelf
+from builder.desk.working import job_view, jobs
 from builder.steps.notes import last_build, tables_hash
 
 ZIP_DATE = (2020, 1, 1, 0, 0, 0)  # fixed, so that the same site gives the same file
-BAR = 300
 
 pages = Blueprint("build", __name__)
 
@@ -52,25 +51,6 @@ class BuiltView:
     links: list[OutLink] = field(default_factory=list)
     app: str = ""
     booklet: str = ""
-
-
-@dataclass(frozen=True)
-class JobView:
-    """A job, ready for a page."""
-
-    number: int
-    said: str
-    state: str
-    running: bool
-    width: int
-    lines: str
-    href: str
-
-
-def jobs() -> Jobs:
-    """The running desk's jobs."""
-    found: Jobs = current_app.extensions["jobs"]
-    return found
 
 
 def built_view(look: Look) -> BuiltView:
@@ -99,24 +79,6 @@ def built_view(look: Look) -> BuiltView:
         links=links,
         app=url_for("field.send", name=""),
         booklet=booklet_href,
-    )
-
-
-def job_view(job: Job | None) -> JobView | None:
-    """A job for a page, or None."""
-    if job is None:
-        return None
-    say = read_phrases()["jobs"]
-    of = f", {job.done} / {job.of}" if job.of else ""
-    said = f"{say[job.state]}{of} {job.step}".strip()
-    return JobView(
-        number=job.number,
-        said=f"{said} ({job.seconds:.0f} s)",
-        state=job.state,
-        running=job.state == "running",
-        width=round(BAR * job.done / job.of) if job.of else 0,
-        lines="\n".join(job.lines),
-        href=url_for("build.job", number=job.number),
     )
 
 
@@ -154,32 +116,6 @@ def build(region_id: str) -> BaseResponse:
     except Busy:
         flash(say["busy"])
     return redirect(url_for("build.show", region_id=region_id))
-
-
-@pages.get("/jobs/<int:number>")
-def job(number: int) -> Response | dict[str, Any]:
-    """A job's state, for the page that follows it."""
-    found = job_view(jobs().kept.get(number))
-    if found is None:
-        abort(404)
-    return {
-        "said": found.said,
-        "running": found.running,
-        "width": found.width,
-        "lines": found.lines,
-    }
-
-
-@pages.post("/jobs/<int:number>/stop")
-def stop(number: int) -> BaseResponse:
-    """Stops a job; what was built before stays whole."""
-    found = jobs().kept.get(number)
-    if found is None:
-        abort(404)
-    found.stop()
-    flash(read_phrases()["jobs"]["was_stopped"])
-    part = "proof.show" if found.kind == "prove" else "build.show"
-    return redirect(url_for(part, region_id=found.region))
 
 
 @pages.get("/site.zip")

@@ -80,10 +80,10 @@ def slope(
     slope_count = sum(zone.kind != "azonal" for zone in zones)
     base = HEIGHT - 18
     parts.append(text(LEFT - 8, base, "m", 13, "var(--contour)", "end"))
-    parts.append(text(LEFT + 6, base, "low and dry", 13, "var(--contour)"))
+    parts.append(text(LEFT + 6, base, "low", 13, "var(--contour)"))
     high_end = LEFT + 6 + step * slope_count
-    if slope_count >= 6:
-        parts.append(text(high_end, base, "high and cold", 13, "var(--contour)", "end"))
+    if slope_count >= 3:
+        parts.append(text(high_end, base, "high", 13, "var(--contour)", "end"))
     if slope_count < len(zones):
         parts.append(text(high_end + step, base, "off the slope", 13, "var(--contour)"))
     return Markup(svg(WIDTH, HEIGHT, title, "".join(parts), SCREEN, "slope"))
@@ -94,7 +94,8 @@ def _belt(zone, x, wide, y, belt, soft):  # type: ignore[no-untyped-def]
     tall = max(foot - top, 4.0)
     parts = []
     if soft and not belt.lens:
-        reach_top, reach_foot = y(zone.band_m[1] + soft), y(zone.band_m[0] - soft)
+        reach_top = max(y(zone.band_m[1] + soft), 2.0)
+        reach_foot = min(y(zone.band_m[0] - soft), FOOT + 18)
         dashed = 'fill="none" stroke="var(--line)" stroke-dasharray="2 3"'
         parts.append(rect(x + 6, reach_top, wide - 12, reach_foot - reach_top, dashed))
     corner = f'rx="{num(wide / 2)}" ' if belt.lens else ""

@@ -11,7 +11,7 @@ from builder.desk import charts
 from builder.desk.phrases import read_phrases
 from builder.desk.shelf import Look
 
-PARTS = ("overview", "tables", "build", "editions", "sheets")
+PARTS = ("overview", "tables", "proof", "build", "editions", "sheets")
 ENDPOINTS = {
     "overview": "overview.region",
     "tables": "tables.first",

@@ -10,6 +10,7 @@ from contextlib import contextmanager
 from dataclasses import asdict, dataclass
 from functools import cache
 from pathlib import Path
+from typing import Any
 
 from builder.steps.refusals import ToldByStep
 
@@ -121,3 +122,19 @@ def only_builder(out: Path) -> Iterator[None]:
         except BlockingIOError:
             raise BuilderBusy(f"another build is writing into {out}") from None
         yield
+
+
+def proof_notes(folder: Path) -> Path:
+    """Where whole proofs of a region are kept: with the notes beside keydata."""
+    return folder.resolve().parent.parent / NOTES / "proofs" / folder.name
+
+
+def kept_proofs(folder: Path) -> list[dict[str, Any]]:
+    """Whole proofs of a region, oldest first; one that is spoilt is passed over."""
+    found = []
+    for path in sorted(proof_notes(folder).glob("[0-9]*.json")):
+        try:
+            found.append(json.loads(path.read_text(encoding="utf-8")))
+        except (OSError, ValueError):
+            continue
+    return found

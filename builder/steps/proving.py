@@ -17,7 +17,7 @@ from builder.proof.prove import prove_region
 from builder.proof.reading import read_known
 from builder.steps.calling import scale_of
 from builder.steps.checking import check_regions, region_of
-from builder.steps.notes import NOTES
+from builder.steps.notes import kept_proofs, proof_notes
 from builder.steps.refusals import Stopped
 
 Tell = Callable[[str, float], None]
@@ -63,22 +63,6 @@ def prove(
     keep_proof(folder, made)
     _keep(folder, made)
     return Proved(made, before[-1] if before else None, problems)
-
-
-def proof_notes(folder: Path) -> Path:
-    """Where whole proofs of a region are kept: with the notes beside keydata."""
-    return folder.resolve().parent.parent / NOTES / "proofs" / folder.name
-
-
-def kept_proofs(folder: Path) -> list[dict[str, Any]]:
-    """Whole proofs of a region, oldest first; one that is spoilt is passed over."""
-    found = []
-    for path in sorted(proof_notes(folder).glob("[0-9]*.json")):
-        try:
-            found.append(json.loads(path.read_text(encoding="utf-8")))
-        except (OSError, ValueError):
-            continue
-    return found
 
 
 def _keep(folder: Path, made: dict[str, Any]) -> None:
