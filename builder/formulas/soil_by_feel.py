@@ -3,10 +3,11 @@
 A hand cannot tell silt from silt loam, so the path never ends in silt.
 """
 
-from collections.abc import Mapping
+from collections.abc import Mapping, Sequence
+from typing import Any
 
-from builder.formulas.refusal import RefusedError
-from builder.formulas.soil_water import Water, mineral_water
+from builder.formulas.refusal import RefusedError, need_percent
+from builder.formulas.soil_water import Water, layer_water_mm, mineral_water
 from builder.formulas.texture import class_centre
 
 FEEL_PATH: Mapping[str, Mapping[str, str]] = {
@@ -54,3 +55,28 @@ def feel_water(texture: str, organic_matter_pct: float) -> Water:
     """
     sand, clay = class_centre(texture)
     return mineral_water(sand, clay, organic_matter_pct)
+
+
+def pit_water_mm(layers: Sequence[Mapping[str, Any]]) -> list[float]:
+    """Water plants can take from each layer of a pit that was felt. [mm]
+
+    layers  rows from the surface down: texture, thickness_cm, and where known
+            organic_matter_pct (else 1) and stones_vol_pct (else 0)
+
+    Refused: no layer, a class the hand test does not have.
+    Source: saxton_rawls_2006; golden: soil_by_feel.json
+    """
+    if not layers:
+        raise RefusedError("layers_missing")
+    return [
+        layer_water_mm(
+            layer["thickness_cm"],
+            feel_water(layer["texture"], _or(layer.get("organic_matter_pct"), 1.0)).available,
+            need_percent("stones_vol_pct", _or(layer.get("stones_vol_pct"), 0.0)) / 100,
+        )
+        for layer in layers
+    ]
+
+
+def _or(value: float | None, usual: float) -> float:
+    return usual if value is None else value

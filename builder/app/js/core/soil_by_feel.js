@@ -1,6 +1,6 @@
 /** Texture by hand: a short path of questions after Thien (1979), to a class and its water. */
-import { refuse } from './refusal.js';
-import { mineralWater } from './soil_water.js';
+import { needPercent, refuse } from './refusal.js';
+import { layerWaterMm, mineralWater } from './soil_water.js';
 import { classCentre } from './texture.js';
 
 /**
@@ -33,4 +33,18 @@ export function feelStep({ answers }) {
 export function feelWater({ texture, organic_matter_pct }) {
   const [sand_pct, clay_pct] = classCentre({ texture });
   return mineralWater({ sand_pct, clay_pct, organic_matter_pct });
+}
+
+/**
+ * Water plants can take from each layer of a pit that was felt. [mm]
+ * @param {{layers: {texture: string, thickness_cm: number, organic_matter_pct?: number | null,
+ *   stones_vol_pct?: number | null}[]}} of
+ */
+export function pitWaterMm({ layers }) {
+  if (!layers.length) refuse('layers_missing');
+  return layers.map(({ texture, thickness_cm, organic_matter_pct, stones_vol_pct }) => {
+    const water = feelWater({ texture, organic_matter_pct: organic_matter_pct ?? 1 });
+    const stones_share = needPercent('stones_vol_pct', stones_vol_pct ?? 0) / 100;
+    return layerWaterMm({ thickness_cm, available: water.field_capacity - water.wilting_point, stones_share });
+  });
 }
