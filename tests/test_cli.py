@@ -83,8 +83,13 @@ def test_call_writes_one_line_a_plot_and_notes_unknown_plants(region, capsys):
     assert [line.split(",")[0] for line in lines] == ["p1", "p2", "p3"]
     assert [line.split(",")[2] for line in lines] == ["prairie", "breaks", "bottom"]
     assert {line.split(",")[6] for line in lines} == {"9"}
-    assert main(["call", "keydata/willow_breaks", "plots.csv", "--out", "n.csv", "--answers", "2"]) == 0
-    assert all(int(line.split(",")[6]) <= 2 for line in (folder / "n.csv").read_text().splitlines()[1:])
+    assert (
+        main(["call", "keydata/willow_breaks", "plots.csv", "--out", "n.csv", "--answers", "2"])
+        == 0
+    )
+    assert all(
+        int(line.split(",")[6]) <= 2 for line in (folder / "n.csv").read_text().splitlines()[1:]
+    )
 
 
 def test_build_writes_the_whole_site_and_the_second_time_nothing(region, capsys):

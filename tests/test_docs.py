@@ -61,7 +61,9 @@ def test_every_command_in_the_docs_exists():
     assert wrong == []
 
 
-@pytest.mark.parametrize("line", ["beltbook biuld keydata/x", "beltbook check --loudly x", "make tset"])
+@pytest.mark.parametrize(
+    "line", ["beltbook biuld keydata/x", "beltbook check --loudly x", "make tset"]
+)
 def test_a_wrong_command_is_caught(line, capsys):
     assert wrong_with(line)
     capsys.readouterr()

@@ -66,7 +66,12 @@ def test_nothing_tracked_says_what_it_must_not():
 
 @pytest.mark.parametrize(
     "text",
-    ["see /" + "home/ruth/beltbook", "# TO" + "DO: later", "<" * 7 + " HEAD", "raise NotImplemented" + "Error"],
+    [
+        "see /" + "home/ruth/beltbook",
+        "# TO" + "DO: later",
+        "<" * 7 + " HEAD",
+        "raise NotImplemented" + "Error",
+    ],
 )
 def test_a_bad_line_is_caught(text):
     assert len(list(forbidden("somewhere.py", text))) == 1

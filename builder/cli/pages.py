@@ -20,7 +20,9 @@ def add_commands(commands: Any) -> None:
     build.add_argument("--no-booklet", action="store_true", help="leave the booklets as they are")
     build.set_defaults(run=run_build)
 
-    desk = commands.add_parser("desk", help="edit, prove and build in the browser, on this computer")
+    desk = commands.add_parser(
+        "desk", help="edit, prove and build in the browser, on this computer"
+    )
     desk.add_argument("--port", type=int, help="port to listen on; without it the first free one")
     desk.add_argument("--out", type=Path, default=SITE, help="folder of the built site")
     desk.add_argument("--demo", action="store_true", help="build the regions first where needed")

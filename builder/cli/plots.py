@@ -18,10 +18,14 @@ def add_commands(commands: Any) -> None:
     call.add_argument("region", type=Path, help="folder of tables")
     call.add_argument("plots", type=Path, help="CSV: plot_id,plant_id,cover_pct")
     call.add_argument("--out", type=Path, required=True, help="CSV of calls to write")
-    call.add_argument("--answers", type=int, metavar="N", help="answer as a person would, N at most")
+    call.add_argument(
+        "--answers", type=int, metavar="N", help="answer as a person would, N at most"
+    )
     call.add_argument("--scale", metavar="NAME", help=SCALE_HELP)
     call.add_argument("--sites", type=Path, metavar="CSV", help="heights, slopes, months, answers")
-    call.add_argument("--month", type=int, choices=range(1, 13), metavar="1-12", help="of all plots")
+    call.add_argument(
+        "--month", type=int, choices=range(1, 13), metavar="1-12", help="of all plots"
+    )
     call.add_argument("--disturbance", metavar="ID", help="of all plots that state none")
     call.add_argument(
         "--listed-only",
@@ -44,7 +48,9 @@ def add_commands(commands: Any) -> None:
     fit.add_argument("zones", type=Path, help="CSV: plot_id,zone_id and, if known, height_m ...")
     fit.add_argument("--out", type=Path, required=True, help="folder of the new region")
     fit.add_argument("--scale", metavar="NAME", help=SCALE_HELP)
-    fit.add_argument("--latitude", type=float, metavar="DEG", help="latitude of the region's middle")
+    fit.add_argument(
+        "--latitude", type=float, metavar="DEG", help="latitude of the region's middle"
+    )
     fit.add_argument("--seed", type=int, default=0, help="the same seed gives the same tables")
     fit.set_defaults(run=run_fit)
 

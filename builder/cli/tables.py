@@ -15,7 +15,9 @@ def add_commands(commands: Any) -> None:
     check.add_argument("region", nargs="+", type=Path, help="folder of tables, e.g. keydata/NAME")
     check.set_defaults(run=run_check)
 
-    start = commands.add_parser("start", help="write a new region with three zones, ready to change")
+    start = commands.add_parser(
+        "start", help="write a new region with three zones, ready to change"
+    )
     start.add_argument("region", type=Path, help="folder to write, e.g. keydata/NAME")
     start.add_argument("--name", default="", help="name for people; without it from the folder")
     start.set_defaults(run=run_start)

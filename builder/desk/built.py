@@ -105,9 +105,7 @@ def build(region_id: str) -> BaseResponse:
     if look.stops:
         flash(read_phrases()["build"]["stopped"])
         return redirect(url_for("build.show", region_id=region_id))
-    others = [
-        name for name in shelf().ids() if name != region_id and not shelf().look(name).stops
-    ]
+    others = [name for name in shelf().ids() if name != region_id and not shelf().look(name).stops]
     keydata: Path = current_app.config["KEYDATA"]
     folders = [str(keydata / name) for name in sorted([region_id, *others])]
     try:

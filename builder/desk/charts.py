@@ -3,11 +3,11 @@
 from __future__ import annotations
 
 import math
-from collections.abc import Mapping, Sequence
+from collections.abc import Callable, Mapping, Sequence
 
 from markupsafe import Markup
 
-from builder.drawings.belts import ZoneLike, belts_of, paint, tab
+from builder.drawings.belts import Belt, ZoneLike, belts_of, paint, tab
 from builder.drawings.ink import SCREEN, num, path, polyline, rect, svg, text
 
 WIDTH, HEIGHT = 800.0, 306.0
@@ -89,7 +89,9 @@ def slope(
     return Markup(svg(WIDTH, HEIGHT, title, "".join(parts), SCREEN, "slope"))
 
 
-def _belt(zone, x, wide, y, belt, soft):  # type: ignore[no-untyped-def]
+def _belt(
+    zone: ZoneLike, x: float, wide: float, y: Callable[[float], float], belt: Belt, soft: float
+) -> list[str]:
     top, foot = y(zone.band_m[1]), y(zone.band_m[0])
     tall = max(foot - top, 4.0)
     parts = []
@@ -122,6 +124,7 @@ def calibration(points: Sequence[tuple[float, float, float, float]], title: str)
 
     points  (said, right, low, high), all shares 0..1
     """
+
     def x(share: float) -> float:
         return 36 + (share - 0.3) / 0.7 * 250
 

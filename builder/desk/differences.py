@@ -88,13 +88,20 @@ def _names(files: Mapping[str, str]) -> dict[str, str]:
 
 def _where(path: tuple[str, ...], names: Names) -> str:
     parts = [names.get(step) or label_for(step) for step in path]
-    if len(parts) > 1 and path[0] in {"zones", "plants", "occurrence", "production", "soils", "mixes"}:
+    if len(parts) > 1 and path[0] in {
+        "zones",
+        "plants",
+        "occurrence",
+        "production",
+        "soils",
+        "mixes",
+    }:
         parts = parts[1:]
     return ", ".join(parts)
 
 
 def _said(value: Any, unit: str, names: Names) -> str:
-    say = read_phrases()["editions"]
+    say: dict[str, str] = read_phrases()["editions"]
     match value:
         case None:
             return ""
@@ -105,7 +112,9 @@ def _said(value: Any, unit: str, names: Names) -> str:
         case list():
             return ", ".join(_said(item, "", names) for item in value) or say["empty"]
         case dict():
-            parts = [f"{label_for(str(name))} {_said(item, '', names)}" for name, item in value.items()]
+            parts = [
+                f"{label_for(str(name))} {_said(item, '', names)}" for name, item in value.items()
+            ]
             text = "; ".join(parts)
             return text if len(text) < 200 else text[:198] + " …"
     return names.get(str(value), str(value))

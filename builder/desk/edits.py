@@ -101,7 +101,7 @@ def edited(record: type[Record], text: str, changes: list[Change]) -> tuple[str,
     return text, refused
 
 
-class _Refused(Exception):
+class _Refused(Exception):  # noqa: N818 - carries a refusal to the caller
     def __init__(self, refusal: Refusal) -> None:
         super().__init__(refusal.reason)
         self.refusal = refusal
@@ -154,7 +154,11 @@ def edited_csv(text: str, changes: list[Change]) -> tuple[str, list[Refusal]]:
             refused.append(Refusal(change.path, reason, say["look_again"], other=True))
         else:
             try:
-                new = str(_number(change.text)) if isinstance(cell.value, int | float) else change.text
+                new = (
+                    str(_number(change.text))
+                    if isinstance(cell.value, int | float)
+                    else change.text
+                )
             except NotAValue as error:
                 refused.append(Refusal(change.path, str(error)))
                 continue

@@ -207,7 +207,9 @@ def _child(
         return
     if isinstance(kind, Figures | Provenance) and isinstance(node, Row):
         entries = [
-            _entry(key, Number() if isinstance(kind, Figures) else Text(), below, (*path, key), True)
+            _entry(
+                key, Number() if isinstance(kind, Figures) else Text(), below, (*path, key), True
+            )
             for key, below in node.items()
         ]
         yield Group(path, label_for(name, record), entries)

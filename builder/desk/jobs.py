@@ -24,7 +24,7 @@ LINES_KEPT = 400
 PATIENCE_S = 5.0
 
 
-class Busy(Exception):
+class Busy(Exception):  # noqa: N818 - told to the person
     """Another job is running."""
 
 

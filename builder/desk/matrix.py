@@ -75,7 +75,11 @@ def matrix(look: Look, root: Row) -> Matrix:
                 name=plant.common if plant else plant_id,
                 latin=plant.scientific if plant else plant_id,
                 href=url_for(
-                    "tables.row", region_id=look.id, table="occurrence", part="occurrence", key=plant_id
+                    "tables.row",
+                    region_id=look.id,
+                    table="occurrence",
+                    part="occurrence",
+                    key=plant_id,
                 ),
                 kite=charts.kite(
                     [0.0 if found is None else found.constancy for found in shares[: len(slope)]],

@@ -73,9 +73,7 @@ def home() -> str:
     every = Markup("").join(
         charts.patterns(look.region.zones) for look in patterned if look.region is not None
     )
-    return render_template(
-        "regions.html", page=frame.with_drawings(every, mark), regions=lines
-    )
+    return render_template("regions.html", page=frame.with_drawings(every, mark), regions=lines)
 
 
 def _line(look: Look) -> RegionLine:
@@ -119,9 +117,7 @@ def problems(region_id: str) -> str:
     """Every problem of a region, with its line and what to do."""
     look = shelf().look(region_id)
     found: list[ProblemView] = problem_views(look)
-    return render_template(
-        "problems.html", page=page("overview", "wide", look), problems=found
-    )
+    return render_template("problems.html", page=page("overview", "wide", look), problems=found)
 
 
 def _slope(look: Look, title: str) -> Slope:

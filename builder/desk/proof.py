@@ -143,7 +143,13 @@ def changes(before: Proof, now: Proof) -> list[Change]:
     say = read_phrases()["proof"]["measures"]
     old, new = best_of(before) or {}, best_of(now) or {}
     found = []
-    for name in ("hit_rate", "answers_median", "calibration_error", "withheld_auc", "log_loss_nats"):
+    for name in (
+        "hit_rate",
+        "answers_median",
+        "calibration_error",
+        "withheld_auc",
+        "log_loss_nats",
+    ):
         if name in old and name in new:
             was, is_now = f"{old[name]:g}", f"{new[name]:g}"
             found.append(Change(say[name], was, is_now, was != is_now))
@@ -151,7 +157,9 @@ def changes(before: Proof, now: Proof) -> list[Change]:
     found.append(
         Change(say["printed"], f"{printed[0]:g}", f"{printed[1]:g}", printed[0] != printed[1])
     )
-    bounds = [{tuple(row["zones"]): row["error_bound"] for row in one["pairs"]} for one in (before, now)]
+    bounds = [
+        {tuple(row["zones"]): row["error_bound"] for row in one["pairs"]} for one in (before, now)
+    ]
     for pair in sorted(bounds[0].keys() | bounds[1].keys()):
         was, is_now = (f"{bound[pair]:.3f}" if pair in bound else "" for bound in bounds)
         if was != is_now:

@@ -1,4 +1,4 @@
-"""Puts a changed table on the disk: at one stroke, with a way back, never over somebody's change."""
+"""Puts a changed table on the disk: at one stroke, with a way back, over nobody's change."""
 
 from __future__ import annotations
 
@@ -49,7 +49,7 @@ def read_whole(path: Path) -> str:
 
 
 def write_whole(path: Path, text: str) -> None:
-    """Replaces a file's text at one stroke: killed at any moment, the old or the new text stands."""
+    """Replaces a file's text at one stroke: killed at any moment, the old or the new stands."""
     fresh = path.with_name(f".{path.name}.new")
     with fresh.open("w", encoding="utf-8", newline="") as file:
         file.write(text)

@@ -20,7 +20,7 @@ PORTS_TRIED = 20
 LOOPBACK = "127.0.0.1"
 
 
-class CannotServe(Exception):
+class CannotServe(Exception):  # noqa: N818 - told to the person
     """The desk cannot listen where it was asked to; the text says why and what to do."""
 
 

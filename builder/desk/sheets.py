@@ -25,9 +25,7 @@ pages = Blueprint("sheets", __name__, url_prefix="/r/<region_id>/sheets")
 def show(region_id: str) -> str:
     """Down and up."""
     look = shelf().look(region_id)
-    return render_template(
-        "sheets.html", page=page("sheets", "sheet", look), region_id=region_id
-    )
+    return render_template("sheets.html", page=page("sheets", "sheet", look), region_id=region_id)
 
 
 @pages.get("/workbook.xlsx")

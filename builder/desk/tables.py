@@ -149,7 +149,9 @@ def at(region_id: str) -> BaseResponse:
             if above and line >= (root.keys[part].at.line if part in root.keys else 0):
                 if _last_line(rows) >= line:
                     return redirect(
-                        url_for("tables.row", region_id=region_id, table=table, part=part, key=above[-1])
+                        url_for(
+                            "tables.row", region_id=region_id, table=table, part=part, key=above[-1]
+                        )
                         + f"#line-{line}"
                     )
     return redirect(url_for("tables.table", region_id=region_id, table=table) + f"#line-{line}")
@@ -160,7 +162,9 @@ def _last_line(rows: list[tuple[str, Node]]) -> int:
 
 
 def _deepest(node: Node) -> int:
-    below = node.nodes.values() if isinstance(node, Row) else node if isinstance(node, Items) else ()
+    below = (
+        node.nodes.values() if isinstance(node, Row) else node if isinstance(node, Items) else ()
+    )
     return max([node.at.line, *(_deepest(each) for each in below)])
 
 
@@ -222,7 +226,9 @@ def _list(look: Look, table: str, root: Row, part: str, kind: Many | Keyed) -> L
     say = read_phrases()["tables"]
     of = below.record.__name__ if isinstance(below, Part) else ""
     heads = [label_for(name, of) for name in fields] or [""]
-    names = [key if not key.isdigit() else _row_name(key, node) for key, node in rows_of(root, part)]
+    names = [
+        key if not key.isdigit() else _row_name(key, node) for key, node in rows_of(root, part)
+    ]
     return ListView(label_for(part), part, counted(len(rows), say["rows_n"]), heads, rows, names)
 
 
@@ -301,9 +307,7 @@ def save(region_id: str) -> BaseResponse:
         request.form.getlist("text"),
         strict=False,
     )
-    changes = [
-        Change(path_of(key), was, _lf(text)) for key, was, text in given if was != _lf(text)
-    ]
+    changes = [Change(path_of(key), was, _lf(text)) for key, was, text in given if was != _lf(text)]
     refused: list[Refusal] = []
 
     def change(text: str) -> str:
@@ -345,7 +349,9 @@ def _told(refusal: Refusal) -> dict[str, Any]:
 def _answer(region_id: str, table: str, made: int, refused: list[Refusal]) -> Response:
     look = shelf().look(region_id)
     views = [problem_view(look, p) for p in look.problems if File(p.file).stem == table]
-    said = [{"wrong": v.wrong, "fix": v.fix, "place": v.place, "stops": v.stops} for v in views[:12]]
+    said = [
+        {"wrong": v.wrong, "fix": v.fix, "place": v.place, "stops": v.stops} for v in views[:12]
+    ]
     last = saver(region_id).last()
     answer = jsonify(
         saved=made,
@@ -378,7 +384,9 @@ def undo(region_id: str) -> BaseResponse:
         flash(say["undone"].format(words=undone.step.words))
         table = File(undone.step.file).stem
     return redirect(
-        url_for("tables.table", region_id=region_id, table=table if table in FILES else "occurrence")
+        url_for(
+            "tables.table", region_id=region_id, table=table if table in FILES else "occurrence"
+        )
     )
 
 
@@ -445,5 +453,9 @@ def remove(region_id: str) -> BaseResponse:
 
 
 def _is_id(text: str) -> bool:
-    return text.isascii() and text.replace("_", "a").isalnum() and text[:1].isalpha() and text.islower()
-
+    return (
+        text.isascii()
+        and text.replace("_", "a").isalnum()
+        and text[:1].isalpha()
+        and text.islower()
+    )

@@ -32,7 +32,7 @@ COLUMNS = (
 
 @dataclass(frozen=True)
 class Called:
-    """How many plots were called, what the file spoke of that the region does not know, cautions."""
+    """How many plots were called, what the region does not know of the file, cautions."""
 
     plots: int
     unknown: dict[str, int]

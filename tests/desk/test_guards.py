@@ -9,7 +9,13 @@ from builder.desk.application import Settings, create_app
 from builder.desk.guards import LIMITS, Patience
 from tests.desk.helpers import token
 
-WRITES = ["/r/willow_breaks/editions", "/jobs/1/stop", "/r/willow_breaks/undo", "/r/willow_breaks/save", "/r/willow_breaks/build"]
+WRITES = [
+    "/r/willow_breaks/editions",
+    "/jobs/1/stop",
+    "/r/willow_breaks/undo",
+    "/r/willow_breaks/save",
+    "/r/willow_breaks/build",
+]
 
 
 @pytest.mark.parametrize("host", ["evil.example", "127.0.0.1.evil.example", "0.0.0.0", "[::1]", ""])
@@ -66,7 +72,16 @@ def test_too_much_at_once_is_refused(client):
     assert client.post("/r/willow_breaks/save", data=huge, headers=headers).status_code == 413
 
 
-@pytest.mark.parametrize("path", ["/", "/r/willow_breaks/", "/r/willow_breaks/tables", "/r/willow_breaks/editions", "/no-such-page"])
+@pytest.mark.parametrize(
+    "path",
+    [
+        "/",
+        "/r/willow_breaks/",
+        "/r/willow_breaks/tables",
+        "/r/willow_breaks/editions",
+        "/no-such-page",
+    ],
+)
 def test_every_page_carries_the_policy(client, path):
     answer = client.get(path, follow_redirects=True)
     policy = answer.headers["Content-Security-Policy"]
@@ -77,7 +92,9 @@ def test_every_page_carries_the_policy(client, path):
     assert answer.headers["Cache-Control"] == "no-store"
 
 
-@pytest.mark.parametrize("path", ["/", "/r/willow_breaks/", "/r/willow_breaks/tables", "/r/willow_breaks/editions"])
+@pytest.mark.parametrize(
+    "path", ["/", "/r/willow_breaks/", "/r/willow_breaks/tables", "/r/willow_breaks/editions"]
+)
 def test_no_page_needs_what_the_policy_forbids(client, path):
     page = client.get(path, follow_redirects=True).get_data(as_text=True)
     assert "<main" in page
@@ -87,7 +104,18 @@ def test_no_page_needs_what_the_policy_forbids(client, path):
     assert not re.search(r"(?:src|href)\s*=\s*[\"']?(?:https?:)?//", page)
 
 
-@pytest.mark.parametrize("name", ["../willow_breaks", "..", "%2e%2e", "Willow_Breaks", "willow_breaks%00", "no_such", "willow_breaks%2f.."])
+@pytest.mark.parametrize(
+    "name",
+    [
+        "../willow_breaks",
+        "..",
+        "%2e%2e",
+        "Willow_Breaks",
+        "willow_breaks%00",
+        "no_such",
+        "willow_breaks%2f..",
+    ],
+)
 def test_a_region_is_a_folder_of_keydata_and_nothing_else(client, name):
     assert client.get(f"/r/{name}/tables/zones").status_code == 404
 

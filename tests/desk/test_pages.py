@@ -66,7 +66,9 @@ def test_a_region_that_cannot_be_read_is_shown_with_its_problems(client, tmp_pat
 
 def test_a_flag_stands_on_the_zone_whose_table_is_wrong(client, tmp_path):
     path = tmp_path / OCCURRENCE
-    path.write_text(path.read_text("utf-8").replace("prairie: [90, 18]", "prairie: [90, 180]"), "utf-8")
+    path.write_text(
+        path.read_text("utf-8").replace("prairie: [90, 18]", "prairie: [90, 180]"), "utf-8"
+    )
     page = client.get(f"{REGION}/").get_data(as_text=True)
     assert page.count('fill="var(--warn)" stroke="var(--warn)"') == 1
     assert client.get(f"{REGION}/tables/occurrence").data.count(b'aria-invalid="true"') == 1
@@ -142,6 +144,8 @@ def test_templates_hold_no_logic(app):
         assert logic_in(app, source) == [], name
 
 
-@pytest.mark.parametrize("text", ["{{ a + 1 }}", "{% if a > 1 %}x{% endif %}", "{% set a = 1 %}", "{{ a[0] }}"])
+@pytest.mark.parametrize(
+    "text", ["{{ a + 1 }}", "{% if a > 1 %}x{% endif %}", "{% set a = 1 %}", "{{ a[0] }}"]
+)
 def test_logic_in_a_template_is_caught(app, text):
     assert logic_in(app, text)
