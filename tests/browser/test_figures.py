@@ -90,7 +90,7 @@ def test_both_nulls_of_the_worked_success_test_are_told(app):
 
 def test_no_page_of_the_site_shows_a_nan(app):
     pages = ["production", "production/clip", "reclaim", "reclaim/order", "reclaim/test"]
-    pages += ["reclaim/topsoil", "production/cover", "place", "plants", "zone"]
+    pages += ["reclaim/topsoil", "production/cover", "production/pit", "place", "plants", "zone"]
     for page in pages:
         show(app, f"site/{SAGE}/{page}")
         text = app.page.locator("main").inner_text()
@@ -140,6 +140,26 @@ def test_points_become_cover_with_the_doubt_that_is_left(app):
     assert app.errors == []
 
 
-def test_the_cover_sheet_keeps_nobody_out(app):
-    show(app, f"site/{SAGE}/production/cover")
+def test_a_pit_felt_by_hand_holds_its_water_and_the_year_takes_it(app):
+    """20 cm of loam with 2.5 % organic matter and 10 % stones holds 25.7 mm (SOILW-03)."""
+    show(app, f"site/{SAGE}/production/pit")
+    app.page.get_by_role("button", name="Another layer").click()
+    app.page.get_by_role("button", name="Loam", exact=True).click()
+    app.page.get_by_label("Thickness").fill("20")
+    app.page.get_by_label("Stones").fill("10")
+    app.page.get_by_label("Organic matter").fill("2.5")
+    assert "26 mm" in app.page.locator("main").inner_text()
+    show(app, f"site/{SAGE}/production")
+    part = app.page.locator("section", has_text="The year here")
+    part.locator("svg").wait_for()
+    assert "soil holds 26 mm" in part.inner_text()
+    assert "that of your pit" in part.inner_text()
+    show(app, f"site/{SAGE}/production/pit")
+    app.page.get_by_role("button", name="Take out").click()
+    assert app.errors == []
+
+
+@pytest.mark.parametrize("page", ["production/cover", "production/pit"])
+def test_the_sheets_keep_nobody_out(app, page):
+    show(app, f"site/{SAGE}/{page}")
     assert faults(app, AXE.read_text("utf-8")) == []

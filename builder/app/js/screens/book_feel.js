@@ -17,7 +17,7 @@ export function Feel() {
   const asked = Object.keys(answers);
   return html`<section class="part lead0 stack">${[...asked, question].filter(Boolean).map((name) => html`<${Step} key=${name} name=${name} value=${answers[name] ?? null}
       onPick=${(value) => setAnswers({ ...Object.fromEntries(asked.slice(0, asked.includes(name) ? asked.indexOf(name) : asked.length).map((one) => [one, answers[one]])), [name]: value })}/>`)}
-    ${texture && html`<p class="verdict">${t('feel.is', { texture })}</p><p>${t('feel.holds', { mm: Math.round((water.field_capacity - water.wilting_point) * MM_IN_10_CM) })}</p>
+    ${texture && html`<p class="verdict">${t('feel.is', { texture: t(`texture.${texture.replaceAll(' ', '_')}`) })}</p><p>${t('feel.holds', { mm: Math.round((water.field_capacity - water.wilting_point) * MM_IN_10_CM) })}</p>
       <${Field} label=${t('feel.organic_field')} mode="decimal" unit="%" value=${organic} limits=${[0, 8]} onChange=${(text) => setOrganic(readNumber(text, 0, 8) ?? 1)}/>
       <p class="deep"><button type="button" class="btn" onClick=${() => setAnswers({})}>${t('feel.again')}</button></p>`}
     <p class="small quiet">${t('feel.after')}</p></section>`;

@@ -30,8 +30,9 @@ export function waterOf(here, soil) {
   return profileWater({ layers: soil.layers, depth_cm: soil.rooting_depth_cm, peat_classes: here.pack.peat_classes ?? [] });
 }
 
-/** Water and warmth of a zone month by month, at the site's own height where it is known. */
-export function yearOf(here, zone, height_m = null) {
+/** Water and warmth of a zone month by month, at the site's own height and in its own soil where
+ *  they are known. */
+export function yearOf(here, zone, height_m = null, held_mm = null) {
   const normals = normalsOf(here, zone);
   const soil = soilOf(here, zone.id);
   if (!normals || !soil) return null;
@@ -39,7 +40,7 @@ export function yearOf(here, zone, height_m = null) {
   const [tmax_c, tmin_c, precip_mm] = height_m === null
     ? [normals.tmax_c, normals.tmin_c, normals.precip_mm]
     : carried({ ...normals, from_m: normals.elevation_m, to_m: height_m, ...lapse });
-  const capacity_mm = waterOf(here, soil).reduce((sum, layer) => sum + layer.mm, 0);
+  const capacity_mm = held_mm ?? waterOf(here, soil).reduce((sum, layer) => sum + layer.mm, 0);
   return { ...siteYear({ latitude_deg: here.pack.region.latitude_deg, tmax_c, tmin_c, precip_mm, capacity_mm, water_table_cm: here.pack.ground_water_cm?.[zone.id] ?? null, rule }), capacity_mm };
 }
 

@@ -15,13 +15,15 @@ import { ClipSheet } from './clip.js';
 
 const CoverSheet = Later(() => import('./cover_sheet.js'), 'CoverSheet');
 const SiteYear = Later(() => import('./site_year.js'), 'SiteYear');
+const PitSheet = Later(() => import('./pit_sheet.js'), 'PitSheet');
 const Missed = Later(() => import('./missed.js'), 'Missed');
 
-/** @param {{parts: string[]}} props [] · ['clip'] · ['cover'] */
+/** @param {{parts: string[]}} props [] · ['clip'] · ['cover'] · ['pit'] */
 export function Production({ parts }) {
   const stand = standing();
   const record = site.value;
   if (parts[0] === 'clip') return html`<${ClipSheet} stand=${stand}/>`;
+  if (parts[0] === 'pit') return html`<${PitSheet}/>`;
   if (parts[0] === 'cover' && stand) return html`<${CoverSheet} stand=${stand}/>`;
   return html`<${Frame} tab="production" edge=${false} class="whole-width" line=${t('production.line')}>
     <${CalledStrip} stand=${stand}/>${stand && html`<${Expected} stand=${stand} record=${record}/>`}</${Frame}>`;
@@ -57,6 +59,6 @@ function Expected({ stand, record }) {
       <p class="small quiet">${t('production.counted', { counted: own.counted })} ${t('production.not_forage')}</p>
       <${Source} what=${t('production.these')} region=${here} keys=${[own.source]}/></section>
     <${Rain} record=${record} own=${own}/><${Measured} record=${record} zone=${stand.zone}/>
-    <section class="part"><a class="btn" href=${`#/site/${record.id}/production/cover`}>${t('points.title')}</a></section>
+    <section class="part"><a class="btn" href=${`#/site/${record.id}/production/cover`}>${t('points.title')}</a> <a class="btn" href=${`#/site/${record.id}/production/pit`}>${t('pit.title')}</a></section>
     <${Missed} zone=${stand.zone} record=${record}/><${SiteYear} zone=${stand.zone} record=${record}/>`;
 }
