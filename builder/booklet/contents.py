@@ -6,7 +6,8 @@ from pathlib import Path
 
 from markupsafe import Markup
 
-from builder.booklet.style import Trim
+from builder.booklet.keying import Grown, KeyView, grown, key_view
+from builder.booklet.style import A6, Trim
 from builder.drawings.ink import PRINT, rect, svg
 from builder.drawings.rule import cm_rule, inch_rule
 from builder.drawings.slope import contours, strata
@@ -24,6 +25,7 @@ FORM_CLIPS = 9
 FIRST_LINES, REST_LINES = 20, 52
 """Lines that fit a zone's first page and its last two beside their drawings, counted on pages."""
 WIDE_NAME = 18
+LINE_MM, PLANT_ROW_MM, ZONE_CHARTS_MM = 3.7, 4.45, 77.0
 CHART_WIDTH, CHART_HEAD_MM, KITE_MM = 50.0, 21.0, 3.5
 
 
@@ -108,6 +110,8 @@ class BookletView:
     form: "FormView"
     sources: tuple[grounds.SourceView, ...]
     cautions_of_build: tuple[str, ...]
+    key: KeyView
+    grown: Grown
     filler: bool = False
 
 
@@ -161,7 +165,7 @@ def booklet_view(
         signs=_signs(look, own),
         region_warns=tuple(grounds.region_warns(look)),
         people_warns=tuple(grounds.people_warns(look)),
-        zones=tuple(spread(_linked(zone, {each.id for each in zones})) for zone in zones),
+        zones=tuple(spread(_linked(zone, {each.id for each in zones}), trim) for zone in zones),
         year_note=own.say("zone.year_note", unit=look.figures.rain_unit),
         chart=(drawn := plants.chart(look, CHART_WIDTH)),
         chart_pages=chart_pages(drawn, trim, own.say("chart.note")),
@@ -172,6 +176,8 @@ def booklet_view(
         form=form_view(look, own),
         sources=tuple(grounds.sources(look)),
         cautions_of_build=build_cautions,
+        key=key_view(look, own, key := grown(region), pages),
+        grown=key,
     )
 
 
@@ -186,6 +192,7 @@ def with_pages(
     return replace(
         book,
         filler=filler,
+        key=key_view(look, own, book.grown, pages),
         belts=_belts(look, tuple(each.zone for each in book.zones), pages),
         rest=_rest(own, pages),
         steps=_steps(own, pages),
@@ -194,14 +201,15 @@ def with_pages(
 
 def _linked(zone: ZoneView, printed: set[str]) -> ZoneView:
     """The zone with links to those neighbours only that are printed too."""
-    kin = tuple(
-        each if each.zone_id in printed else replace(each, anchor="") for each in zone.kin
-    )
+    kin = tuple(each if each.zone_id in printed else replace(each, anchor="") for each in zone.kin)
     return replace(zone, kin=kin)
 
 
-def spread(zone: ZoneView) -> Spread:
+def spread(zone: ZoneView, trim: Trim) -> Spread:
     """Set a zone's pages; lines are reckoned from the length of the texts."""
+    lost = round((A6.text_height - trim.text_height) / LINE_MM)
+    rows = int((trim.text_height - ZONE_CHARTS_MM) / PLANT_ROW_MM)
+    zone = replace(zone, plants=zone.plants[:rows])
     first = (
         _lines(zone.one_line, 56)
         + _lines(zone.name, 30)
@@ -225,8 +233,8 @@ def spread(zone: ZoneView) -> Spread:
     )
     return Spread(
         zone,
-        "tight" if first > FIRST_LINES else "easy",
-        "tight" if rest > REST_LINES else "easy",
+        "tight" if first > FIRST_LINES - lost else "easy",
+        "tight" if rest > REST_LINES - 2 * lost else "easy",
     )
 
 
@@ -333,9 +341,7 @@ def _page(pages: Mapping[str, int], anchor: str) -> str:
 
 
 def _steps(own: Phrases, pages: Mapping[str, int]) -> tuple[str, ...]:
-    fourth = (
-        own.say("use.fourth", key=pages["key"]) if "key" in pages else own.say("use.fourth_no_key")
-    )
+    fourth = own.say("use.fourth", key=_page(pages, "key"))
     return (
         own.say("use.first"),
         own.say("use.second"),

@@ -7,18 +7,20 @@ from dataclasses import dataclass
 from pathlib import Path
 
 from jinja2 import Environment, FileSystemLoader, StrictUndefined, select_autoescape
+from markupsafe import Markup
 
 from builder.booklet import fonts, style
 from builder.booklet.contents import WORDS, BookletView, booklet_view, with_pages
+from builder.booklet.formats import FORMATS, Format
+from builder.booklet.impose import imposed, marks_drawing
 from builder.booklet.render import Document, Press, bound, no_sweeping, pages_of, written
+from builder.drawings.ink import picture
 from builder.tables import Region
 from builder.views.look import Look, look
 from builder.views.phrases import phrases
 
 HERE = Path(__file__).parent
-FORMATS = {"a6": style.A6, "pocket-us": style.POCKET_US}
-MOST_LAYOUTS = 3
-FRONT_PAGES = 7
+MOST_LAYOUTS = 6
 Progress = Callable[[str, int, int], None]
 
 
@@ -59,9 +61,13 @@ def write_booklet(
     chosen = _chosen(region, zones)
     tell = progress or (lambda stage, done, of: None)
     seen = look(region, language)
-    trim = FORMATS[format]
+    form = FORMATS[format]
     with no_sweeping():
-        pdf, count, anchors = _reading_order(seen, trim, mark or "", chosen, tuple(cautions), tell)
+        pdf, count, anchors = _reading_order(
+            seen, form.trim, mark or "", chosen, tuple(cautions), tell
+        )
+        if form.paper is not None:
+            pdf, count = _on_sheets(seen, form, pdf, count, anchors, tell)
     path = Path(out)
     path.parent.mkdir(parents=True, exist_ok=True)
     part = path.with_name(path.name + ".part")
@@ -95,8 +101,8 @@ def _reading_order(
 ) -> tuple[bytes, int, dict[str, int]]:
     """The booklet in reading order.
 
-    The body is set first, then the front matter with the body's page numbers in figures;
-    should the front take more or fewer pages than thought, the body is set again.
+    The front matter is set to learn how long it is, then the body, once; then the front again
+    with the page numbers in figures, and those are verified.
     """
     zone_ids = [zone.id for zone in seen.region.zones if chosen is None or zone.id in chosen]
     foot = phrases(seen.phrases.language, WORDS).say(
@@ -111,28 +117,58 @@ def _reading_order(
     )
     book = booklet_view(seen, trim, mark, {}, chosen, cautions)
     body_html = _html("body.html", book)
-    front_pages, filler = FRONT_PAGES, False
+    pages: dict[str, int] = {}
+    filler = False
     for _ in range(MOST_LAYOUTS):
-        body = press.laid_out(
-            body_html, front_pages + 1, lambda page, add=front_pages: tell("layout", page + add, 0)
-        )
-        pages = pages_of(body, front_pages + 1)
         front = _front(press, with_pages(book, seen, pages, filler), tell)
         if len(front.pages) % 2 == 0:
-            filler = True
-            front = _front(press, with_pages(book, seen, pages, filler), tell)
-        if len(front.pages) == front_pages:
+            filler = not filler
+            continue
+        first = len(front.pages) + 1
+        if pages and pages_of(front) | pages_of(body, first) == pages:
             break
-        front_pages = len(front.pages)
+        if not pages or first != begun:
+            begun = first
+            body = press.laid_out(
+                body_html, begun, lambda page, add=begun - 1: tell("layout", page + add, 0)
+            )
+        pages = pages_of(front) | pages_of(body, begun)
     else:
-        raise BookletError("the front matter does not settle on a number of pages")
-    pages = pages_of(front) | pages
+        raise BookletError("the pages do not settle; a page is set differently each time")
     whole = bound([front, body])
     count = len(whole.pages)
     tell("write", 0, count)
     pdf = written(whole)
     tell("write", count, count)
     return pdf, count, pages
+
+
+def _on_sheets(
+    seen: Look, form: Format, pdf: bytes, count: int, anchors: dict[str, int], tell: Progress
+) -> tuple[bytes, int]:
+    """Pages laid on sheets, and how many sides were printed."""
+    assert form.paper is not None
+    assert form.ordering is not None
+    own = phrases(seen.phrases.language, WORDS)
+    title = own.say("title", region=seen.region.name)
+    sheets = form.ordering(count, anchors)
+    html = (
+        environment()
+        .get_template("overlay.html")
+        .render(
+            language=seen.phrases.language,
+            title=title,
+            marks=Markup(picture(marks_drawing(form.paper, form.marks))),
+            notes=[own.say(f"sheets.{form.note}_{side}") for side in ("front", "back")],
+        )
+    )
+    press = Press([fonts.faces(), style.overlay_rules(form.paper.width, form.paper.height)])
+    over = written(press.laid_out(html, 1, lambda page: None))
+    done = imposed(
+        pdf, sheets, form.trim, form.paper, over, title, seen.phrases.language,
+        lambda side, of: tell("sheets", side, of),
+    )  # fmt: skip
+    return done, sum(2 if sheet.back is not None else 1 for sheet in sheets)
 
 
 def _front(press: Press, book: BookletView, tell: Progress) -> Document:

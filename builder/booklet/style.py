@@ -75,6 +75,19 @@ def page_rules(look: Look, trim: Trim, foot: str, zone_ids: list[str]) -> str:
     return "\n".join(rules)
 
 
+def overlay_rules(width: float, height: float) -> str:
+    """Style of the marks and notes laid over a sheet; the note runs up beside the middle line."""
+    return (
+        f"@page {{ size: {width}mm {height}mm; margin: 0 }}"
+        " body { margin: 0 } .over { break-after: page; position: relative }"
+        f" .over {{ height: {height}mm }} .over:last-child {{ break-after: auto }}"
+        " .over img { position: absolute; left: 0; top: 0 }"
+        f" .over p {{ position: absolute; left: {width / 2 + 0.9}mm; top: {height - 10}mm; margin: 0;"
+        f" width: {height / 2 - 20}mm; font: 5pt/1.1 'Source Sans 3'; color: #564b3c;"
+        " transform-origin: 0 0; transform: rotate(-90deg) }"
+    )
+
+
 def _beside(page: str, drawing: str, top: float, width: float, trim: Trim) -> str:
     """A drawing at the fore-edge of a named page; offsets count from the page's text block."""
     y = top - trim.top
