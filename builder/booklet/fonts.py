@@ -17,7 +17,7 @@ CUTS = {
 SUBSETS = ("latin", "latin-ext")
 
 
-class MissingCharacters(ValueError):
+class MissingCharactersError(ValueError):
     """The text holds characters that the shipped type does not have."""
 
 
@@ -30,7 +30,7 @@ def faces() -> str:
                 path = FOLDER / f"{FAMILIES[family]}-{subset}-{weight}-{style}.woff2"
                 if not path.is_file():
                     raise FileNotFoundError(
-                        f"{path.name} is missing: install the package again so that it brings its type"
+                        f"{path.name} is missing: install the package again; it brings its type"
                     )
                 rules.append(
                     f'@font-face{{font-family:"{family}";font-weight:{weight};font-style:{style};'
@@ -52,7 +52,7 @@ def covered(family: str) -> frozenset[int]:
 
 
 def refuse_uncovered(texts: Iterable[str]) -> None:
-    """Raise MissingCharacters when any text has a character the type lacks."""
+    """Raise MissingCharactersError when any text has a character the type lacks."""
     known = frozenset.intersection(*(covered(family) for family in CUTS))
     missing: dict[str, str] = {}
     for text in texts:
@@ -61,7 +61,7 @@ def refuse_uncovered(texts: Iterable[str]) -> None:
                 missing.setdefault(character, text.strip()[:60])
     if missing:
         lines = [f'U+{ord(c):04X} "{c}" in "{where}"' for c, where in sorted(missing.items())]
-        raise MissingCharacters("the booklet's type has no " + "; ".join(lines))
+        raise MissingCharactersError("the booklet's type has no " + "; ".join(lines))
 
 
 @cache

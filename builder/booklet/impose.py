@@ -133,5 +133,6 @@ def marks_drawing(paper: Paper, marks: Marks) -> str:
             lines.append(f'<path d="{line}" stroke="#211c15" stroke-width=".2"{dash}/>')
     return (
         f'<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 {paper.width} {paper.height}"'
-        f' width="{paper.width}mm" height="{paper.height}mm"><title>marks</title>{"".join(lines)}</svg>'
+        f' width="{paper.width}mm" height="{paper.height}mm"><title>marks</title>'
+        f"{''.join(lines)}</svg>"
     )

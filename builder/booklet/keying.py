@@ -146,7 +146,9 @@ def key_view(look: Look, own: Phrases, key: Grown, pages: Mapping[str, int]) -> 
         ),
         card=_card(look, key),
         rate=own.say(
-            "key.rate", right=look.figures.plain(tested.key * 100), sites=look.figures.plain(tested.sites)
+            "key.rate",
+            right=look.figures.plain(tested.key * 100),
+            sites=look.figures.plain(tested.sites),
         ),
         card_rate=own.say("key.card_rate", right=look.figures.plain(tested.card * 100)),
     )  # fmt: skip

@@ -8,12 +8,13 @@ from pathlib import Path
 
 from jinja2 import Environment, FileSystemLoader, StrictUndefined, select_autoescape
 from markupsafe import Markup
+from weasyprint import Document
 
 from builder.booklet import fonts, style
 from builder.booklet.contents import WORDS, BookletView, booklet_view, with_pages
 from builder.booklet.formats import FORMATS, Format
 from builder.booklet.impose import imposed, marks_drawing
-from builder.booklet.render import Document, Press, bound, no_sweeping, pages_of, written
+from builder.booklet.render import Press, bound, no_sweeping, pages_of, written
 from builder.drawings.ink import picture
 from builder.tables import Region
 from builder.views.look import Look, look
@@ -118,21 +119,20 @@ def _reading_order(
     book = booklet_view(seen, trim, mark, {}, chosen, cautions)
     body_html = _html("body.html", book)
     pages: dict[str, int] = {}
-    filler = False
+    filler, begun, body = False, 0, None
     for _ in range(MOST_LAYOUTS):
         front = _front(press, with_pages(book, seen, pages, filler), tell)
         if len(front.pages) % 2 == 0:
             filler = not filler
             continue
         first = len(front.pages) + 1
-        if pages and pages_of(front) | pages_of(body, first) == pages:
-            break
-        if not pages or first != begun:
+        if body is None or first != begun:
             begun = first
-            body = press.laid_out(
-                body_html, begun, lambda page, add=begun - 1: tell("layout", page + add, 0)
-            )
-        pages = pages_of(front) | pages_of(body, begun)
+            body = press.laid_out(body_html, begun, _after(begun, tell))
+        found = pages_of(front) | pages_of(body, begun)
+        if found == pages:
+            break
+        pages = found
     else:
         raise BookletError("the pages do not settle; a page is set differently each time")
     whole = bound([front, body])
@@ -141,6 +141,11 @@ def _reading_order(
     pdf = written(whole)
     tell("write", count, count)
     return pdf, count, pages
+
+
+def _after(first: int, tell: Progress) -> Callable[[int], None]:
+    """Tells page numbers of a part that begins at a page."""
+    return lambda page: tell("layout", page + first - 1, 0)
 
 
 def _on_sheets(

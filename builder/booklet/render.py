@@ -65,7 +65,7 @@ class _PageTicker(logging.Handler):
         self._tell = tell
 
     def emit(self, record: logging.LogRecord) -> None:
-        if record.args and "Creating layout" in str(record.msg):
+        if isinstance(record.args, tuple) and "Creating layout" in str(record.msg):
             self._tell(int(str(record.args[0])))
 
 

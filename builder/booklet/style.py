@@ -48,8 +48,9 @@ def page_rules(look: Look, trim: Trim, foot: str, zone_ids: list[str]) -> str:
     font = '7.6pt "Source Sans 3"'
     number = f"content: counter(page); font: 700 {font}; color: #211c15; width: 9mm"
     name = f'content: "{_quoted(foot)}"; font: {font}; color: #564b3c'
+    size = f"size: {trim.width}mm {trim.height}mm"
     rules = [
-        f"@page {{ size: {trim.width}mm {trim.height}mm; margin: {trim.top}mm 0 {trim.bottom}mm; }}",
+        f"@page {{ {size}; margin: {trim.top}mm 0 {trim.bottom}mm; }}",
         f"@page :left {{ margin-left: {trim.outer}mm; margin-right: {trim.inner}mm;"
         f" @bottom-left {{ {number}; text-align: left; }}"
         f" @bottom-center {{ {name}; text-align: left; width: 60mm; }}"
@@ -79,11 +80,11 @@ def overlay_rules(width: float, height: float) -> str:
     """Style of the marks and notes laid over a sheet; the note runs up beside the middle line."""
     return (
         f"@page {{ size: {width}mm {height}mm; margin: 0 }}"
-        " body { margin: 0 } .over { break-after: page; position: relative }"
+        " body, p { margin: 0 } .over { break-after: page; position: relative }"
         f" .over {{ height: {height}mm }} .over:last-child {{ break-after: auto }}"
         " .over img { position: absolute; left: 0; top: 0 }"
-        f" .over p {{ position: absolute; left: {width / 2 + 0.9}mm; top: {height - 10}mm; margin: 0;"
-        f" width: {height / 2 - 20}mm; font: 5pt/1.1 'Source Sans 3'; color: #564b3c;"
+        f" .over p {{ position: absolute; left: {width / 2 + 0.9}mm; top: {height - 10}mm;"
+        f" margin: 0; width: {height / 2 - 20}mm; font: 5pt/1.1 'Source Sans 3'; color: #564b3c;"
         " transform-origin: 0 0; transform: rotate(-90deg) }"
     )
 

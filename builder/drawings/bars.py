@@ -60,7 +60,10 @@ def range_bar(
         parts.extend(_three_labels((x(low), x(middle), x(high)), labels, bar_top, size, palette))
     else:
         ghost = rect(x(low), bar_top - height * 0.16, x(high) - x(low), height * 0.1, "{more}")
-        dash = f'fill="none" stroke="{palette.contour}" stroke-width="{num(width / 300)}" stroke-dasharray="{num(width / 100)}"'
+        dash = (
+            f'fill="none" stroke="{palette.contour}" stroke-width="{num(width / 300)}"'
+            f' stroke-dasharray="{num(width / 100)}"'
+        )
         parts.append(ghost.replace("{more}", dash))
         span = rect(x(this_year[0]), bar_top, x(this_year[1]) - x(this_year[0]), bar_tall, "{more}")
         parts.append(paint(span, belt, palette))
@@ -123,7 +126,7 @@ def _axis(
 
 def scale_step(top: float) -> float:
     """A round step that puts four to eight marks on a scale."""
-    power = 10 ** math.floor(math.log10(top))
+    power: float = 10 ** math.floor(math.log10(top))
     for factor in (0.1, 0.2, 0.25, 0.5, 1):
         if top / (power * factor) <= 7:
             return power * factor

@@ -4,7 +4,7 @@ from collections.abc import Iterable
 from dataclasses import dataclass
 from typing import Protocol
 
-from builder.drawings.ink import PRINT, Palette, num, rect, svg, text
+from builder.drawings.ink import PRINT, Palette, num, path, rect, svg, text
 
 MARK_LOW = "#2c200c"
 MARK_HIGH = "#fdf6e6"
@@ -35,7 +35,8 @@ TILES: dict[str, tuple[float, str]] = {
     "C": (16, _LINE.format(d="M2 3l2.4 5 2.4-5M10 10l2.4 5 2.4-5")),
     "D": (16, _LINE.format(d="M0 .6h16M0 8.6h16M4 .6v8M12 8.6v8")),
     "E": (18, _LINE.format(
-        d="M8 5a3.4 3.4 0 1 1-6.8 0a3.4 3.4 0 1 1 6.8 0zM17 14a3.4 3.4 0 1 1-6.8 0a3.4 3.4 0 1 1 6.8 0z"
+        d="M8 5a3.4 3.4 0 1 1-6.8 0a3.4 3.4 0 1 1 6.8 0z"
+        "M17 14a3.4 3.4 0 1 1-6.8 0a3.4 3.4 0 1 1 6.8 0z"
     )),
     "F": (16, _dots(1.6, (3, 5), (6.6, 5), (4.8, 2), (11, 13), (14.6, 13), (12.8, 10))),
     "G": (12, _LINE.format(d="M3 0v8M9 6v8M9-6v8")),
@@ -43,7 +44,8 @@ TILES: dict[str, tuple[float, str]] = {
     "J": (16, _LINE.format(d="M1 7l3.2-5 3.2 5M9 15l3.2-5 3.2 5")),
     "K": (12, _LINE.format(d="M3 0v12M9 0v12M3 3h2.6M9 9h2.6")),
     "L": (10, _LINE.format(
-        d="M1 4.4l2.4-4 2.4 4M1 9.4l2.4-4 2.4 4M6.2 6.9l2.4-4 2.4 4M6.2 1.9l2.4-4 2.4 4M6.2 11.9l2.4-4 2.4 4"
+        d="M1 4.4l2.4-4 2.4 4M1 9.4l2.4-4 2.4 4M6.2 6.9l2.4-4 2.4 4"
+        "M6.2 1.9l2.4-4 2.4 4M6.2 11.9l2.4-4 2.4 4"
     )),
     "M": (18, _LINE.format(d="M1 6q4-3.4 8 0M10 15q4-3.4 8 0M11 4h5M2 13h5")),
     "W": (14, _LINE.format(d="M0 4q3.5-3 7 0t7 0") + _dots(1, (3.5, 10), (10.5, 10))),
@@ -201,7 +203,7 @@ def thumb(belt: Belt, height: float, width: float, palette: Palette = PRINT) -> 
         width / 2 - label_h * 0.41, (height - label_h) / 2, label_h * 0.82, label_h,
         f'fill="{palette.sheet}"' + (f' rx="{num(label_h * 0.4)}"' if belt.lens else ""),
     )  # fmt: skip
-    rim = f'<path d="M0 .15h{num(width)}M0 {num(height - 0.15)}h{num(width)}" stroke="{palette.ink}" stroke-width=".3"/>'
+    rim = path(f"M0 .15h{num(width)}M0 {num(height - 0.15)}h{num(width)}", palette.ink, 0.3)
     letter = text(
         width / 2, height / 2 + size * 0.345, belt.letter, size, palette.ink, "middle", 700
     )

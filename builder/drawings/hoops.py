@@ -50,8 +50,8 @@ def hoop_path(share: float, points: int = POINTS) -> str:
     if not 0 <= share <= 1:
         raise ValueError(f"cover share {share} must lie in 0..1")
     if share > 0.5:
-        r = num(RADIUS)
-        ground = f"M{num(50 - RADIUS)} 50a{r} {r} 0 1 0 {num(2 * RADIUS)} 0a{r} {r} 0 1 0 {num(-2 * RADIUS)} 0z"
+        r, across = num(RADIUS), num(2 * RADIUS)
+        ground = f"M{num(50 - RADIUS)} 50a{r} {r} 0 1 0 {across} 0a{r} {r} 0 1 0 -{across} 0z"
         return ground + _patches(1 - share, points)
     return _patches(share, points)
 

@@ -30,6 +30,7 @@ def icon(size: int = 512, rounded: bool = True) -> str:
         f'<svg xmlns="http://www.w3.org/2000/svg" viewBox="0 0 512 512" width="{size}"'
         f' height="{size}" role="img"><title>Beltbook</title>'
         f'<defs><clipPath id="cut"><rect width="512" height="512"{corner}/></clipPath></defs>'
-        f'<g clip-path="url(#cut)"><rect width="512" height="512" fill="#f6f1e4"/>{strata}{lens}</g>'
+        '<g clip-path="url(#cut)"><rect width="512" height="512" fill="#f6f1e4"/>'
+        f"{strata}{lens}</g>"
         "</svg>"
     )

@@ -184,16 +184,15 @@ def heights(
         parts.append(box.replace("{more}", rim))
         bold = zone.id == marked
         if bold or column > size * 0.9:
-            ink = palette.ink if bold else palette.ink_2
-            parts.append(
-                text(x + wide / 2, height * 0.985, zone.letter, size, ink, "middle", 700 if bold else 400)
-            )  # fmt: skip
+            ink, weight = (palette.ink, 700) if bold else (palette.ink_2, 400)
+            foot_y = height * 0.985
+            parts.append(text(x + wide / 2, foot_y, zone.letter, size, ink, "middle", weight))
     return svg(width, height, title, "".join(parts), palette, "heights")
 
 
 def _tick_step(span: float) -> float:
     """A round step that gives two to five lines."""
-    power = 10 ** math.floor(math.log10(span))
+    power: float = 10 ** math.floor(math.log10(span))
     for factor in (0.1, 0.2, 0.25, 0.5, 1):
         if span / (power * factor) <= 5:
             return power * factor

@@ -46,18 +46,16 @@ def year(
         rim = f'fill="{fill}" stroke="{palette.ink}" stroke-width="{num(width / 360)}"'
         parts.append(box.replace("{more}", rim))
         bold = 700 if month in growing else 400
-        parts.append(
-            text(x + column * 0.4, height * 0.975, initials[month - 1], size, palette.contour, "middle", bold)
-        )  # fmt: skip
+        at, letter = (x + column * 0.4, height * 0.975), initials[month - 1]
+        parts.append(text(*at, letter, size, palette.contour, "middle", bold))
     parts.append(_warmth(mean_c, left, column, foot, head, width, size, palette))
     parts.append(
         path(f"M{num(left)} {num(foot)}H{num(width - right)}", palette.contour, width / 300)
     )
     for share in (0.0, 0.5, 1.0):
         y = foot - share * (foot - head)
-        parts.append(
-            text(left - size * 0.35, y + size * 0.35, num(most * share, 1), size, palette.contour, "end")
-        )  # fmt: skip
+        at = (left - size * 0.35, y + size * 0.35)
+        parts.append(text(*at, num(most * share, 1), size, palette.contour, "end"))
     return svg(width, height, title, "".join(parts), palette, "year")
 
 
@@ -119,15 +117,13 @@ def months(
                 box.replace("{more}", f'fill="none" stroke="{palette.ink}" stroke-width=".25"')
             )
             wide = size * 0.95
-            parts.append(
-                rect(x + step / 2 - wide / 2, height / 2 - size * 0.5, wide, size, f'fill="{palette.sheet}"')
-            )  # fmt: skip
+            label = (x + step / 2 - wide / 2, height / 2 - size * 0.5, wide, size)
+            parts.append(rect(*label, f'fill="{palette.sheet}"'))
         else:
             parts.append(box.replace("{more}", f'fill="{palette.well}"'))
         ink, weight = (palette.ink, 700) if inside else (palette.ink_2, 400)
-        parts.append(
-            text(x + step / 2, height / 2 + size * 0.345, initials[month - 1], size, ink, "middle", weight)
-        )  # fmt: skip
+        at = (x + step / 2, height / 2 + size * 0.345)
+        parts.append(text(*at, initials[month - 1], size, ink, "middle", weight))
     return svg(width, height, title, "".join(parts), palette, "months")
 
 
@@ -135,7 +131,7 @@ def _nice_top(value: float) -> float:
     """The next round figure at or above a value."""
     if value <= 0:
         return 10.0
-    power = 10 ** math.floor(math.log10(value))
+    power: float = 10 ** math.floor(math.log10(value))
     for factor in (1, 1.2, 1.6, 2, 3, 4, 5, 6, 8, 10):
         if value <= power * factor:
             return power * factor

@@ -26,7 +26,7 @@ class Figures:
         """A number with thousands set apart and a true minus sign."""
         text = shown(abs(value), digits)
         whole, _, part = text.partition(".")
-        groups = []
+        groups: list[str] = []
         while len(whole) > 3:
             groups.insert(0, whole[-3:])
             whole = whole[:-3]
@@ -61,7 +61,7 @@ class Figures:
         if not self.us:
             return f"{self.span(low_m, high_m)}{NB}m"
         feet = [_to_ten(converted(metres, "m", "ft"), True) for metres in (low_m, high_m)]
-        return f"{self.span(*feet)}{NB}ft"
+        return f"{self.span(feet[0], feet[1])}{NB}ft"
 
     def rain(self, mm: float) -> str:
         """Rain or water held."""
