@@ -50,6 +50,28 @@ def test_another_scale_and_another_region_alike(core_page, random_sites, tables)
     assert phone == [same(call(pack, site)) for site in sites]
 
 
+def test_records_with_holes_and_strange_words_alike(core_page, pack):
+    plant, group = pack["plants"][0]["id"], pack["groups"][0]["id"]
+    found = {"plant_id": plant, "state": "found"}
+    sites = [
+        {},
+        {"findings": None, "questions": None, "place": None, "struck": None, "digging": None},
+        {
+            "findings": [
+                {"plant_id": "nobody", "state": "found"},
+                {"group_id": "none", "state": "found"},
+            ]
+        },
+        {"findings": [{**found, "cover": "nothing", "named": 1}], "disturbance": "flood"},
+        {"findings": [found, {**found, "state": "not_found"}, {**found, "state": "cant_tell"}]},
+        {"findings": [{"group_id": group, "state": "cant_tell"}], "whole_plot_searched": True},
+        {"questions": {"water_table": "very deep", "colour": "red"}, "month": 0},
+        {"place": {"height_m": -400, "slope_pct": 900, "aspect_deg": 360}, "month": 13},
+    ]
+    phone = on_phone(core_page, CALLS, {"pack": pack, "sites": sites})
+    assert phone == [same(call(pack, site)) for site in sites]
+
+
 def test_three_looks_alike(core_page, random_sites, pack):
     sites = random_sites(pack, 300, 6)
     stands = [None, "one_kind", "changes_near", "patches"]
