@@ -57,8 +57,10 @@ def erring_truth(
     n = field.table_plots
     mean = constancy.mean(axis=1, keepdims=True)
     chance = rng.beta(n * constancy + mean + 1e-6, n * (1 - constancy) + 1 - mean + 1e-6)
-    own = np.nanmean(np.where(np.isnan(cover_pct), np.nan, cover_pct), axis=1, keepdims=True)
-    base = np.where(np.isnan(cover_pct), np.nan_to_num(own, nan=2.0), cover_pct)
+    known = ~np.isnan(cover_pct)
+    held = known.sum(axis=1, keepdims=True)
+    own = np.where(known, cover_pct, 0.0).sum(axis=1, keepdims=True) / np.maximum(held, 1)
+    base = np.where(known, cover_pct, np.where(held > 0, own, 2.0))
     error = np.exp(field.cover_sd_log * rng.standard_normal(base.shape))
     return Truth(chance, np.clip(base * error, 0.1, 95.0), layer)
 

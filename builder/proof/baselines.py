@@ -45,7 +45,7 @@ def models(seed: int) -> dict[str, Any]:
     return {
         "random_forest": forest(TREES, random_state=seed),
         "logistic_regression": linear(C=0.1, max_iter=500),
-        "naive_bayes": bayes(binarize=-0.5),
+        "naive_bayes": bayes(binarize=0.0),
         "nearest_neighbours": near(5),
         "tree_depth_6": tree(max_depth=6, random_state=seed),
     }
@@ -56,15 +56,15 @@ def beliefs_of(
 ) -> dict[str, Floats]:
     """Each rival's probabilities for the test plots, [plot, zone].
 
-    steps, test  [plot, plant] cover step, -1 where not found; trained on steps alone
+    steps, test  [plot, plant] cover step, -1 where not found; trained on 1 + step alone
     """
     made = {}
     nearest = min(5, len(zone))
     for name, model in models(seed).items():
         if name == "nearest_neighbours":
             model.set_params(n_neighbors=nearest)
-        model.fit(steps, zone)
+        model.fit(steps + 1, zone)
         belief = np.zeros((len(test), zones))
-        belief[:, model.classes_] = model.predict_proba(test)
+        belief[:, model.classes_] = model.predict_proba(test + 1)
         made[name] = belief
     return made

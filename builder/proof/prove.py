@@ -87,9 +87,9 @@ def prove_region(
 def in_region_order(known: Known, region: Region) -> Known:
     """The same plots with zones in the region's order and by its ids; others follow after them.
 
-    A zone may be called by its id, its name or its short name.
+    A zone may be called by its id, its name, its short name or its name in known plots.
     """
-    ids = {one: zone.id for zone in region.zones for one in (zone.short, zone.name, zone.id)}
+    ids = {one: zone.id for zone in region.zones for one in (zone.short, zone.name, zone.plots_id, zone.id)}
     told = [ids.get(name, name) for name in known.zone_ids]
     place = {zone.id: z for z, zone in enumerate(region.zones)}
     order = sorted(range(len(told)), key=lambda z: (place.get(told[z], len(place)), z))

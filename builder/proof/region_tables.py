@@ -168,6 +168,7 @@ def zones_table(known: Known, ids: list[str]) -> dict[str, Any]:
                 "letter": LETTERS[z],
                 "short": _short(known.zone_ids[z], z),
                 "name": known.zone_ids[z],
+                **({} if zone_id == known.zone_ids[z] else {"plots_id": known.zone_ids[z]}),
                 "kind": "zonal",
                 "one_line": f"{known.counts[z]} known plots.",
                 "why_here": NOT_YET,
