@@ -43,3 +43,14 @@ def test_install_cut_answer_kill_and_find_again(browser, serve, demo_files, regi
     again.page.locator(".kept").wait_for()
     again.page.get_by_text(texts["zones"][last.id]["short"]).first.wait_for()
     assert again.errors == []
+
+
+def test_a_phone_can_install_the_app(browser, site, tmp_path):
+    phone = browser.phone(tmp_path / "profile")
+    phone.page.goto(site.address)
+    phone.page.get_by_role("button", name="New site").wait_for()
+    session = phone.context.new_cdp_session(phone.page)
+    assert session.send("Page.getInstallabilityErrors")["installabilityErrors"] == []
+    manifest = session.send("Page.getAppManifest")
+    assert manifest["errors"] == []
+    assert json.loads(manifest["data"])["name"] == "Beltbook"
