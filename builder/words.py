@@ -137,6 +137,7 @@ neighbours||neighbours|Zones that touch this one; each names the other.
 told_from||told from|What tells it from each zone it is taken for.
 remnant_clues||remnants|What is left after disturbance and still speaks for the zone.
 what_absence_means||what absence means|What a missing plant says here, and what it does not.
+plots_id||name in known plots|What files of known plots call this zone, where that cannot be its id.
 plot_area_m2|m2|plot area here|Plot area in this zone, where it differs from the region's.
 """
 

@@ -40,12 +40,19 @@ def add_commands(commands: Any) -> None:
     prove.add_argument("--zones", type=Path, metavar="CSV", help="their zones: plot_id,zone_id")
     prove.add_argument("--scale", metavar="NAME", help=SCALE_HELP)
     prove.add_argument("--seed", type=int, default=0, help="the same seed gives the same figures")
-    prove.add_argument("--out", type=Path, metavar="JSON", help="write the whole proof there, too")
+    prove.add_argument("--json", type=Path, metavar="OUT", help="write the whole proof there")
+    prove.add_argument("--html", type=Path, metavar="OUT", help="write it as a page with charts")
     prove.set_defaults(run=run_prove)
 
     fit = commands.add_parser("fit", help="make a whole region from known plots")
     fit.add_argument("plots", type=Path, help="CSV: plot_id,plant_id,cover_pct")
-    fit.add_argument("zones", type=Path, help="CSV: plot_id,zone_id and, if known, height_m ...")
+    fit.add_argument(
+        "--zones",
+        type=Path,
+        required=True,
+        metavar="CSV",
+        help="plot_id,zone_id and, if known, height_m, slope_pct, aspect_deg, ground answers",
+    )
     fit.add_argument("--out", type=Path, required=True, help="folder of the new region")
     fit.add_argument("--scale", metavar="NAME", help=SCALE_HELP)
     fit.add_argument(
@@ -83,6 +90,7 @@ def run_call(given: argparse.Namespace) -> int:
 
 def run_prove(given: argparse.Namespace) -> int:
     """Proves a key; what was known before stands beside what holds now."""
+    from builder.proof.report import report_html
     from builder.steps.proving import prove
 
     if (given.plots is None) != (given.zones is None):
@@ -97,8 +105,10 @@ def run_prove(given: argparse.Namespace) -> int:
     )
     if proved.problems:
         say_problems(proved.problems)
-    if given.out:
-        given.out.write_text(json.dumps(proved.now, indent=1) + "\n", encoding="utf-8")
+    if given.json:
+        given.json.write_text(json.dumps(proved.now, indent=1) + "\n", encoding="utf-8")
+    if given.html:
+        given.html.write_text(report_html(proved.now), encoding="utf-8")
     before = (proved.before or {}).get("summary", {})
     for name, value in proved.now["summary"].items():
         was = f"   (was {before[name]})" if before.get(name, value) != value else ""

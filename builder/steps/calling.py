@@ -73,6 +73,8 @@ def call_file(
 ) -> Called:
     """Calls every plot of a file and writes one line a plot, whole or not at all.
 
+    A zone made from known plots is written as those plots name it (plots_id).
+
     Raises Stopped when tables or plots have errors, UnknownName for a scale or
     disturbance nobody knows.
     """
@@ -94,6 +96,9 @@ def call_file(
     calls = call_plots(
         pack, plots, answers=answers, month=month, disturbance=disturbance, progress=progress
     )
+    shown = {zone.id: zone.plots_id or zone.id for zone in region.zones}
+    for column in ("zone_id", "next_zone_id"):
+        calls[column] = [shown.get(zone_id, zone_id) for zone_id in calls[column]]
     part = out.with_name(f".{out.name}.part")
     with part.open("w", encoding="utf-8", newline="") as file:
         lines = csv.writer(file, lineterminator="\n")

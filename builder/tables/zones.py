@@ -51,6 +51,7 @@ class Zone(Record):
     remnant_clues: str = column(Text())
     what_absence_means: str = column(Text())
     plot_area_m2: float | None = column(Number(0.01, 100_000), default=None)
+    plots_id: str = column(Text(), default="")
     note: str = column(Text(), default="")
 
 
