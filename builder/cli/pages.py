@@ -3,10 +3,12 @@
 from __future__ import annotations
 
 import argparse
+import shutil
 import time
 from pathlib import Path
 from typing import Any
 
+import builder
 from builder.cli.telling import Told, say, say_step
 
 SITE = Path("site_out")
@@ -58,6 +60,19 @@ def make(folders: list[Path], out: Path, booklets: bool) -> None:
     say(f"{out}: {len(built.site.changed)} files written, {seconds:.1f} s")
 
 
+def copied_demo(keydata: Path) -> list[Path]:
+    """The demo regions of an installed Beltbook, copied to where they can be edited."""
+    from builder.steps.notes import regions_in
+
+    packed = regions_in(Path(builder.__file__).parent / "keydata")
+    if not packed:
+        raise Told(f"there is no region in {keydata}/; begin with: beltbook start {keydata}/NAME")
+    for folder in packed:
+        shutil.copytree(folder, keydata / folder.name)
+        say(f"{keydata / folder.name}: copied for you to try and change")
+    return regions_in(keydata)
+
+
 def run_desk(given: argparse.Namespace) -> int:
     """Serves the desk until Ctrl-C."""
     from builder.desk.opening import CannotOpen, open_desk
@@ -65,9 +80,7 @@ def run_desk(given: argparse.Namespace) -> int:
 
     waiting: list[Path] = []
     if given.demo:
-        waiting = regions_in(Path("keydata"))
-        if not waiting:
-            raise Told("there is no region in keydata/")
+        waiting = regions_in(Path("keydata")) or copied_demo(Path("keydata"))
         if all(is_current(folder, given.out) for folder in waiting):
             waiting = []
         else:
