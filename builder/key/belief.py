@@ -36,6 +36,11 @@ class Weighed:
     order: list[int]
 
     @property
+    def best_two(self) -> tuple[int, int]:
+        """Zone with most belief and the runner-up; itself again where a region has one zone."""
+        return self.order[0], self.order[min(1, len(self.order) - 1)]
+
+    @property
     def answers(self) -> list[Answer]:
         return self.reading.answers
 

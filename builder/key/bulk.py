@@ -117,7 +117,7 @@ def judge_many(
     settings, belief = key.settings, weighing.belief
     order = np.argsort(-belief, axis=1, kind="stable")
     rows = np.arange(len(belief))
-    leader, rival = order[:, 0], order[:, 1]
+    leader, rival = order[:, 0], order[:, min(1, key.zones - 1)]
     scale = settings["temper"] / weighing.drag
     single = weighing.summed.alone + heard.ground.alone
     mixed = weighing.summed.mixed + heard.ground.mixed
@@ -133,8 +133,10 @@ def judge_many(
     fit = round6(fit_many(key, context, tables, heard, leader[:, None]))
     top = scores[:, :3].argmax(axis=1)
     pair = np.where(top > 0, pairs[rows, np.maximum(top - 1, 0)], -1)
-    both = np.stack([key.pairs[0][pair], key.pairs[1][pair]], axis=1)
-    other = np.where(pair >= 0, fit_many(key, context, tables, heard, both), fit)
+    other = fit
+    if (pair >= 0).any():
+        both = np.stack([key.pairs[0][pair], key.pairs[1][pair]], axis=1)
+        other = np.where(pair >= 0, fit_many(key, context, tables, heard, both), fit)
     misfit = settings["misfit"]
     scores[:, 3] = round6(misfit["times"] * ((fit + other) / 2.0) + misfit["plus"])
     finds = weighing.summed.best

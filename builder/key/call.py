@@ -30,7 +30,7 @@ def call(pack: Pack, site: Site, prompts: int = 8) -> Call:
     context = weighed.context
     return {
         **_summary(key, weighed),
-        **reasons_of(key, weighed, *weighed.order[:2]),
+        **reasons_of(key, weighed, *weighed.best_two),
         "prompts": asked,
         "nothing_helps": not asked,
         "rules_fired": [rule["id"] for rule in weighed.reading.rules],
@@ -51,7 +51,7 @@ def verdict_of(pack: Pack, site: Site) -> Call:
 
 
 def _summary(key: Key, weighed: Weighed) -> Call:
-    leader, rival = weighed.order[:2]
+    leader, rival = weighed.best_two
     named = len(weighed.findings.named)
     wanted = 0 if weighed.context.disturbed else key.settings["named_first"]
     return {
@@ -89,7 +89,7 @@ def call_three(
     return {
         "verdict": verdict,
         "zone_id": zones[order[0]]["id"],
-        "next_zone_id": zones[order[1]]["id"],
+        "next_zone_id": zones[order[min(1, len(order) - 1)]]["id"],
         "pair": [zones[z]["id"] for z in pair] if pair else None,
         "belief": _by_zone(key, belief),
         "scores": scores,
@@ -108,13 +108,16 @@ def _three_scores(
     crossed = b_a[first] * b_b[second] + b_a[second] * b_b[first]
     weight = (count**3 / 2.0) * crossed * (b0[first] + b0[second]) / 2.0
     settings = key.settings["three"]
-    scores, pairs = {"zone": round6(_said(key, "zone", stand))}, {}
+    scores: dict[str, float] = {"zone": round6(_said(key, "zone", stand))}
+    pairs: dict[str, list[int] | None] = {}
     for name, mask in (("edge", edge), ("mosaic", ~edge)):
         gain = math.log(weight[mask].mean()) - zone if mask.any() else key.settings["no_pair_gain"]
         line = settings[name]
         scores[name] = round6(line["times"] * gain + line["plus"] + _said(key, name, stand))
-        at = int(np.argmax(np.where(mask, round6(weight), -1.0)))
-        pairs[name] = [int(first[at]), int(second[at])] if mask.any() else None
+        pairs[name] = None
+        if mask.any():
+            at = int(np.argmax(np.where(mask, round6(weight), -1.0)))
+            pairs[name] = [int(first[at]), int(second[at])]
     line = settings["misfit"]
     scores["misfit"] = round6(line["times"] * fit + line["plus"] + _said(key, "misfit", stand))
     return scores, pairs

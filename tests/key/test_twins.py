@@ -6,6 +6,7 @@ import pytest
 
 from builder.key.call import call, call_three
 from builder.key.reasons import reasons_between
+from builder.key.sparse import lengthen, shorten
 from builder.key.unit import unit_zone
 from builder.pack import compile_pack
 
@@ -70,6 +71,31 @@ def test_records_with_holes_and_strange_words_alike(core_page, pack):
     ]
     phone = on_phone(core_page, CALLS, {"pack": pack, "sites": sites})
     assert phone == [same(call(pack, site)) for site in sites]
+
+
+def only_first_zone(pack):
+    """The same pack with one zone left."""
+    count = len(pack["zones"])
+    made = same(pack)
+    evidence = made["evidence"]
+    made["zones"] = [{**made["zones"][0], "neighbours": []}]
+    first = [shorten(lengthen(one, count)[:, :1]) for one in evidence["plants"]]
+    evidence["plants"] = first
+    evidence["newcomer"] = {"levels": [], "rows": [], "tables": []}
+    evidence["groups"] = [{name: one[name][:1] for name in one} for one in evidence["groups"]]
+    made["disturbances"], made["questions"], made["rules"] = [], [], []
+    made["settings"]["area_cb"] = [0]
+    for band in made["settings"]["fit"]:
+        band.update({name: value[:1] for name, value in band.items() if name != "asked_to"})
+    return same(made)
+
+
+def test_a_region_of_one_zone_is_called_too(core_page, pack, random_sites):
+    one = only_first_zone(pack)
+    sites = random_sites(one, 30, 12)
+    phone = on_phone(core_page, CALLS, {"pack": one, "sites": sites})
+    assert phone == [same(call(one, site)) for site in sites]
+    assert {made["zone_id"] for made in phone} == {pack["zones"][0]["id"]}
 
 
 def test_three_looks_alike(core_page, random_sites, pack):

@@ -10,7 +10,7 @@ import { round6 } from './rounding.js';
 export function call(pack, site, { prompts = 8 } = {}) {
   const key = prepare(pack);
   const weighed = weighSite(key, site);
-  const [leader, rival] = weighed.order;
+  const [leader, rival = leader] = weighed.order;
   const asked = promptsOf(key, site, weighed, prompts);
   const { context } = weighed;
   return {
@@ -37,7 +37,7 @@ export function verdictOf(pack, site) {
 
 function summary(key, weighed) {
   const { zones } = key.pack;
-  const [leader, rival] = weighed.order;
+  const [leader, rival = leader] = weighed.order;
   const named = weighed.findings.named.length;
   const left = weighed.context.disturbed ? 0 : key.settings.named_first - named;
   return {
@@ -95,7 +95,7 @@ export function callThree(pack, site, spotA, spotB, stand = null) {
   return {
     verdict,
     zone_id: zones[order[0]].id,
-    next_zone_id: zones[order[1]].id,
+    next_zone_id: zones[order[1] ?? order[0]].id,
     pair: pair && pair.map((z) => zones[z].id),
     belief: Object.fromEntries(zones.map((one, z) => [one.id, belief[z]])),
     scores,
