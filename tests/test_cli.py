@@ -139,3 +139,23 @@ def test_ctrl_c_ends_the_desk_clean(region):
     assert time.monotonic() - started < 15
     assert "Traceback" not in errors
     assert desk.returncode in (0, 130)
+
+
+def test_fit_takes_zones_by_option_and_calls_them_as_the_plots_did(region, capsys):
+    folder = region.parent.parent
+    own = {"Zone C1": ("ash", "elm"), "2": ("fir", "yew")}
+    zones, plots = ["plot_id,zone_id"], ["plot_id,plant_id,cover_pct"]
+    for number in range(64):
+        zone = list(own)[number % 2]
+        zones.append(f"q{number},{zone}")
+        plots.append(f"q{number},{own[zone][number // 2 % 2]},{10 + number % 30}")
+        plots.append(f"q{number},sedge,{1 + number % 5}")
+    (folder / "known.csv").write_text("\n".join(plots) + "\n")
+    (folder / "zones.csv").write_text("\n".join(zones) + "\n")
+    assert main(["fit", "known.csv", "--zones", "zones.csv", "--out", "keydata/known"]) == 0
+    assert main(["check", "keydata/known"]) == 0
+    assert main(["call", "keydata/known", "known.csv", "--out", "calls.csv"]) == 0
+    called = dict(line.split(",")[0:3:2] for line in (folder / "calls.csv").open())
+    told = dict(line.split(",") for line in zones)
+    assert set(called.values()) == {"zone_id", *own}
+    assert sum(called[plot] == told[plot] for plot in told) == len(told)
