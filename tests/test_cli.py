@@ -155,7 +155,9 @@ def test_fit_takes_zones_by_option_and_calls_them_as_the_plots_did(region, capsy
     assert main(["fit", "known.csv", "--zones", "zones.csv", "--out", "keydata/known"]) == 0
     assert main(["check", "keydata/known"]) == 0
     assert main(["call", "keydata/known", "known.csv", "--out", "calls.csv"]) == 0
-    called = dict(line.split(",")[0:3:2] for line in (folder / "calls.csv").open())
+    called = dict(
+        line.split(",")[0:3:2] for line in (folder / "calls.csv").read_text().splitlines()
+    )
     told = dict(line.split(",") for line in zones)
     assert set(called.values()) == {"zone_id", *own}
     assert sum(called[plot] == told[plot] for plot in told) == len(told)
