@@ -65,6 +65,19 @@ def hear_session(
     at = np.broadcast_to(rows, named.shape)[there], named[there]
     steps[at] = plots.steps[at]
     heard = Heard(steps, named, bound, _no_answers(ground), there.sum(axis=1))
+    go_on(key, context, tables, plots, heard, answers)
+    return heard
+
+
+def go_on(
+    key: Key,
+    context: Context,
+    tables: AnswerTables,
+    plots: Plots,
+    heard: Heard,
+    answers: int,
+) -> None:
+    """Go on with a session, changing heard, until so many answers were given in all."""
     telling = _told(key, plots)
     tried = np.zeros((len(plots), len(telling)), bool)
     running = np.ones(len(plots), bool)
@@ -72,7 +85,7 @@ def hear_session(
         running &= heard.asked < answers
         live = np.flatnonzero(running)
         if not len(live):
-            return heard
+            return
         part = _part(heard, live)
         belief = weigh_many(key, context, tables, part).belief
         gain = _gains(key, context, part, plots.steps[live], belief, tried[live], telling)

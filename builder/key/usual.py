@@ -13,15 +13,16 @@ import numpy as np
 from builder.key import simulate
 from builder.key.bulk_fit import fit_measures
 from builder.key.bulk_ground import ground_of
-from builder.key.bulk_session import hear_all, hear_session
+from builder.key.bulk_session import go_on, hear_all, hear_session
 from builder.key.compile import Arrays
 from builder.key.context import context_of
 from builder.key.plots import Plots
 from builder.key.prepare import Pack, prepare
 from builder.key.tables_bulk import answer_tables
 
-BANDS = ((4, 5), (8, 10), (14, 20), (None, 9999))
+BANDS: tuple[tuple[int | None, int], ...] = ((4, 5), (8, 10), (14, 20), (None, 9999))
 """Answers given in the session that stands for a band, and the most plants asked in the band."""
+FEWEST = 4
 SITES_PER_ZONE = 60
 SEED = 20260101
 LEAST_SPREAD = 0.02
@@ -40,12 +41,13 @@ def usual_fit(pack: Pack, arrays: Arrays, sites_per_zone: int = SITES_PER_ZONE) 
     context = context_of(key, {})
     tables = answer_tables(key, context)
     made = []
+    ground = ground_of(key, context, plots)
+    heard = hear_session(key, context, tables, plots, ground, FEWEST)
     for answers, asked_to in BANDS:
-        ground = ground_of(key, context, plots)
         if answers is None:
             heard = hear_all(key, context, plots, ground)
         else:
-            heard = hear_session(key, context, tables, plots, ground, answers)
+            go_on(key, context, tables, plots, heard, answers)
         surprise, _, miss, _ = fit_measures(key, context, tables, heard, zones[:, None])
         made.append({"asked_to": asked_to, **_by_zone(zones, surprise, miss)})
     return made
