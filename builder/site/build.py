@@ -162,4 +162,4 @@ def _json(data: object) -> bytes:
 
 
 def _sizes(content: bytes) -> tuple[int, int]:
-    return len(content), len(gzip.compress(content, 9, mtime=0))
+    return len(content), len(gzip.compress(content, 6, mtime=0))

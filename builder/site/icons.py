@@ -9,6 +9,7 @@ from __future__ import annotations
 import io
 import math
 import re
+from functools import cache
 from xml.etree import ElementTree
 
 from PIL import Image, ImageDraw
@@ -17,7 +18,7 @@ from builder.drawings.icon import icon
 
 SVG = "{http://www.w3.org/2000/svg}"
 BOX = 512  # units of the drawing
-FINE = 4  # painted this many times larger, then averaged down
+SIDE = 1536  # painted so large, then averaged down [px]
 STEPS = 24  # straight pieces per curve
 
 Point = tuple[float, float]
@@ -40,28 +41,38 @@ def png(size_px: int, rounded: bool) -> bytes:
     size_px  width and height [px]
     rounded  False fills the corners, for systems that cut their own shape
     """
-    drawing = ElementTree.fromstring(icon(rounded=rounded))
-    group = drawing.find(f"{SVG}g")
+    canvas = _painted().copy()
+    if rounded:
+        mask = Image.new("L", canvas.size, 0)
+        box = (0, 0, SIDE - 1, SIDE - 1)
+        ImageDraw.Draw(mask).rounded_rectangle(box, _corner() * SIDE / BOX, fill=255)
+        canvas.putalpha(mask)
+    file = io.BytesIO()
+    canvas.resize((size_px, size_px), Image.Resampling.BOX).save(file, "PNG", compress_level=9)
+    return file.getvalue()
+
+
+@cache
+def _painted() -> Image.Image:
+    """All shapes on one large square."""
+    group = ElementTree.fromstring(icon(rounded=False)).find(f"{SVG}g")
     assert group is not None, "the icon's shapes stand in one clipped group"
-    side = size_px * FINE
-    scale = side / BOX
-    canvas = Image.new("RGB", (side, side))
+    canvas = Image.new("RGB", (SIDE, SIDE))
     pen = ImageDraw.Draw(canvas)
     for shape in group:
-        outline = [(x * scale, y * scale) for x, y in outline_of(shape)]
+        outline = [(x * SIDE / BOX, y * SIDE / BOX) for x, y in outline_of(shape)]
         pen.polygon(outline, fill=shape.get("fill"))
-        width = round(float(shape.get("stroke-width", "0")) * scale)
+        width = round(float(shape.get("stroke-width", "0")) * SIDE / BOX)
         if width:
             pen.line([*outline, outline[0]], fill=shape.get("stroke"), width=width, joint="curve")
-    cut = drawing.find(f"{SVG}defs/{SVG}clipPath/{SVG}rect")
+    return canvas
+
+
+def _corner() -> float:
+    """Radius of the icon's rounded corners, in units of the drawing."""
+    cut = ElementTree.fromstring(icon(rounded=True)).find(f"{SVG}defs/{SVG}clipPath/{SVG}rect")
     assert cut is not None, "the icon is cut by one rectangle"
-    mask = Image.new("L", (side, side), 0)
-    radius = float(cut.get("rx", "0")) * scale
-    ImageDraw.Draw(mask).rounded_rectangle((0, 0, side - 1, side - 1), radius, fill=255)
-    canvas.putalpha(mask)
-    file = io.BytesIO()
-    canvas.resize((size_px, size_px), Image.Resampling.BOX).save(file, "PNG", optimize=True)
-    return file.getvalue()
+    return float(cut.get("rx", "0"))
 
 
 def outline_of(shape: ElementTree.Element) -> list[Point]:

@@ -11,7 +11,7 @@ import re
 TOKEN = re.compile(
     r"""(?P<comment>//[^\n]*|/\*.*?\*/)
       | (?P<string>'(?:\\.|[^'\\\n])*'|"(?:\\.|[^"\\\n])*")
-      | (?P<tick>`) | (?P<slash>/) | (?P<space>\s+) | (?P<word>[\w$]+) | (?P<other>.)""",
+      | (?P<space>\s+) | (?P<run>[^\s/'"`{}]+) | (?P<tick>`) | (?P<slash>/) | (?P<other>.)""",
     re.VERBOSE | re.DOTALL,
 )
 TEMPLATE = re.compile(r"(?:\\.|[^`\\$]|\$(?!\{))*(?P<end>`|\$\{)", re.DOTALL)
