@@ -3,7 +3,7 @@
 from collections.abc import Collection
 from dataclasses import dataclass
 
-from builder.formulas.rounding import shown
+from builder.formulas.rounding import rounded, shown
 from builder.formulas.units import converted
 from builder.views.phrases import Phrases
 
@@ -105,7 +105,7 @@ class Figures:
     def yields(self, kg_ha: float) -> str:
         """Production without its unit, rounded to tens from a hundred up."""
         value = self.yield_number(kg_ha)
-        return self.plain(10 * round(value / 10) if value >= 100 else value)
+        return self.plain(10 * rounded(value / 10, 0) if value >= 100 else value)
 
     def seed_weight(self, kg_ha: float) -> str:
         """Seed by weight without its unit."""
@@ -154,4 +154,4 @@ def month_span(first: int, last: int) -> list[int]:
 
 
 def _to_ten(value: float, rough: bool) -> float:
-    return 10 * round(value / 10) if rough else value
+    return 10 * rounded(value / 10, 0) if rough else value
