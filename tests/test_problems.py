@@ -6,6 +6,7 @@ from builder.problems import (
     cautions,
     errors,
     in_order,
+    line_of_file,
     nearest,
     render,
     render_all,
@@ -61,3 +62,12 @@ def test_the_nearest_name_is_offered():
     assert nearest("uper", ["upper", "lower"]) == 'Did you mean "upper"?'
     assert nearest("qqqq", ["upper", "lower"]) == "Known: lower, upper."
     assert nearest("x", [], "zone") == "No zone is defined yet."
+
+
+def test_a_line_is_read_from_the_file(tmp_path):
+    path = tmp_path / "t.yaml"
+    path.write_bytes(b"\xef\xbb\xbffirst\r\nsecond\n")
+    assert line_of_file(str(path), 1) == "first"
+    assert line_of_file(str(path), 2) == "second"
+    assert line_of_file(str(path), 9) is None
+    assert line_of_file(str(tmp_path / "none"), 1) is None

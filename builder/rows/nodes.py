@@ -13,13 +13,17 @@ Scalar = str | int | float | bool | None
 
 @dataclass(slots=True, eq=False)
 class Value:
-    """One text, number, flag or nothing, and where it stands."""
+    """One text, number, flag or nothing, and where it stands.
+
+    refused  a problem with it has been told already
+    """
 
     value: Scalar
     at: Place
     text: str
     span: tuple[int, int] = (0, 0)
     quoted: bool = False
+    refused: bool = False
     parent: Row | Items | None = field(default=None, repr=False)
 
 

@@ -251,9 +251,10 @@ class _Tree:
                     'Write the value, "null" for none, or take the line out.',
                 )
             )
-            return Value(None, at, text, span)
+            return Value(None, at, text, span, refused=True)
         if _TURNED.match(text):
             self._turned(at, text)
+            return Value(text, at, text, span, refused=True)
         return Value(text, at, text, span)
 
     def _turned(self, at: Place, text: str) -> None:

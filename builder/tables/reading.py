@@ -60,7 +60,7 @@ class Reader:
                     whole = False
                 continue
             if isinstance(below, Value) and below.value is None and not is_required(item):
-                continue
+                continue  # null, or nothing at all, which has been told
             value = self.value(kind, below, key)
             if value is BAD:
                 whole = whole and not is_required(item)
@@ -78,6 +78,8 @@ class Reader:
 
     def value(self, kind: Kind, node: Node, name: str) -> Any:
         """The value of a node as its kind, or BAD."""
+        if isinstance(node, Value) and node.refused:
+            return BAD
         match kind:
             case Text():
                 return self._text(kind, node, name)

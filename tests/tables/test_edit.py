@@ -237,3 +237,17 @@ def test_a_csv_cell_changes_alone():
     ):
         with pytest.raises(EditRefused):
             wrong()
+
+
+def test_text_in_block_style_is_replaced_as_a_whole():
+    text = "a: |\n  two\n  lines\nb: 1\n"
+    assert value(text, "a") == "two\nlines\n"
+    after = replace_value(text, ("a",), "one line")
+    assert after == "a: one line\nb: 1\n"
+    assert replace_value("a:\nb: 1\n", ("a",), 2) == "a: 2\nb: 1\n"
+    assert value(replace_value("a: 1\n", ("a",), "x\ty\nz"), "a") == "x\ty\nz"
+
+
+def test_rows_that_share_a_line_are_left_to_the_hand():
+    with pytest.raises(EditRefused):
+        remove_value("a:\n  - - 1\n    - 2\n", ("a", 0, 0))

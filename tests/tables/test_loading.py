@@ -44,3 +44,11 @@ def test_references_are_told_with_their_places(tables):
     assert ("plants", "ponderosa_pine", "plant") in said
     assert ("questions", "stripped", "states") in said
     assert all(r.place.line >= 1 for r in tables.references)
+
+
+def test_a_word_that_yaml_turns_is_told_once(tmp_path):
+    for written in ("no", ""):
+        files = three_zone_files()
+        files["zones.yaml"] = files["zones.yaml"].replace("centre_m: 1325", f"centre_m: {written}")
+        problems = checked_region(write_region(tmp_path / f"r{written}", files)).problems
+        assert [p.check for p in problems] == ["turned-value" if written else "empty-value"]
