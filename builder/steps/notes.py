@@ -16,6 +16,7 @@ from builder.steps.refusals import ToldByStep
 
 TABLE_ENDINGS = {".yaml", ".csv"}
 NOTES = ".beltbook"
+KEYDATA = "keydata"
 BOOKLET = "booklet.pdf"
 PROGRAM = Path(__file__).resolve().parent.parent
 
@@ -125,8 +126,10 @@ def only_builder(out: Path) -> Iterator[None]:
 
 
 def proof_notes(folder: Path) -> Path:
-    """Where whole proofs of a region are kept: with the notes beside keydata."""
-    return folder.resolve().parent.parent / NOTES / "proofs" / folder.name
+    """Where whole proofs of a region are kept: beside keydata, or beside a folder elsewhere."""
+    above = folder.resolve().parent
+    home = above.parent if above.name == KEYDATA else above
+    return home / NOTES / "proofs" / folder.name
 
 
 def kept_proofs(folder: Path) -> list[dict[str, Any]]:
