@@ -27,7 +27,6 @@ Whole = NDArray[np.int64]
 ANSWERS = 8
 PULL_PLOTS = 5.0
 """Plots' worth of pull of a zone's usual fit towards that of all zones."""
-TURNS = 2
 FEWEST_CASES = 40
 
 
@@ -55,9 +54,8 @@ def session_figures(
     thin = SESSION["thin"]
     usual = _usual_rows(parts, session, near)
     made: dict[str, Any] = {**session, "fit": usual}
-    for _ in range(TURNS):
-        cases = _measured(parts, made, near, rng)
-        made |= fit_lines({name: told for name, (told, _, _) in cases.items()})
+    cases = _measured(parts, made, near, rng)
+    made |= fit_lines({name: told for name, (told, _, _) in cases.items()})
     _, finds, stated = cases["zone"]
     made["thin"] = {**thin, "finds_cb": thin_line(finds, stated, thin)}
     return made

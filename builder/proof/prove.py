@@ -89,7 +89,11 @@ def in_region_order(known: Known, region: Region) -> Known:
 
     A zone may be called by its id, its name, its short name or its name in known plots.
     """
-    ids = {one: zone.id for zone in region.zones for one in (zone.short, zone.name, zone.plots_id, zone.id)}
+    ids = {
+        one: zone.id
+        for zone in region.zones
+        for one in (zone.short, zone.name, zone.plots_id, zone.id)
+    }
     told = [ids.get(name, name) for name in known.zone_ids]
     place = {zone.id: z for z, zone in enumerate(region.zones)}
     order = sorted(range(len(told)), key=lambda z: (place.get(told[z], len(place)), z))
