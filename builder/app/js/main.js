@@ -20,7 +20,8 @@ async function speak() {
   const wanted = start.value.language ?? navigator.language.slice(0, 2);
   const code = wanted in languages ? wanted : 'en';
   document.documentElement.lang = code;
-  setWords(await readWords(code), code);
+  const [english, over] = await Promise.all([readWords('en'), code === 'en' ? null : readWords(code)]);
+  setWords(english, code, over);
   found({ languages });
   return code;
 }

@@ -1,6 +1,6 @@
 /** The page that the address asks for. Moves focus to its heading and says where one has come. */
 import { html } from 'htm/preact';
-import { useEffect, useRef } from 'preact/hooks';
+import { useEffect, useErrorBoundary, useRef } from 'preact/hooks';
 import { t } from './words.js';
 import { region, route, site, spoken } from './state.js';
 import { Patterns } from './parts/patterns.js';
@@ -36,9 +36,24 @@ export function App() {
   }, [address]);
   return html`<div class="whole" ref=${top}>
     <${Patterns} zones=${region.value.zones}/>
-    ${pageFor(page, parts)}
+    <${Guarded} address=${address}>${pageFor(page, parts)}</${Guarded}>
     <${Trouble}/>
     <p class="spoken" role="status" aria-live="polite">${spoken.value}</p></div>`;
+}
+
+/** A page that cannot be drawn says so and leaves the way back open; the next page is tried afresh. */
+function Guarded({ address, children }) {
+  const [fault, again] = useErrorBoundary((error) => reportError(error));
+  const failedAt = useRef(null);
+  if (fault && failedAt.current === null) failedAt.current = address;
+  useEffect(() => {
+    if (!fault || failedAt.current === address) return;
+    failedAt.current = null;
+    again();
+  }, [address, fault]);
+  if (!fault) return children;
+  return html`<main class="refusal stack"><h1 tabindex="-1">${t('app.fault')}</h1><p>${t('app.fault_why')}</p><p class="small quiet">${String(fault.message)}</p>
+    <p class="deep"><a class="btn go" href="#/sites">${t('foot.sites')}</a><a class="btn" href="#/hand">${t('foot.hand')}</a></p></main>`;
 }
 
 function pageFor(page, parts) {

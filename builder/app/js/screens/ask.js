@@ -42,6 +42,7 @@ function AskPlant({ plant, skip, root }) {
   const sure = call.value.sure ? t('plants.sure_already', { odds: sentence(oddsWords(call.value.belief[call.value.zone_id])) }) : null;
   return html`<${Danger} plant=${plant}/><div class="told" ref=${told}>
       <${PlantCard} plant=${plant} why=${t('plants.look_for')} pair=${pairOf()}/>
+      ${call.value.notes.dead_counts && plant.layer === 'tree' && html`<p class="hint"><${Icon} name="plants"/><span>${t('notes.dead_counts')}</span></p>`}
       ${sure && html`<p class="hint"><${Icon} name="zone"/><span>${sure} <a class="link" href=${root.replace(/plants$/, 'zone')}>${t('plants.to_zone')}</a></span></p>`}
       <div class="push"></div><${UndoLine}/></div>
     <div class="answer"><${CoverKeys} region=${here} finding=${findingOf(site.value, plant.id)} onAnswer=${(answer) => enter(here, plant, answer)}/>

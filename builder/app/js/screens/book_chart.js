@@ -17,7 +17,7 @@ export function Chart() {
   const step = (WIDE - 6 - LEFT - GAP) / columns.length;
   const x = (i) => LEFT + (i + 0.5) * step + (i >= here.belts.length ? GAP : 0);
   const rows = sorted(here);
-  return html`<div class="headcols"><svg viewBox=${`0 0 ${WIDE} 46`} aria-hidden="true"><text class="tick" x="4" y="19">${t('book.low_high').split(' to ')[0]}</text><text class="tick" x="4" y="38">${t('book.low_high').split(' to ').slice(1).join(' ')}</text>
+  return html`<div class="headcols"><svg viewBox=${`0 0 ${WIDE} 46`} aria-hidden="true"><text class="tick" x="4" y="19">${t('book.low')}</text><text class="tick" x="4" y="38">${t('book.high')}</text>
       ${columns.map((zone, i) => html`<text class="col" x=${x(i)} y="19" text-anchor="middle">${zone.letter}</text>${zone.kind === 'zonal'
         ? html`<rect class="swatch" x=${x(i) - step / 2 + 0.5} y="25" width=${step - 1} height="15" fill=${`url(#p-${zone.letter})`}/>` : html`<ellipse class="swatch" cx=${x(i)} cy="32.5" rx=${step / 2 - 0.8} ry="7.5" fill=${`url(#p-${zone.letter})`}/>`}`)}</svg></div>
     <ul class="kites">${rows.map(({ plant, shares }) => html`<li key=${plant.id}><a href=${`#/book/plant/${plant.id}`} aria-label=${spoken(here, plant, shares)}>

@@ -9,7 +9,7 @@ import { Bar } from './parts/bar.js';
 import { Choice, Field } from './parts/choice.js';
 import { EdgeShut } from './parts/edge_shut.js';
 import { Foot } from './parts/foot.js';
-import { language } from './words.js';
+import { language, words } from './words.js';
 
 const named = (group, values) => values.map((value) => ({ value, label: t(`${group}.${value}`) }));
 
@@ -21,7 +21,8 @@ export function Setup() {
       <${Choice} label=${t('setup.paper')} options=${named('mode', ['day', 'night', 'sun'])} value=${mode.value} onPick=${(value) => { mode.value = value; }} row/>
       <${Choice} label=${t('setup.hand')} options=${named('setup', ['left', 'right'])} value=${hand.value} onPick=${(value) => { hand.value = value; }} row/>
       <${Choice} label=${t('setup.units')} options=${named('setup', ['metric', 'us'])} value=${units.value} onPick=${(value) => { units.value = value; }}/>
-      ${Object.keys(languages).length > 1 && html`<${Choice} label=${t('setup.language')} options=${Object.entries(languages).map(([value, label]) => ({ value, label }))} value=${language.value} onPick=${(value) => { beginWith({ language: value }); location.reload(); }}/>`}</section>
+      ${Object.keys(languages).length > 1 && html`<${Choice} label=${t('setup.language')} options=${Object.entries(languages).map(([value, label]) => ({ value, label }))} value=${language.value} onPick=${(value) => { beginWith({ language: value }); location.reload(); }}/>`}
+      ${!words.value.reviewed_by && html`<p class="small quiet">${t('setup.unreviewed')}</p>`}</section>
     <section class="part"><${Field} label=${t('setup.observer')} hint=${t('setup.observer_why')} value=${observer.value} onChange=${(name) => { observer.value = name; }}/></section>
     <section class="part stack"><h2>${t('setup.region')}</h2><p>${t('setup.region_line', { name: region.value.name, edition: region.value.edition, date: region.value.pack.region.date })}</p>
       ${offers.length > 1 && html`<${Choice} label=${t('setup.reload')} options=${offers.map((one) => ({ value: one.id, label: one.name }))} value=${region.value.id} onPick=${(value) => { beginWith({ region: value }); location.reload(); }}/>`}

@@ -6,10 +6,21 @@ import { rounded } from '../core/rounding.js';
 export const words = signal({});
 export const language = signal('en');
 
-/** @param {object} table nested words, as in words/en.yaml  @param {string} code language tag */
-export function setWords(table, code) {
-  words.value = table;
+/** @param {object} table nested words, as in words/en.yaml  @param {string} code language tag
+ *  @param {object|null} [over] words of another language laid over them; what it lacks stays English */
+export function setWords(table, code, over = null) {
+  words.value = over ? laidOver(table, over) : table;
   language.value = code;
+}
+
+/** A branch without plurals of its own kind is joined key by key; a leaf or a plural entry is replaced. */
+function laidOver(table, over) {
+  const joined = { ...table };
+  for (const [key, value] of Object.entries(over)) {
+    const branch = value !== null && typeof value === 'object' && typeof table[key] === 'object' && !('other' in value && 'one' in value);
+    joined[key] = branch ? laidOver(table[key], value) : value;
+  }
+  return joined;
 }
 
 const makers = new Map();
