@@ -6,6 +6,7 @@ from pathlib import Path
 
 from markupsafe import Markup
 
+from builder.booklet.code import address_code
 from builder.booklet.keying import Grown, KeyView, grown, key_view
 from builder.booklet.style import A6, Trim
 from builder.drawings.ink import PRINT, rect, svg
@@ -15,6 +16,7 @@ from builder.tables import Region
 from builder.views import grounds, plants
 from builder.views.look import Look
 from builder.views.phrases import Phrases, phrases
+from builder.views.quick import Table, quick_tables
 from builder.views.zones import ZoneView, zone_views
 
 WORDS = Path(__file__).parent / "words"
@@ -22,7 +24,7 @@ RULE_STRIP_MM = 7.0
 COVER_PAPER = "#f6f1e4"
 FORM_PLANTS = 22
 FORM_CLIPS = 9
-FIRST_LINES, REST_LINES = 20, 52
+FIRST_LINES, REST_LINES, MOST_LINES = 20, 52, 59
 """Lines that fit a zone's first page and its last two beside their drawings, counted on pages."""
 WIDE_NAME = 18
 LINE_MM, PLANT_ROW_MM, ZONE_CHARTS_MM = 3.7, 4.45, 77.0
@@ -53,11 +55,15 @@ class Cover:
 
 @dataclass(frozen=True)
 class Spread:
-    """A zone's pages; a page with much to say is set a little closer."""
+    """A zone's pages; a page with much to say is set a little closer.
+
+    long  too much for four pages: wildlife takes a fifth, with room for notes
+    """
 
     zone: ZoneView
     first: str
     rest: str
+    long: bool
 
 
 @dataclass(frozen=True)
@@ -92,6 +98,7 @@ class BookletView:
     title: str
     cover: Cover
     about: tuple[str, ...]
+    code: Markup
     belts: tuple[Entry, ...]
     rest: tuple[Entry, ...]
     steps: tuple[str, ...]
@@ -106,7 +113,7 @@ class BookletView:
     forms: tuple[plants.FormGroup, ...]
     questions: tuple[grounds.QuestionView, ...]
     feel: tuple[grounds.FeelStep, ...]
-    textures: tuple[tuple[grounds.TextureRow, grounds.TextureRow], ...]
+    quick: tuple[Table, ...]
     form: "FormView"
     sources: tuple[grounds.SourceView, ...]
     cautions_of_build: tuple[str, ...]
@@ -158,6 +165,7 @@ def booklet_view(
         title=own.say("title", region=region.name),
         cover=cover(look, trim, own),
         about=about(look, own, mark),
+        code=code(look, own),
         belts=_belts(look, zones, pages),
         rest=_rest(own, pages),
         steps=_steps(own, pages),
@@ -172,7 +180,7 @@ def booklet_view(
         forms=tuple(plants.by_form(look)),
         questions=tuple(grounds.questions(look)),
         feel=tuple(grounds.feel_steps(look)),
-        textures=_abreast(grounds.texture_rows(look)),
+        quick=tuple(quick_tables(look)),
         form=form_view(look, own),
         sources=tuple(grounds.sources(look)),
         cautions_of_build=build_cautions,
@@ -231,10 +239,12 @@ def spread(zone: ZoneView, trim: Trim) -> Spread:
         + _lines("".join(line.head + line.text for line in zone.wildlife))
         + _lines("".join(line.head + line.text for line in zone.soil_life))
     )
+    long = rest > MOST_LINES - 2 * lost
     return Spread(
         zone,
         "tight" if first > FIRST_LINES - lost else "easy",
-        "tight" if rest > REST_LINES - 2 * lost else "easy",
+        "tight" if rest > REST_LINES - 2 * lost and not long else "easy",
+        long,
     )
 
 
@@ -286,6 +296,14 @@ def about(look: Look, own: Phrases, mark: str) -> tuple[str, ...]:
     return tuple(lines)
 
 
+def code(look: Look, own: Phrases) -> Markup:
+    """The code that opens the app; nothing where the region has no address."""
+    address = look.region.head.address
+    if not address:
+        return Markup("")
+    return look.show(address_code(address, own.say("about.app", address=address)))
+
+
 def _belts(look: Look, zones: tuple[ZoneView, ...], pages: Mapping[str, int]) -> tuple[Entry, ...]:
     """The belts from the top down, as they lie on the edge."""
     shown = {zone.id: zone for zone in zones}
@@ -305,7 +323,7 @@ def _belts(look: Look, zones: tuple[ZoneView, ...], pages: Mapping[str, int]) ->
 def _rest(own: Phrases, pages: Mapping[str, int]) -> tuple[Entry, ...]:
     """What follows the belts, by anchor and name."""
     names = {"chart-0": "chart"} | {
-        name: name for name in ("plants", "questions", "feel", "form", "sources")
+        name: name for name in ("plants", "questions", "feel", "quick", "sources", "form")
     }
     return tuple(
         Entry(Markup(""), own.say(f"{name}.title"), "", anchor, _page(pages, anchor))
@@ -324,15 +342,6 @@ def chart_pages(chart: plants.Chart, trim: Trim, note: str) -> tuple[ChartPage, 
         )
         for number in range(pages)
     )
-
-
-def _abreast(
-    rows: list[grounds.TextureRow],
-) -> tuple[tuple[grounds.TextureRow, grounds.TextureRow], ...]:
-    """Rows two abreast, read down the first column and then the second."""
-    half = (len(rows) + 1) // 2
-    second = [*rows[half:], grounds.TextureRow("", "")][:half]
-    return tuple(zip(rows[:half], second, strict=True))
 
 
 def _page(pages: Mapping[str, int], anchor: str) -> str:

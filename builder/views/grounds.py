@@ -37,6 +37,18 @@ class QuestionView:
     act: str
     answers: tuple[AnswerView, ...]
 
+    @property
+    def telling(self) -> tuple[AnswerView, ...]:
+        """Answers that speak for or against belts."""
+        return tuple(each for each in self.answers if each.speaks_for or each.speaks_against)
+
+    @property
+    def silent(self) -> str:
+        """The other answers, which only change what else counts."""
+        return ", ".join(
+            each.label for each in self.answers if not (each.speaks_for or each.speaks_against)
+        )
+
 
 @dataclass(frozen=True)
 class FeelStep:

@@ -10,7 +10,7 @@ import pikepdf
 import pytest
 from helpers import three_zone_files, write_region
 
-from builder.booklet import BookletError, write_booklet
+from builder.booklet import BookletError, make, write_booklet
 from builder.booklet.fonts import MissingCharactersError, covered, refuse_uncovered
 from builder.booklet.make import environment
 from builder.booklet.render import Press, RendererError, written
@@ -19,6 +19,8 @@ from builder.tables import load_region
 from builder.views import look
 
 MM = 72 / 25.4
+TEMPLATES = Path(make.__file__).parent / "templates"
+INLINE = re.compile(r"(?:\}\}|[.:,;]) <(?:b|i|span|small)\b")
 
 
 @cache
@@ -186,3 +188,13 @@ def test_a_character_without_type_is_named():
 def test_templates_refuse_a_missing_name():
     with pytest.raises(Exception, match="undefined"):
         environment().from_string("{{ nothing.here }}").render()
+
+
+def test_no_template_sets_a_space_before_an_inline_part():
+    """The renderer breaks a text that fills its line but for a last space after its first word."""
+    found = []
+    for path in sorted(TEMPLATES.glob("*.html")):
+        found += [f"{path.name}: {hit.group()}" for hit in INLINE.finditer(path.read_text("utf-8"))]
+    assert len(list(TEMPLATES.glob("*.html"))) > 10
+    assert found == []
+    assert INLINE.search("<p>{{ line }} <b>x</b></p>")
