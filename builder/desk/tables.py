@@ -225,7 +225,7 @@ def _list(look: Look, table: str, root: Row, part: str, kind: Many | Keyed) -> L
         rows.append((_row_name(key, node), href, [_short(cell) for cell in cells]))
     say = read_phrases()["tables"]
     of = below.record.__name__ if isinstance(below, Part) else ""
-    heads = [label_for(name, of) for name in fields] or [""]
+    heads = [label_for(name, of) for name in fields] or [read_phrases()["tables"]["value"]]
     names = [
         key if not key.isdigit() else _row_name(key, node) for key, node in rows_of(root, part)
     ]

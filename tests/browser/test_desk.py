@@ -2,6 +2,7 @@
 
 import shutil
 import threading
+from pathlib import Path
 
 import pytest
 from helpers import three_zone_files, write_region
@@ -120,6 +121,25 @@ def test_a_form_tells_a_problem_as_it_is_typed_and_works_without_script(desk, pa
     plain.locator("[data-save]").click()
     assert "1 change saved." in plain.locator(".note").inner_text()
     assert "centre_m: 1080" in (tmp_path / "keydata/willow_breaks/zones.yaml").read_text()
+    context.close()
+
+
+@pytest.mark.parametrize("mode", ["light", "dark"])
+def test_the_accessibility_checker_finds_nothing(desk, page, mode):
+    """axe-core, a general checker for web pages, on each kind of page."""
+    script = (Path(__file__).parents[2] / "node_modules/axe-core/axe.min.js").read_text("utf-8")
+    context = page.context.browser.new_context(color_scheme=mode, bypass_csp=True)
+    there = context.new_page()
+    region = "/r/willow_breaks"
+    for path in (
+        "/", "/start", f"{region}/", GRID, f"{region}/tables/zones", f"{region}/tables/region",
+        f"{region}/tables/zones/zones/0", f"{region}/tables/climate", f"{region}/proof",
+        f"{region}/build", f"{region}/editions", f"{region}/sheets", f"{region}/problems",
+    ):  # fmt: skip
+        there.goto(desk + path)
+        there.evaluate(script)
+        found = there.evaluate("axe.run().then((said) => said.violations.map((one) => one.id))")
+        assert found == [], path
     context.close()
 
 
