@@ -7,11 +7,18 @@ import { Frame } from './parts/frame.js';
 import { Choice, Field, Typed } from './parts/choice.js';
 import { readNumber } from './parts/wheel.js';
 import { standardsOf, normalsOf } from './pack_reading.js';
+import { Trajectory } from './trajectory.js';
 
 const MEASURES = { cover: '%', production: 'kg/ha', density: 'per m²' };
 
 /** @param {{stand: {zone: object}}} props */
 export function Success({ stand }) {
+  const own = standardsOf(region.value, stand.zone.id);
+  const lines = region.value.pack.success_rule.kind === 'trajectory' && own?.trajectory.length > 0;
+  return lines ? html`<${Trajectory} zone=${stand.zone} success=${own}/>` : html`<${ByStandard} stand=${stand}/>`;
+}
+
+function ByStandard({ stand }) {
   const here = region.value;
   const record = site.value;
   const kept = { measure: 'cover', against: 'reference', values: [], reference: [], standard: null, years_since: null, ...record.reclaim.test };

@@ -2,6 +2,7 @@
 import { html } from 'htm/preact';
 import { t } from '../words.js';
 import { Typed } from './choice.js';
+import { Tilt } from './tilt.js';
 import { readNumber } from './read_number.js';
 
 const POINTS = ['n', 'ne', 'e', 'se', 's', 'sw', 'w', 'nw'];
@@ -41,7 +42,8 @@ export function Wheel({ place, onPlace }) {
     <text class="hubtext" x="130" y="138">${slope === null ? '–' : t('unit.pct', { n: slope })}</text></svg>
     <div class="slope">${[0, 5, 12, 25, 45, 70].map((pct) => html`<button key=${pct} type="button" class="chip" aria-pressed=${String(slope === pct)}
       onClick=${() => onPlace({ ...place, slope_pct: slope === pct ? null : pct })}>${pct === 0 ? t('place.level') : t('unit.pct', { n: pct })}</button>`)}
-      <label class="chip typed"><span class="spoken">${t('place.slope_typed')}</span><${Typed} mode="decimal" placeholder=${t('place.slope_other')} value=${slope ?? ''} limits=${[0, 200]} onChange=${(text) => onPlace({ ...place, slope_pct: readNumber(text, 0, 200) })}/><i>%</i></label></div>`;
+      <label class="chip typed"><span class="spoken">${t('place.slope_typed')}</span><${Typed} mode="decimal" placeholder=${t('place.slope_other')} value=${slope ?? ''} limits=${[0, 200]} onChange=${(text) => onPlace({ ...place, slope_pct: readNumber(text, 0, 200) })}/><i>%</i></label></div>
+    <${Tilt} onSlope=${(slope_pct) => onPlace({ ...place, slope_pct })}/>`;
 }
 
 export { readNumber };
