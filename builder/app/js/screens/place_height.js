@@ -8,6 +8,7 @@ import { Icon } from './parts/icon.js';
 import { Field } from './parts/choice.js';
 import { readNumber } from './parts/wheel.js';
 import { allowed, shiftHere } from './height_mark.js';
+import { PlannedPoints } from './place_points.js';
 
 const WAIT_MS = 30_000;
 
@@ -28,6 +29,7 @@ export function Height({ region, record }) {
         limits=${[-1500, 30000]} onChange=${(text) => change({ place: { ...place, height_m: heightFrom(readNumber(text, -1500, 30000)) } })}/></div>
     ${['refused', 'no_signal', 'none'].includes(state) && html`<p class="hint care"><${Icon} name="warn"/><span>${t(`place.${state}`)}</span></p>`}
     ${place.latitude_deg !== null && html`<p class="small quiet">${t('place.position', { latitude: place.latitude_deg.toFixed(5), longitude: place.longitude_deg.toFixed(5) })}</p>`}
+    <${PlannedPoints} record=${record}/>
   </section>`;
 }
 
