@@ -12,6 +12,7 @@ from builder.formulas.refusal import RefusedError, need_not_negative, need_numbe
 from builder.formulas.sample import plots_for_precision, summary
 from builder.formulas.success import (
     Judgement,
+    line_at,
     one_sample,
     responsibility_years,
     standard_line,
@@ -164,3 +165,46 @@ def _needed(values: Sequence[float], rule: Mapping[str, Any], null_kind: str) ->
     alpha = rule[f"alpha_{null_kind}"]
     raw = plots_for_precision(plots.n, plots.mean, plots.sd, rule["precision"], alpha)
     return max(2, math.ceil(raw))
+
+
+@dataclass(frozen=True)
+class Course:
+    """One line of a trajectory: on_course, off_course, not_asked (no line yet), too_few plots."""
+
+    measure: str
+    verdict: str
+    line: float | None
+    at_most: bool
+    test: Judgement | None
+
+
+def trajectory_check(
+    lines: Sequence[Mapping[str, Any]],
+    plots: Mapping[str, Sequence[float]],
+    year: float,
+    rule: Mapping[str, Any],
+) -> list[Course]:
+    """Every line of a zone's trajectory in one year after the work.
+
+    lines  rows with measure and either at_most or at_least: [year, value] points
+    plots  plot values by measure;  year  full years since the work
+    rule   null_kind, alpha_direct, alpha_reverse, least
+
+    With the direct null a line is on course unless the plots show it is not, with the
+    reverse null once they show it is. One visit is not a pass: the region says how many.
+    Source: beltbook_rule, student_1908; golden: success_test.json
+    """
+    found = []
+    for row in lines:
+        at_most = bool(row.get("at_most"))
+        line = line_at(row["at_most"] if at_most else row["at_least"], year)
+        values = plots.get(row["measure"], ())
+        test, answer = None, "not_asked"
+        if line is not None:
+            answer = "too_few"
+            if len(values) >= max(2, rule["least"]):
+                kind = rule["null_kind"]
+                test = one_sample(values, line, rule[f"alpha_{kind}"], kind, at_most)
+                answer = "on_course" if test.passes else "off_course"
+        found.append(Course(row["measure"], answer, line, at_most, test))
+    return found

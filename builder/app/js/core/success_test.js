@@ -1,7 +1,7 @@
 /** A success test as it is signed: the null that decides, the other beside it, and why not yet. */
 import { needNotNegative, needNumber, refuse } from './refusal.js';
 import { plotsForPrecision, summary } from './sample.js';
-import { oneSample, responsibilityYears, standardLine, twoSample, verdict } from './success.js';
+import { lineAt, oneSample, responsibilityYears, standardLine, twoSample, verdict } from './success.js';
 
 const NULLS = ['direct', 'reverse'];
 
@@ -83,4 +83,24 @@ export function successTest({
   const answer = verdict({ passes: deciding.passes, n, needed: plots_needed, least: rule.least, null_kind });
   const more = answer === 'too_few' ? Math.max(0, Math.max(plots_needed, rule.least) - n) : 0;
   return { verdict: answer, null_kind, deciding, other, plots_needed, more, sentence: `success.${null_kind}.${answer}` };
+}
+
+/**
+ * Every line of a zone's trajectory in one year after the work: {measure, verdict, line, at_most,
+ * test}; verdict on_course, off_course, not_asked (no line yet) or too_few.
+ *
+ * @param {{lines: {measure: string, at_most?: [number, number][], at_least?: [number, number][]}[],
+ *   plots: Record<string, number[]>, year: number, rule: object}} of
+ */
+export function trajectoryCheck({ lines, plots, year, rule }) {
+  return lines.map(({ measure, at_most: ceiling = [], at_least: floor = [] }) => {
+    const at_most = ceiling.length > 0;
+    const line = lineAt({ points: at_most ? ceiling : floor, year });
+    const values = plots[measure] ?? [];
+    if (line === null) return { measure, verdict: 'not_asked', line, at_most, test: null };
+    if (values.length < Math.max(2, rule.least)) return { measure, verdict: 'too_few', line, at_most, test: null };
+    const { null_kind } = rule;
+    const test = oneSample({ values, line, alpha: rule[`alpha_${null_kind}`], null_kind, at_most });
+    return { measure, verdict: test.passes ? 'on_course' : 'off_course', line, at_most, test };
+  });
 }
