@@ -18,9 +18,9 @@ def version(mark):
         f"<!doctype html><title>{mark}</title><h1>{mark}</h1>"
         '<script type="module" src="app/js/main.js"></script>'
     ).encode()
-    files["app/js/updates.js"] = slim_script(
-        (APP / "js" / "store" / "updates.js").read_text("utf-8")
-    ).encode()
+    for name in ("updates", "files", "faults"):
+        script = (APP / "js" / "store" / f"{name}.js").read_text("utf-8")
+        files[f"app/js/{name}.js"] = slim_script(script).encode()
     files["app/js/main.js"] = f"""
       import {{ watchVersions }} from './updates.js';
       window.told = [];
@@ -84,7 +84,7 @@ def test_only_files_of_the_version_are_kept(phone, serve):
         "async () => (await (await caches.open((await caches.keys())[0])).keys()).map((one) => one.url)"
     )
     listed = json.loads(version("one")["sw.js"].decode().split("\n")[0][len("const BUILD = ") : -1])
-    assert len(kept) == len(listed["files"]) == len(SHELL) + 1
+    assert len(kept) == len(listed["files"]) == len(SHELL) + 3
     assert not any("booklet" in url or "sw.js" in url for url in kept)
 
 
