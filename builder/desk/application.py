@@ -14,6 +14,7 @@ from builder.desk import (
     accounts,
     built,
     editions,
+    flat,
     guards,
     overview,
     proof,
@@ -74,7 +75,7 @@ def create_app(settings: Settings) -> Flask:
     app.extensions["shelf"] = Shelf(settings.keydata)
     app.extensions["jobs"] = Jobs(settings.home)
     families = (
-        accounts, overview, tables, proof, built, working, editions, sheets, start, served,
+        accounts, overview, tables, proof, built, working, editions, sheets, start, flat, served,
     )  # fmt: skip
     for family in families:
         app.register_blueprint(family.pages)

@@ -27,7 +27,7 @@ LIMITS = {
     "MAX_FORM_PARTS": 5_000,
 }
 UPLOAD_LIMIT = 32 * MEGABYTE  # a season of plots as a spreadsheet is about 5 MB
-UPLOADS = {"sheets.receive"}
+UPLOADS = {"sheets.receive", "flat.receive"}
 
 DESK_POLICY = (
     "default-src 'none'; script-src 'self'; style-src 'self'; img-src 'self' data:; "

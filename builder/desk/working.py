@@ -12,7 +12,7 @@ from builder.desk.jobs import Job, Jobs
 from builder.desk.phrases import read_phrases
 
 BAR = 300
-PAGES = {"prove": "proof.show", "build": "build.show"}
+PAGES = {"prove": "proof.show", "build": "build.show", "fit": "flat.work"}
 
 pages = Blueprint("jobs", __name__, url_prefix="/jobs")
 
