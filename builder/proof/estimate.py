@@ -187,6 +187,8 @@ def _lessons(
     for k, arrays in enumerate(held_out):
         tell("sessions", k / len(held_out))
         rows = np.flatnonzero(fold == k)
+        if not len(rows):
+            continue
         key = key_for(arrays, Weights(temper=1.0), TRIAL)
         sessions = Sessions(key)
         for answers in LEARNED_AT:
@@ -232,6 +234,8 @@ def _tune(
     for k, (arrays, corrections) in enumerate(zip(held_out, crossed, strict=True)):
         tell("temper", k / len(held_out))
         rows = np.flatnonzero(fold == k)
+        if not len(rows):
+            continue
         key = key_for(
             replace(arrays, **dict(zip(CORRECTED, corrections.nats(), strict=True))),
             Weights(temper=1.0, tau=corrections.tau),
