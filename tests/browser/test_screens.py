@@ -167,7 +167,7 @@ def test_nothing_runs_out_of_the_page(app, records_file, size):
     for page in every_page(records_file[1]):
         show(app, page, size=size)
         over = app.page.evaluate(
-            """() => [document.documentElement, ...document.querySelectorAll('main, .told, .found, .answer, .bar, .foot')]
+            """() => [document.documentElement, ...document.querySelectorAll('main, .rolls, .told, .found, .answer, .bar, .foot')]
               .filter((one) => one.scrollWidth > one.clientWidth + 1 && getComputedStyle(one).display !== 'none')
               .map((one) => `${one.tagName}.${one.className} ${one.scrollWidth} > ${one.clientWidth}`)"""
         )

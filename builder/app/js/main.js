@@ -4,6 +4,7 @@ import { html } from 'htm/preact';
 import { checkProbes, prepare } from './core/index.js';
 import { askForRoom, openStore, readFile, readRegions, readWords, tablesAtStart, watchVersions } from './store/index.js';
 import { App } from './screens/app.js';
+import { readAhead } from './screens/parts/later.js';
 import { Refusal } from './screens/refusal.js';
 import { closeSite, openById, readAll } from './screens/records.js';
 import { makeRegion } from './screens/region.js';
@@ -66,6 +67,7 @@ async function run() {
   root.replaceChildren();
   render(html`<${App}/>`, root);
   setTimeout(() => prepare(tables.value.pack));
+  readAhead();
   addEventListener('hashchange', () => { follow().catch((fault) => { trouble.value = { code: fault.code ?? 'lost' }; }); });
   // The phone may end the page at any time once it is out of sight.
   addEventListener('visibilitychange', () => { if (document.visibilityState === 'hidden') saved().catch(() => {}); });

@@ -5,15 +5,14 @@ import { t } from './words.js';
 import { region, route, site, spoken } from './state.js';
 import { Patterns } from './parts/patterns.js';
 import { Trouble } from './parts/trouble.js';
-import { Later } from './parts/later.js';
+import { arrivals, Later } from './parts/later.js';
 import { Sites } from './sites.js';
-import { Place } from './place.js';
-import { Plants } from './plants.js';
-import { Zone } from './zone.js';
 
 const here = (name) => (props) => html`<${name} ...${props}/>`;
 const SITE_PAGES = {
-  place: here(Place), plants: here(Plants), zone: here(Zone),
+  place: Later(() => import('./place.js'), 'Place'),
+  plants: Later(() => import('./plants.js'), 'Plants'),
+  zone: Later(() => import('./zone.js'), 'Zone'),
   production: Later(() => import('./production.js'), 'Production'),
   reclaim: Later(() => import('./reclaim.js'), 'Reclaim'),
 };
@@ -31,9 +30,10 @@ export function App() {
   const address = [page, ...parts].join('/');
   useEffect(() => {
     const heading = top.current.querySelector('h1');
-    document.title = t('app.title', { page: heading?.textContent ?? '' });
-    heading?.focus({ preventScroll: true });
-  }, [address]);
+    if (!heading) return;
+    document.title = t('app.title', { page: heading.textContent });
+    heading.focus({ preventScroll: true });
+  }, [address, arrivals.value]);
   return html`<div class="whole" ref=${top}>
     <${Patterns} zones=${region.value.zones}/>
     <${Guarded} address=${address}>${pageFor(page, parts)}</${Guarded}>

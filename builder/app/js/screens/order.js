@@ -27,15 +27,15 @@ export function Order({ stand }) {
   const lots = mix.plants.map(({ id, seeds_m2 }) => ({ id, seeds_m2, seeds_per_g: here.pack.seed_plants[id].seeds_per_g, ...kept.lots[id] }));
   const order = seedOrder({ lots, area_ha: kept.area_ha, base_method: mix.method, method: kept.method, factors: here.pack.seeding_methods ?? { [mix.method]: 1 }, sow_month: kept.sow_month, window_months: windowsOf(here, stand.zone.id).sow_months ?? [], today: record.date, stale_months: here.pack.tag_stale_months });
   const held = order.lines.filter(isHeld).length;
-  return html`<${Frame} tab="reclaim" edge=${false} class="whole-width" title=${t('order.title')} line=${`${record.unit_name || record.name}. ${stand.zone.short}`} back=${back}>
+  const act = html`<div class="act upright"><p class="sum"><span>${t('order.so_far')} ${held > 0 && html`<b class="care small">${t('order.held', { n: held })}</b>`}</span><b>${massWords(order.lines.reduce((all, line) => all + (isHeld(line) ? 0 : line.bulk_kg ?? 0), 0))}</b></p>
+      ${order.may_print ? html`<button type="button" class="btn go" onClick=${() => print()}><${Icon} name="print"/>${t('order.print')}</button>` : html`<p class="small">${t('order.mend', { n: held })}</p>`}</div>`;
+  return html`<${Frame} tab="reclaim" act=${act} edge=${false} class="whole-width" title=${t('order.title')} line=${`${record.unit_name || record.name}. ${stand.zone.short}`} back=${back}>
     <section class="part lead0"><${Stepper} less=${t('order.less')} more=${t('order.more')} onLess=${() => put({ area_ha: Math.max(AREA_STEP_HA, kept.area_ha - AREA_STEP_HA) })} onMore=${() => put({ area_ha: kept.area_ha + AREA_STEP_HA })}>
       <p class="centre"><span class="label">${t('order.area')}</span><b class="mine big">${areaWords(kept.area_ha)}</b></p></${Stepper}>
       <${Choice} label=${t('order.method')} options=${(methods.length ? methods : [mix.method]).map((value) => ({ value, label: t(`method.${value}`) }))} value=${kept.method} onPick=${(method) => put({ method })} row/></section>
     <section class="part"><h2 class="sides">${t('order.bags')}<span class="label">${t('order.to_buy')}</span></h2>
       <ul>${lots.map((lot, i) => html`<${Bag} key=${lot.id} lot=${lot} line=${order.lines[i]} plant=${here.plant.get(lot.id)} onTag=${(tag) => put({ lots: { ...kept.lots, [lot.id]: tag } })}/>`)}</ul>
-      ${order.remarks.map((one) => html`<p key=${one.key} class=${`hint ${one.level === 'refuse' ? 'care' : ''}`}><${Icon} name="warn"/><span>${remarkWords(one)}</span></p>`)}</section>
-    <div class="act upright"><p class="sum"><span>${t('order.so_far')} ${held > 0 && html`<b class="care small">${t('order.held', { n: held })}</b>`}</span><b>${massWords(order.lines.reduce((all, line) => all + (isHeld(line) ? 0 : line.bulk_kg ?? 0), 0))}</b></p>
-      ${order.may_print ? html`<button type="button" class="btn go" onClick=${() => print()}><${Icon} name="print"/>${t('order.print')}</button>` : html`<p class="small">${t('order.mend', { n: held })}</p>`}</div></${Frame}>`;
+      ${order.remarks.map((one) => html`<p key=${one.key} class=${`hint ${one.level === 'refuse' ? 'care' : ''}`}><${Icon} name="warn"/><span>${remarkWords(one)}</span></p>`)}</section></${Frame}>`;
 }
 
 const isHeld = (line) => line.remarks.some((one) => one.level === 'refuse');

@@ -20,7 +20,8 @@ export function Place() {
   const done = open.filter((question) => question.kind === 'state');
   const around = open.filter((question) => question.kind !== 'state');
   const digs = here.questions.filter((question) => question.digs_cm);
-  return html`<${Frame} tab="place" line=${t('place.line', { day: dayName(record.date), role: t(`role.${record.role}`) })}>
+  const act = html`<div class="act"><a class="btn go" href=${`#/site/${record.id}/plants`}><${Icon} name="plants"/>${t(call.value.answers ? 'place.on' : 'place.start')}</a></div>`;
+  return html`<${Frame} tab="place" act=${act} line=${t('place.line', { day: dayName(record.date), role: t(`role.${record.role}`) })}>
     <${Height} region=${here} record=${record}/>
     <section class="part"><h2>${t('place.facing')}</h2><${Wheel} place=${record.place} onPlace=${(place) => change({ place })}/></section>
     <section class="part"><h2>${t('place.damage')}</h2>
@@ -32,7 +33,6 @@ export function Place() {
       <p class="deep"><a class="btn" href="#/book/soil"><${Icon} name="pit"/>${t('feel.title')}</a></p></section>`}
     <${Header} record=${record} region=${here}/>
     <${Photos} record=${record}/>
-    <div class="act"><a class="btn go" href=${`#/site/${record.id}/plants`}><${Icon} name="plants"/>${t(call.value.answers ? 'place.on' : 'place.start')}</a></div>
   </${Frame}>`;
 }
 

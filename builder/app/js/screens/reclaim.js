@@ -24,7 +24,9 @@ export function Reclaim({ parts }) {
   const stand = standing();
   const Sheet = SHEETS[parts[0]];
   if (Sheet && stand) return html`<${Sheet} stand=${stand}/>`;
-  return html`<${Frame} tab="reclaim" edge=${false} class="whole-width" line=${t('reclaim.line')}>
+  const act = stand && html`<div class="act"><button type="button" class="btn icon-only" aria-label=${t('reclaim.print')} onClick=${() => print()}><${Icon} name="print"/></button>
+      <a class="btn go" href=${`#/site/${site.value.id}/reclaim/order`}><${Icon} name="bag"/>${t('order.title')}</a></div>`;
+  return html`<${Frame} tab="reclaim" act=${act} edge=${false} class="whole-width" line=${t('reclaim.line')}>
     <${CalledStrip} stand=${stand}/>${stand && html`<${Notes} zone=${stand.zone}/>`}</${Frame}>`;
 }
 
@@ -42,9 +44,7 @@ function Notes({ zone }) {
     <section class="part"><dl class="notes">${cell ? html`<dt>${t('reclaim.do')}</dt><dd>${cell.do}</dd><dt>${t('reclaim.avoid')}</dt><dd>${cell.avoid}</dd>` : html`<dt>${t('reclaim.do')}</dt><dd class="quiet">${t('reclaim.pick_damage')}</dd>`}
       ${NOTES.filter((name) => notes[name]).map((name) => html`<dt key=${name}>${t(`reclaim.${name}`)}</dt><dd>${notes[name]}</dd>`)}</dl><${Source} what=${t('reclaim.these')} region=${here} keys=${['common practice']}/></section>
     <${Sow} zone=${zone}/><${Weeds} zone=${zone}/><${Life} notes=${notes}/>
-    <section class="part"><p class="small quiet">${t('reclaim.defer')}</p></section>
-    <div class="act"><button type="button" class="btn icon-only" aria-label=${t('reclaim.print')} onClick=${() => print()}><${Icon} name="print"/></button>
-      <a class="btn go" href=${`#/site/${record.id}/reclaim/order`}><${Icon} name="bag"/>${t('order.title')}</a></div>`;
+    <section class="part"><p class="small quiet">${t('reclaim.defer')}</p></section>`;
 }
 
 function Cautions({ notes, zone }) {

@@ -44,8 +44,8 @@ export function findingWords(region, finding) {
 /** A stored height in the person's unit, for a box. @param {number} metres */
 export const heightShown = (metres) => Math.round(units.value === 'us' ? metres / METRES_PER_FOOT : metres);
 
-/** A typed height in metres. @param {number|null} typed */
-export const heightFrom = (typed) => (typed === null ? null : Math.round(units.value === 'us' ? typed * METRES_PER_FOOT : typed));
+/** A typed height in metres, not rounded, so that what was typed comes back. @param {number|null} typed */
+export const heightFrom = (typed) => (typed === null ? null : units.value === 'us' ? typed * METRES_PER_FOOT : typed);
 
 export const heightUnit = () => t(units.value === 'us' ? 'unit.ft_sign' : 'unit.m_sign');
 

@@ -20,7 +20,7 @@ export function Sites() {
   const found = matching(sites.value, wanted);
   return html`<div class="page p-sites">
     <${EdgeShut} belts=${here.belts}/>
-    <main>
+    <main class="acts"><div class="rolls">
       <div class="top"><${Hills}/><${ModeKey}/><h1 tabindex="-1">${t('sites.title')}</h1>
         <p>${t('sites.tables', { region: here.name, edition: here.edition })}<br/>${t('sites.kept', { n: sites.value.length })}</p>
         ${start.value.bookOnly && html`<p class="care">${t('app.probes')}</p>`}
@@ -28,7 +28,7 @@ export function Sites() {
       ${sites.value.length === 0 && html`<${Empty}/>`}
       ${wanted !== null && found.length === 0 && html`<p class="part quiet">${t('sites.none_found', { text: wanted })}</p>`}
       ${byUnit(found).map((unit) => html`<${Unit} key=${unit.key} unit=${unit} region=${here}/>`)}
-      <div class="act">
+      </div><div class="act">
         ${wanted === null
           ? html`<button type="button" class="btn icon-only" aria-label=${t('sites.search')} onClick=${() => want('')}><${Icon} name="find"/></button>`
           : html`<${SearchBox} value=${wanted} onWant=${want}/>`}

@@ -10,9 +10,9 @@ import { Bar } from './bar.js';
 import { EdgeAjar } from './edge_ajar.js';
 import { Foot } from './foot.js';
 
-/** @param {{tab: string, line: string, edge?: boolean, class?: string, back?: string, title?: string, children: unknown}} props
- *  edge: show the belt column (Place and Plants) */
-export function Frame({ tab, line, edge = true, class: shape = '', back = '#/sites', title, children }) {
+/** @param {{tab: string, line: string, edge?: boolean, class?: string, back?: string, title?: string, act?: unknown, children: unknown}} props
+ *  edge: show the belt column (Place and Plants); act: keys that stay under the thumb, below what rolls */
+export function Frame({ tab, line, edge = true, class: shape = '', back = '#/sites', title, act, children }) {
   const here = region.value;
   const record = site.value;
   const two = wide.value;
@@ -20,6 +20,6 @@ export function Frame({ tab, line, edge = true, class: shape = '', back = '#/sit
     <${Bar} title=${title ?? (record.name || t('sites.unnamed'))} line=${line} back=${back}/>
     ${two && html`<aside class="left" aria-label=${t('zone.title')}><${ZonePane}/></aside>`}
     ${!two && edge && html`<aside class="asis" aria-label=${t('edge.label')}><${EdgeAjar} region=${here} call=${call.value} mark=${heightMark(here, record)} href=${`#/site/${record.id}/zone`}/></aside>`}
-    <main class=${shape}>${children}</main>
+    <main class=${`${shape} ${act ? 'acts' : ''}`}>${act ? html`<div class="rolls">${children}</div>${act}` : children}</main>
     <${Foot} current=${tab} siteId=${record.id}/></div>`;
 }
