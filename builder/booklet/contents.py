@@ -12,10 +12,9 @@ from builder.booklet.style import A6, Trim
 from builder.drawings.ink import PRINT, rect, svg
 from builder.drawings.rule import cm_rule, inch_rule
 from builder.drawings.slope import contours, strata
-from builder.tables import Region
 from builder.views import grounds, plants
 from builder.views.look import Look
-from builder.views.phrases import Phrases, phrases
+from builder.views.phrases import FIRST, Phrases, phrases
 from builder.views.quick import Table, quick_tables
 from builder.views.zones import ZoneView, zone_views
 
@@ -95,6 +94,7 @@ class BookletView:
 
     words: "Words"
     language: str
+    notes_language: str
     title: str
     cover: Cover
     about: tuple[str, ...]
@@ -162,6 +162,7 @@ def booklet_view(
     return BookletView(
         words=Words(own),
         language=look.phrases.language,
+        notes_language=FIRST,
         title=own.say("title", region=region.name),
         cover=cover(look, trim, own),
         about=about(look, own, mark),
@@ -284,13 +285,17 @@ def about(look: Look, own: Phrases, mark: str) -> tuple[str, ...]:
     region = look.region
     demo, every = grounds.demo_share(look)
     lines = [
-        own.say("about.edition", edition=region.edition, date=region.date, hash=mark),
-        own.say("about.same_mark"),
+        own.say("about.edition", edition=region.edition, date=region.date),
         own.say("about.answers_for", name=region.head.answers_for),
     ]
+    if mark:
+        lines.insert(1, own.say("about.same_mark", hash=mark))
     if region.invented:
         lines.append(own.say("about.invented"))
     lines.append(own.say("about.demo", demo=demo, all=every))
+    words = region.words.get(look.phrases.language)
+    if words is not None and words.reviewed_by is None and own.say("about.unreviewed"):
+        lines.append(own.say("about.unreviewed"))
     if region.head.address:
         lines.append(own.say("about.app", address=region.head.address))
     return tuple(lines)
@@ -389,8 +394,3 @@ def form_view(look: Look, own: Phrases) -> FormView:
         plant_rows=tuple(str(number) for number in range(1, FORM_PLANTS + 1)),
         clip_rows=tuple(str(number) for number in range(1, FORM_CLIPS + 1)),
     )
-
-
-def mark_of(region: Region) -> str:
-    """A short mark of the tables, until a pack is at hand: edition and date."""
-    return f"{region.id}-{region.edition}"
