@@ -163,3 +163,23 @@ def test_a_pit_felt_by_hand_holds_its_water_and_the_year_takes_it(app):
 def test_the_sheets_keep_nobody_out(app, page):
     show(app, f"site/{SAGE}/{page}")
     assert faults(app, AXE.read_text("utf-8")) == []
+
+
+def test_what_was_typed_in_feet_and_pounds_stays_as_typed(app):
+    """6,233 ft is 1,899.8 m: rounded to the metre it would come back as 6,234."""
+    show(app, "setup")
+    app.page.get_by_role("button", name="Feet, pounds, acres").click()
+    for feet in ("6233", "6237", "9998"):
+        show(app, f"site/{SAGE}/place")
+        field = app.page.get_by_label("Or type it")
+        field.fill(feet)
+        field.blur()
+        show(app, f"site/{SAGE}/plants")
+        show(app, f"site/{SAGE}/place")
+        assert field.input_value().replace(",", "") == feet
+    show(app, f"site/{SAGE}/production")
+    assert "lb/ac" in app.page.locator("main").inner_text()
+    assert "443 yours" in app.page.locator("main").inner_text()
+    show(app, "setup")
+    app.page.get_by_role("button", name="Metric").click()
+    assert app.errors == []
