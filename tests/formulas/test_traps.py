@@ -49,7 +49,7 @@ def test_the_square_term_of_field_capacity_is_1_283():
 
 
 def test_every_coefficient_of_the_water_equations():
-    """Equations 1 to 5 written out once more, from the paper's list, at four soils."""
+    """Equations 1 to 5 (SOILW-09) written out once more, from the paper's list, at four soils."""
     for sand, clay, om in ((88, 5, 2.5), (20, 20, 0.5), (10, 35, 4), (25, 50, 8)):
         s, c = sand / 100, clay / 100
         t15 = -0.024 * s + 0.487 * c + 0.006 * om + 0.005 * s * om - 0.013 * c * om
@@ -119,7 +119,7 @@ def test_slope_enters_in_degrees_and_the_folds_are_two():
 
 
 def test_every_coefficient_of_heat_load_and_radiation():
-    """Equations 1 to 3 at points where single terms stand alone."""
+    """Equations 1 to 3 (HEAT-01, HEAT-10) at points where single terms stand alone."""
     r = math.radians
     lat, slope = 45.0, 30.0
     flat = 0.339 + 0.808 * math.cos(r(lat))
