@@ -6,6 +6,7 @@ import json
 from pathlib import Path
 
 from builder.checks.manual import checks_page
+from builder.records.schema import site_check_schema
 from builder.steps.checking import check_regions
 from builder.steps.notes import regions_in
 from builder.tables.manual import tables_page
@@ -21,7 +22,7 @@ def write_docs(keydata: Path, docs: Path) -> list[Path]:
         "checks.md": checks_page(),
         "sources.md": sources_page([one.region for one in checked if one.region is not None]),
     }
-    for name, schema in json_schemas().items():
+    for name, schema in {**json_schemas(), "site_check": site_check_schema()}.items():
         pages[f"schemas/{name}.json"] = json.dumps(schema, indent=1, ensure_ascii=False) + "\n"
     written = []
     for name, text in pages.items():

@@ -14,6 +14,8 @@ const DAY = /^\d{4}-\d{2}-\d{2}$/;
 const MOMENT = /^\d{4}-\d{2}-\d{2}T\d{2}:\d{2}:\d{2}(\.\d+)?(Z|[+-]\d{2}:\d{2})$/;
 // Control characters and marks that turn the direction of text can hide what a line says.
 const UNSEEN = /[\u0000-\u0008\u000b\u000c\u000e-\u001f\u007f\u202a-\u202e\u2066-\u2069]/g;
+// Half a character can neither be sent nor stored elsewhere.
+const LONE = /\p{Surrogate}/gu;
 const ROLES = ['edge', 'inside', 'reference', 'duplicate'];
 const STATES = ['found', 'not_found', 'cant_tell'];
 const FORMAT = 1;
@@ -179,4 +181,4 @@ const isObjectOrNull = (v) => v === null || isObject(v);
 const isText = (v) => typeof v === 'string';
 const isFlag = (v) => typeof v === 'boolean';
 const isMoment = (v) => isText(v) && MOMENT.test(v);
-const text = (v, longest) => v.replace(UNSEEN, '').slice(0, longest);
+const text = (v, longest) => v.replace(UNSEEN, '').slice(0, longest).replace(LONE, '');

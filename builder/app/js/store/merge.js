@@ -18,8 +18,8 @@ export function standing(mine, theirs) {
   const a = mine.edits ?? {};
   const b = theirs.edits ?? {};
   const devices = [...Object.keys(a), ...Object.keys(b)];
-  const ahead = devices.some((device) => (a[device] ?? 0) > (b[device] ?? 0));
-  const behind = devices.some((device) => (b[device] ?? 0) > (a[device] ?? 0));
+  const ahead = devices.some((device) => countOf(a, device) > countOf(b, device));
+  const behind = devices.some((device) => countOf(b, device) > countOf(a, device));
   if (ahead !== behind) return ahead ? 'mine' : 'theirs';
   if (devices.length === 0 && mine.revision !== theirs.revision) {
     return mine.revision > theirs.revision ? 'mine' : 'theirs';
@@ -37,8 +37,8 @@ export function standing(mine, theirs) {
  */
 export function settled(chosen, other, device) {
   const edits = { ...chosen.edits };
-  for (const [name, n] of Object.entries(other.edits ?? {})) edits[name] = Math.max(edits[name] ?? 0, n);
-  edits[device] = (edits[device] ?? 0) + 1;
+  for (const [name, n] of Object.entries(other.edits ?? {})) edits[name] = Math.max(countOf(edits, name), n);
+  edits[device] = countOf(edits, device) + 1;
   return { ...chosen, edits, revision: Math.max(sum(edits), chosen.revision + 1, other.revision + 1) };
 }
 
@@ -54,6 +54,8 @@ export function nextVersion(site, device, changed_at) {
   return { ...site, edits, revision: site.revision + 1, changed_at };
 }
 
+// A device may be named like something every object has.
+const countOf = (edits, device) => (Object.hasOwn(edits, device) ? edits[device] : 0);
 const sum = (edits) => Object.values(edits).reduce((total, n) => total + n, 0);
 
 /** One text per content: keys sorted, nothing left out. @param {unknown} value */
