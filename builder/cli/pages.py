@@ -74,13 +74,14 @@ def copied_demo(keydata: Path) -> list[Path]:
 
 
 def run_desk(given: argparse.Namespace) -> int:
-    """Serves the desk until Ctrl-C."""
+    """Serves the desk until Ctrl-C. The app opens on the first region: for a demo, the fullest."""
     from builder.desk.opening import CannotOpen, open_desk
     from builder.steps.notes import is_current, regions_in
 
     waiting: list[Path] = []
     if given.demo:
         waiting = regions_in(Path("keydata")) or copied_demo(Path("keydata"))
+        waiting.sort(key=lambda folder: -(folder / "plants.yaml").stat().st_size)
         if all(is_current(folder, given.out) for folder in waiting):
             waiting = []
         else:

@@ -62,7 +62,7 @@ def built_view(look: Look) -> BuiltView:
     if note is None or not app.is_file():
         return BuiltView(False, say["never"], "", "")
     booklet = out / "regions" / look.id / "booklet.pdf"
-    links = [OutLink(say["open_app"], url_for("field.send", name="") + f"#/{look.id}")]
+    links = [OutLink(say["open_app"], url_for("field.send", name=""))]
     booklet_href = ""
     if booklet.is_file():
         booklet_href = url_for("field.send", name=f"regions/{look.id}/booklet.pdf")
@@ -107,7 +107,7 @@ def build(region_id: str) -> BaseResponse:
         return redirect(url_for("build.show", region_id=region_id))
     others = [name for name in shelf().ids() if name != region_id and not shelf().look(name).stops]
     keydata: Path = current_app.config["KEYDATA"]
-    folders = [str(keydata / name) for name in sorted([region_id, *others])]
+    folders = [str(keydata / name) for name in [region_id, *others]]
     try:
         out = str(current_app.config["OUT"])
         jobs().start("build", region_id, ["build", *folders, "--out", out])

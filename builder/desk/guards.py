@@ -96,7 +96,7 @@ def ask_for_login(app: Flask) -> BaseResponse | None:
 
 def policy(path: str) -> str:
     """The content policy of an address: the app's own for the app, the desk's for all else."""
-    if path == SINGLE_FILE:
+    if path == SINGLE_FILE or path.endswith(".pdf"):  # browsers show a PDF with parts of their own
         return FRAME
     if path.startswith("/field/"):
         return f"{app_policy()}; {FRAME}"

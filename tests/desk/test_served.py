@@ -76,6 +76,12 @@ def test_nothing_beside_the_built_site_is_served(app, client, name):
     assert b"secret" not in answer.data
 
 
+def test_a_pdf_is_shown_by_the_browsers_own_parts(app, client):
+    put(app, "regions/demo/booklet.pdf", "%PDF-")
+    policy = client.get("/field/regions/demo/booklet.pdf").headers["Content-Security-Policy"]
+    assert policy == "frame-ancestors 'self'"
+
+
 def test_the_app_may_use_camera_and_position_and_the_desk_not(app, client):
     put(app, "index.html", "x")
     assert "geolocation=(self)" in client.get("/field/").headers["Permissions-Policy"]
