@@ -115,19 +115,24 @@ def amplitude(
     width: float = 40,
     height: float = 5,
 ) -> str:
-    """A strip of the belts with a bar over each that holds the plant, as tall as its constancy."""
+    """A strip of the belts: the colour of each that holds the plant, a bar as tall as constancy."""
     columns = Columns(belts, width)
     foot = height - 0.9
-    bars, parts = "", []
+    slope = sum(not belt.lens for belt in belts)
+    line = f"M0 {num(height - 0.1)}H{num(slope * columns.step)}"
+    if slope < len(belts):
+        line += f"M{num(columns.left(slope))} {num(height - 0.1)}H{num(width)}"
+    bars, parts = "", [path(line, palette.line, 0.2)]
     for place, belt in enumerate(belts):
-        x = columns.left(place)
+        if shares[place] <= 0:
+            continue
+        x, tall = columns.left(place), max(0.3, (foot - 0.2) * shares[place])
         fill = belt.colour if palette.inline else belt.on_screen_colour()
         parts.append(rect(x, foot, columns.step, 0.9, f'fill="{fill}"'))
-        if shares[place] > 0:
-            tall = max(0.3, (foot - 0.2) * shares[place])
-            bars += (
-                f"M{num(x + columns.step * 0.2)} {num(foot - 0.15)}v{num(-tall)}"
-                f"h{num(columns.step * 0.6)}v{num(tall)}z"
-            )
-    parts.append(f'<path d="{bars}" fill="{palette.ink}"/>' if bars else "")
+        bars += (
+            f"M{num(x + columns.step * 0.2)} {num(foot - 0.15)}v{num(-tall)}"
+            f"h{num(columns.step * 0.6)}v{num(tall)}z"
+        )
+    if bars:
+        parts.append(f'<path d="{bars}" fill="{palette.ink}"/>')
     return svg(width, height, title, "".join(parts), palette, "amplitude")

@@ -2,6 +2,8 @@
 
 import re
 import subprocess
+import sys
+from dataclasses import replace
 from functools import cache
 from pathlib import Path
 from tempfile import mkdtemp
@@ -11,12 +13,17 @@ import pytest
 from helpers import three_zone_files, write_region
 
 from builder.booklet import BookletError, make, write_booklet
+from builder.booklet.contents import WORDS
 from builder.booklet.fonts import MissingCharactersError, covered, refuse_uncovered
+from builder.booklet.keying import grown
 from builder.booklet.make import environment
 from builder.booklet.render import Press, RendererError, written
+from builder.booklet.samples import write_samples
 from builder.booklet.style import A6, POCKET_US, tab_box
+from builder.rows import plain, read_yaml
 from builder.tables import load_region
 from builder.views import look
+from builder.views.phrases import FOLDER
 
 MM = 72 / 25.4
 TEMPLATES = Path(make.__file__).parent / "templates"
@@ -198,3 +205,61 @@ def test_no_template_sets_a_space_before_an_inline_part():
     assert len(list(TEMPLATES.glob("*.html"))) > 10
     assert found == []
     assert INLINE.search("<p>{{ line }} <b>x</b></p>")
+
+
+def test_the_accessibility_checker_finds_no_error():
+    """outloud checks PDF/UA-1 (ISO 14289-1) by the Matterhorn protocol."""
+    checker = Path(sys.executable).with_name("outloud")
+    done = subprocess.run(
+        [str(checker), "--fail-on", "error", str(made().path)], capture_output=True, text=True
+    )
+    assert done.returncode == 0, done.stdout[-3000:]
+
+
+def test_the_key_stands_with_its_own_hit_rate_and_the_pages_it_names():
+    first = made().anchors["key"]
+    text = "".join(words(number) for number in range(first, made().anchors["card"] + 1))
+    tested = grown(region()).tested
+    assert 0 < tested.key <= 1
+    assert f"right {round(tested.key * 100)} times in 100" in " ".join(text.split())
+    assert "Not tested on real plots" in " ".join(text.split())
+    for zone in region().zones:
+        assert re.search(rf"\b{made().anchors[f'zone-{zone.id}']}\b", text), zone.id
+
+
+def test_a_region_with_an_address_gets_a_code_and_one_without_none(tmp_path):
+    assert region().head.address is None
+    assert "signal" not in words(made().anchors["about"])
+    head = replace(region().head, address="https://example.org/beltbook/")
+    coded = write_booklet(replace(region(), head=head), tmp_path / "coded.pdf")
+    command = ["pdftotext", "-f", "2", "-l", "2", str(coded.path), "-"]
+    done = subprocess.run(command, capture_output=True, text=True, check=True)
+    assert "https://example.org/beltbook/" in "".join(done.stdout.split())
+
+
+def test_six_typical_pages_become_pictures(tmp_path):
+    found = write_samples(made().path, made().anchors, tmp_path)
+    assert len(found) == 6
+    assert all(path.read_bytes().startswith(b"\x89PNG") for path in found)
+
+
+def test_the_booklet_can_be_made_in_spanish(tmp_path):
+    done = write_booklet(region(), tmp_path / "es.pdf", language="es")
+    with pikepdf.open(done.path) as pdf:
+        assert str(pdf.Root.Lang) == "es"
+    text = subprocess.run(
+        ["pdftotext", str(done.path), "-"], capture_output=True, text=True, check=True
+    ).stdout
+    assert "Antes de tocar nada" in text
+
+
+def test_spanish_holds_no_name_that_english_lacks():
+    def names(tree, above=""):
+        for name, below in tree.items():
+            path = f"{above}{name}"
+            yield from names(below, f"{path}.") if isinstance(below, dict) else [path]
+
+    for folder in (WORDS, FOLDER):
+        trees = {path.stem: set(names(plain(read_yaml(path)[0]))) for path in folder.glob("*.yaml")}
+        assert trees["es"] <= trees["en"], trees["es"] - trees["en"]
+        assert len(trees["es"]) > 0.9 * len(trees["en"])
