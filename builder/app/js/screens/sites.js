@@ -63,8 +63,13 @@ function Row({ row, region: here }) {
   };
   return html`<li><a class="site" href=${`#/site/${row.id}/zone`} onClick=${open}>
     <${EdgeMini} region=${here} belief=${call?.answers ? call.belief : null}/>
-    <span class="what"><b>${row.name || t('sites.unnamed')}</b><span>${row.unit_id ? t('sites.line', { role: t(`role.${row.role}`), verdict: verdictLine(here, call), day: dayName(row.date) }) : verdictLine(here, call)}</span></span>
+    <span class="what"><b>${row.name || t('sites.unnamed')}</b><span>${rowWords(here, row, call)}</span></span>
     <${VerdictTab} call=${call?.answers ? call : null} zones=${here.zone}/></a></li>`;
+}
+
+function rowWords(here, row, call) {
+  const verdict = row.region_id === here.id ? verdictLine(here, call) : t('sites.elsewhere');
+  return row.unit_id ? t('sites.line', { role: t(`role.${row.role}`), verdict, day: dayName(row.date) }) : verdict;
 }
 
 /** One line for a verdict: "Mountain sage, about 9 in 10". */
