@@ -31,6 +31,11 @@ def add_commands(commands: Any) -> None:
         help="tables that name the plants; without it those in keydata/",
     )
     records.add_argument("--names", action="store_true", help="observers in full, not initials")
+    records.add_argument(
+        "--rescore",
+        action="store_true",
+        help="score each record again under the tables that scored it, and tell what differs",
+    )
     records.set_defaults(run=run_records)
 
 
@@ -41,7 +46,9 @@ def run_records(given: argparse.Namespace) -> int:
     from builder.steps.notes import regions_in
 
     folders = given.region if given.region is not None else regions_in(KEYDATA)
-    made = export_files(given.files, given.out, given.format, folders, given.names)
+    made = export_files(
+        given.files, given.out, given.format, folders, given.names, rescoring=given.rescore
+    )
     for sentence in made.told:
         say(f"note: {sentence}")
     words = read_sentences()["told"]["written"]["one" if made.sites == 1 else "many"]

@@ -20,9 +20,11 @@ from builder.records.flat import write_csv
 from builder.records.geojson import write_geojson
 from builder.records.known import Knowledge, known_of
 from builder.records.report import write_report
+from builder.records.rescoring import rescore, rescored_said
 from builder.records.sentences import FileRefused, read_sentences
 from builder.steps.checking import check_regions, region_of
 from builder.steps.refusals import ToldByStep
+from builder.steps.rescoring import packs_at_hand
 
 FORMS = ("json", "csv", "geojson", "dwca", "report")
 
@@ -40,13 +42,19 @@ class NotRead(ToldByStep):
 
 
 def export_files(
-    files: Sequence[Path], out: Path, form: str, regions: Sequence[Path], names: bool = False
+    files: Sequence[Path],
+    out: Path,
+    form: str,
+    regions: Sequence[Path],
+    names: bool = False,
+    rescoring: bool = False,
 ) -> Exported:
     """Reads files of records, merges them by id and revision and writes one, whole or not at all.
 
     form     one of FORMS
     regions  folders of the tables that name plants and say which are sensitive
     names    observers in full, else as initials
+    rescoring  also tell what each record's own tables say of it now
 
     Raises NotRead when a file is refused or none holds a record, Stopped when tables have errors.
     """
@@ -63,7 +71,18 @@ def export_files(
     if form != "json":
         unknown = read_sentences()["told"]["unknown"]
         told += [unknown.format(region=name) for name in knowledge.unknown(records.sites)]
+    if rescoring:
+        told += _rescored(records, regions)
     return Exported(len(records.sites), told)
+
+
+def _rescored(records: Records, regions: Sequence[Path]) -> list[str]:
+    packs = packs_at_hand(regions, {site["pack_hash"] for site in records.sites})
+    made = [(site["id"], rescore(site, packs)) for site in records.sites]
+    same = sum(one.state == "same" for _, one in made)
+    words = read_sentences()["rescored"]["same"]["one" if same == 1 else "many"]
+    told = [sentence for site_id, one in made for sentence in rescored_said(one, site_id)]
+    return [*told, words.format(n=same)]
 
 
 def written(records: Records, form: str, knowledge: Knowledge, names: bool) -> bytes:
