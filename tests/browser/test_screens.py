@@ -294,6 +294,27 @@ def test_each_verdict_opens_the_edge_in_its_own_way(app, records_file):
     assert seen["thin"][".even"] == 12
 
 
+def test_three_looks_are_read_together_and_kept(app, records_file):
+    edge = records_file[1]["edge"]
+    page = app.page
+    for way in ("Look 50 m up", "50 m down"):
+        show(app, f"site/{edge}/zone")
+        page.get_by_role("button", name=way).click()
+        page.locator("input[type=search]").wait_for()
+        page.locator("input[type=search]").fill("muttongrass")
+        page.locator(".found a[href$='poa_fendleriana']").click()
+        page.locator(".covers button").nth(2).click()
+        page.locator("input[type=search]").wait_for()
+    show(app, f"site/{edge}/zone")
+    page.get_by_role("button", name="Changing within 50 m").click()
+    said = page.locator(".three .verdict").inner_text()
+    page.get_by_role("button", name="Keep what three looks say").click()
+    page.locator(".three .kept").wait_for()
+    show(app, "sites")
+    row = page.locator(f"a.site[href*='{edge}']").inner_text()
+    assert said.replace("\n", " ") in row.replace("\n", " ")
+
+
 def test_belief_says_that_no_real_plot_tested_it(app, records_file):
     for verdict in ("zone", "edge", "mosaic", "misfit"):
         show(app, f"site/{records_file[1][verdict]}/zone")

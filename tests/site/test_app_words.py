@@ -1,4 +1,4 @@
-"""The words of the screens: every key asked for is there, and each language says the same things."""
+"""The words of the screens: every key asked for is there, each language says the same things."""
 
 import re
 

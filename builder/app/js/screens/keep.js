@@ -14,8 +14,14 @@ export function keptCall(answer) {
   return { ...Object.fromEntries(KEPT.map((key) => [key, answer[key]])), kept_at: stamp() };
 }
 
+/** What three looks together say, kept over the one look's own answer and reasons. */
+export function keptOfThree(answer, three) {
+  return { ...keptCall(answer), ...three, looks: 3 };
+}
+
 /** True where the answers given since still lead to the kept call. */
 function stands(kept, answer) {
+  if (kept.looks === 3) return kept.answers === answer.answers;
   return kept.verdict === answer.verdict && kept.zone_id === answer.zone_id && kept.answers === answer.answers && kept.belief[kept.zone_id] === answer.belief[kept.zone_id];
 }
 

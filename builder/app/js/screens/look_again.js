@@ -2,7 +2,8 @@
 import { html } from 'htm/preact';
 import { callThree } from '../core/index.js';
 import { t } from './words.js';
-import { change, region, site, sites } from './state.js';
+import { call, change, region, say, site, sites } from './state.js';
+import { keptOfThree } from './keep.js';
 import { startSpot } from './records.js';
 import { verdictLine } from './sites.js';
 import { Choice } from './parts/choice.js';
@@ -30,5 +31,11 @@ export function LookAgain() {
 
 function Together({ record, spots }) {
   const three = callThree(region.value.pack, record, spots[0], spots[1], record.stand ?? null);
-  return html`<div class="three"><p class="label">${t('again.together')}</p><p class="verdict">${verdictLine(region.value, { ...three, answers: 1 })}</p></div>`;
+  const kept = record.call?.looks === 3 && record.call.verdict === three.verdict && record.call.zone_id === three.zone_id;
+  const keep = () => {
+    change({ call: keptOfThree(call.value, three), overruled: null }, t('undo.kept'));
+    say(t('keep.done'));
+  };
+  return html`<div class="three"><p class="label">${t('again.together')}</p><p class="verdict">${verdictLine(region.value, { ...three, answers: 1 })}</p>
+    <div class="deep">${kept ? html`<span class="kept"><${Icon} name="check"/>${t('keep.is_kept')}</span>` : html`<button type="button" class="btn go" onClick=${keep}>${t('again.keep')}</button>`}</div></div>`;
 }

@@ -77,9 +77,11 @@ export async function dropSite(id) {
 
 const calls = new WeakMap();
 
-/** The call of a listed record, scored once for each stored version. */
+/** The call of a listed record, scored once for each stored version; one of three looks, or under
+ *  other tables, as it was kept. */
 export function rowCall(here, row) {
-  if (!calls.has(row)) calls.set(row, row.pack_hash === tables.value.hash ? callOf(here.pack, row) : row.call);
+  const kept = row.call?.looks === 3 || row.pack_hash !== tables.value.hash;
+  if (!calls.has(row)) calls.set(row, kept ? row.call : callOf(here.pack, row));
   return calls.get(row);
 }
 

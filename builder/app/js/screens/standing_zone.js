@@ -15,7 +15,9 @@ export function standing() {
     const zone = here.zone.get(record.overruled.zone_id);
     return { zone, weights: new Map([[zone.id, 1]]), share: 1, own: true };
   }
-  const answer = call.value;
+  // Three looks together outweigh the one, as long as its answers are the same.
+  const kept = record.call;
+  const answer = kept?.looks === 3 && kept.answers === call.value.answers ? kept : call.value;
   if (answer.answers === 0 || answer.verdict === 'thin') return null;
   const weights = record.patches && answer.verdict === 'mosaic'
     ? new Map(Object.entries(record.patches).map(([id, pct]) => [id, pct / 100]))
