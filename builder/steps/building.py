@@ -4,13 +4,13 @@ from __future__ import annotations
 
 import hashlib
 from collections.abc import Callable, Sequence
-from dataclasses import dataclass
+from dataclasses import dataclass, replace
 from datetime import datetime
 from pathlib import Path
 
 from builder.booklet import write_booklet
 from builder.pack import pack_bytes, texts_bytes
-from builder.problems import cautions
+from builder.problems import ERROR, cautions
 from builder.site import SiteRegion, SiteReport, build_site
 from builder.site.book import book_pages
 from builder.steps.checking import Checked, check_regions, region_of
@@ -24,8 +24,12 @@ from builder.steps.notes import (
     remember,
     tables_hash,
 )
+from builder.steps.refusals import Stopped
 
 ENGLISH = "en"
+WHOLE = "complete"
+"""The check that tells of tables a region fitted to plots does not have yet: it can be called and
+proved, but pages would be empty."""
 Progress = Callable[[int, int, str], None]
 
 
@@ -49,6 +53,9 @@ def build(folders: Sequence[Path], out: Path, progress: Progress, booklets: bool
     of = 2 + len(folders) * (2 if booklets else 1)
     progress(0, of, "checking tables")
     checked = check_regions(folders)
+    unwritten = [problem for one in checked for problem in one.problems if problem.check == WHOLE]
+    if unwritten:
+        raise Stopped([replace(problem, severity=ERROR) for problem in unwritten])
     with only_builder(out):
         packed = []
         for done, one in enumerate(checked, start=1):
