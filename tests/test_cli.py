@@ -51,6 +51,12 @@ def test_check_prints_every_problem_with_line_and_place(region, capsys):
         ["call", "keydata/willow_breaks", "plots.csv", "--out", "c.csv", "--answers", "0"],
         ["call", "keydata/willow_breaks", "plots.csv", "--out", "c.csv", "--disturbance", "flood"],
         ["call", "keydata/willow_breaks", "keydata", "--out", "c.csv"],
+        ["booklet", "keydata/willow_breaks", "--out", "b.pdf", "--format", "a7"],
+        ["booklet", "keydata/willow_breaks", "--out", "b.pdf", "--zones", "moon"],
+        ["booklet", "keydata/willow_breaks", "--out", "b.pdf", "--language", "xx"],
+        ["records", "plots.csv", "--out", "c.csv"],
+        ["records", "no_such_file.json", "--out", "c.csv"],
+        ["prove", "keydata/willow_breaks", "--plots", "plots.csv"],
         ["start", "keydata/willow_breaks"],
         ["start", "keydata/Not An Id"],
         ["desk", "--open", "0.0.0.0"],
@@ -161,3 +167,10 @@ def test_fit_takes_zones_by_option_and_calls_them_as_the_plots_did(region, capsy
     told = dict(line.split(",") for line in zones)
     assert set(called.values()) == {"zone_id", *own}
     assert sum(called[plot] == told[plot] for plot in told) == len(told)
+
+
+def test_a_booklet_of_one_zone_is_made_for_folding(region, capsys):
+    arguments = ["booklet", "keydata/willow_breaks", "--out", "fold.pdf", "--zones", "A"]
+    assert main([*arguments, "--format", "a4-sheets"]) == 0
+    assert (region.parent.parent / "fold.pdf").read_bytes().startswith(b"%PDF-")
+    assert "fold.pdf: " in capsys.readouterr().out

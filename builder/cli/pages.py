@@ -22,6 +22,19 @@ def add_commands(commands: Any) -> None:
     build.add_argument("--no-booklet", action="store_true", help="leave the booklets as they are")
     build.set_defaults(run=run_build)
 
+    booklet = commands.add_parser("booklet", help="make one booklet, in any of its forms")
+    booklet.add_argument("region", type=Path, help="folder of tables")
+    booklet.add_argument("--out", type=Path, required=True, help="PDF to write")
+    booklet.add_argument(
+        "--format",
+        default="a6",
+        metavar="FORM",
+        help="a6, pocket-us, or a4- or letter- with sheets, stacks, single or cards",
+    )
+    booklet.add_argument("--zones", nargs="+", metavar="ZONE", help="only these, by id or letter")
+    booklet.add_argument("--language", default="en", metavar="TAG", help="en, es")
+    booklet.set_defaults(run=run_booklet)
+
     desk = commands.add_parser(
         "desk", help="edit, prove and build in the browser, on this computer"
     )
@@ -43,6 +56,22 @@ def add_commands(commands: Any) -> None:
 def run_build(given: argparse.Namespace) -> int:
     """Checks, compiles and writes."""
     make(given.region, given.out, booklets=not given.no_booklet)
+    return 0
+
+
+def run_booklet(given: argparse.Namespace) -> int:
+    """Makes one PDF."""
+    from builder.steps.booklets import make_booklet
+
+    made = make_booklet(
+        given.region,
+        given.out,
+        form=given.format,
+        zones=given.zones,
+        language=given.language,
+        tell=lambda stage, done, of: say_step(done, max(of, done), stage),
+    )
+    say(f"{made.path}: {made.pages} pages")
     return 0
 
 
