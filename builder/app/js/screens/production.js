@@ -59,6 +59,6 @@ function Expected({ stand, record }) {
       <p class="small quiet">${t('production.counted', { counted: own.counted })} ${t('production.not_forage')}</p>
       <${Source} what=${t('production.these')} region=${here} keys=${[own.source]}/></section>
     <${Rain} record=${record} own=${own}/><${Measured} record=${record} zone=${stand.zone}/>
-    <section class="part"><a class="btn" href=${`#/site/${record.id}/production/cover`}>${t('points.title')}</a> <a class="btn" href=${`#/site/${record.id}/production/pit`}>${t('pit.title')}</a></section>
+    <section class="part"><p class="deep"><a class="btn" href=${`#/site/${record.id}/production/cover`}>${t('points.title')}</a> <a class="btn" href=${`#/site/${record.id}/production/pit`}>${t('pit.title')}</a></p></section>
     <${Missed} zone=${stand.zone} record=${record}/><${SiteYear} zone=${stand.zone} record=${record}/>`;
 }

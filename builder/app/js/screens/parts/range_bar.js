@@ -15,7 +15,9 @@ export function RangeBar({ zone, range, normal, middle, measured }) {
   const at = (kg_ha) => LEFT + (yieldShown(kg_ha) / top) * W;
   const ticks = Array.from({ length: Math.floor(top / step) + 1 }, (_, i) => i * step);
   const [low, high] = range.map(at);
-  return html`<svg class="chart" viewBox="0 0 358 196" role="img" aria-label=${spoken(range, measured)}>
+  // Without a pin flag or a ghost the sky above the bar is left out.
+  const sky = measured ? 0 : 48;
+  return html`<svg class="chart" viewBox=${`0 ${sky} 358 ${196 - sky}`} role="img" aria-label=${spoken(range, measured)}>
     ${normal && html`<rect class="ghost" x=${at(normal[0])} y="58" width=${at(normal[1]) - at(normal[0])} height="16"/><text class="tick halo" x=${Math.min(at(normal[1]) + 8, 300)} y=${at(normal[1]) > 292 ? 52 : 71}>${t('production.normal')}</text>`}
     <rect class="band" x=${low} y="84" width=${high - low} height="44" fill=${`url(#p-${zone.letter})`}/>
     ${middle !== null && html`<path class="midline" d=${`M${at(middle)} 78v56`}/><text class="tick" x=${at(middle)} y="72" text-anchor="middle">${number(yieldShown(middle))}</text>`}
