@@ -7,15 +7,11 @@ from markupsafe import Markup
 
 from builder.drawings.bars import constancy_bar, range_bar
 from builder.drawings.slope import heights
-from builder.drawings.year import months, year
-from builder.formulas.seeding import pls_kg_ha
-from builder.formulas.soil_water import profile_water
-from builder.formulas.texture import texture_class
-from builder.formulas.year import SiteYear, site_year
-from builder.tables import Plant, Record, Zone
-from builder.tables.shape import columns
-from builder.views.figures import MINUS
+from builder.drawings.year import months
+from builder.tables import Plant, Zone
 from builder.views.look import Look
+from builder.views.mixes import MixView, mix_view
+from builder.views.seasons import soil_of, year_of
 
 PLANTS_SHOWN = 12
 WEEDS_SHOWN = 12
@@ -68,38 +64,6 @@ class Damage:
 
 
 @dataclass(frozen=True)
-class MixRow:
-    """One plant of a mix."""
-
-    name: str
-    seeds: str
-    weight: str
-
-
-@dataclass(frozen=True)
-class MixView:
-    """A zone's seed mix."""
-
-    method: str
-    rows: tuple[MixRow, ...]
-    total_seeds: str
-    total_weight: str
-    seeds_head: str
-    weight_head: str
-    other_method: str
-    planted: tuple[str, ...]
-    none: bool
-
-    @property
-    def pairs(self) -> tuple[tuple[MixRow, ...], ...]:
-        """The rows two abreast, read down the first column and then the second."""
-        half = (len(self.rows) + 1) // 2
-        blank = MixRow("", "", "")
-        second = (*self.rows[half:], blank)[:half]
-        return tuple(zip(self.rows[:half], second, strict=True))
-
-
-@dataclass(frozen=True)
 class ZoneView:
     """Everything the pages say about one zone."""
 
@@ -142,7 +106,7 @@ def zone_view(look: Look, zone_id: str) -> ZoneView:
     notes = look.region.reclaim.zones[zone_id]
     rows = plant_rows(look, zone_id)
     growth, growth_rule = _growth(look, zone)
-    year_picture, year_line = _year(look, zone)
+    year_picture, year_line = year_of(look, zone)
     strip, strip_line = _months(look, zone)
     return ZoneView(
         id=zone.id,
@@ -175,7 +139,7 @@ def zone_view(look: Look, zone_id: str) -> ZoneView:
         year=year_picture,
         year_line=year_line,
         rain_unit=look.figures.rain_unit,
-        soil=_soil(look, zone_id),
+        soil=soil_of(look, zone_id),
         after=(
             Line(say("zone.remnants"), zone.remnant_clues),
             Line(say("zone.absence"), zone.what_absence_means),
@@ -308,93 +272,6 @@ def _growth(look: Look, zone: Zone) -> tuple[Markup, str]:
     return look.show(drawing), " ".join(parts)
 
 
-def zone_year(look: Look, zone_id: str) -> SiteYear:
-    """The year at the zone's own height, from its climate and soil."""
-    normals = look.region.climate[zone_id]
-    return site_year(
-        look.region.latitude_deg,
-        [month.tmax_c for month in normals],
-        [month.tmin_c for month in normals],
-        [month.precip_mm for month in normals],
-        held_mm(look, zone_id),
-        water_table_cm(look, zone_id),
-    )
-
-
-def water_table_cm(look: Look, zone_id: str) -> float | None:
-    """Usual depth to ground water; 0 where the zone's roots always reach it. [cm]"""
-    table = look.region.soils[zone_id].water_table_cm
-    if table is not None:
-        return table[1]
-    return 0.0 if look.zones[zone_id].ground_water_in_reach else None
-
-
-def held_mm(look: Look, zone_id: str) -> float:
-    """Water the soil holds within reach of roots. [mm]"""
-    soil = look.region.soils[zone_id]
-    return sum(
-        layer.mm
-        for layer in profile_water(
-            [_plain(layer) for layer in soil.layers],
-            soil.rooting_depth_cm,
-            [_plain(each) for each in look.region.files["soils"].peat_classes],
-        )
-    )
-
-
-def _plain(record: Record) -> dict[str, object]:
-    """A record's fields by name, for the formulas."""
-    return {item.name: getattr(record, item.name) for _, _, item in columns(type(record))}
-
-
-def _year(look: Look, zone: Zone) -> tuple[Markup, str]:
-    normals = look.region.climate[zone.id]
-    figures, say = look.figures, look.phrases.say
-    growing = zone_year(look, zone.id).growing
-    total = sum(month.precip_mm for month in normals)
-    names = figures.months(growing) if growing else say("months.none")
-    line = say("zone.year_line", rain=figures.rain(total), months=names, days=zone.frost_free_days)
-    drawing = year(
-        [figures.rain_scale(month.precip_mm) for month in normals],
-        [figures.warmth(month.mean_c) for month in normals],
-        growing,
-        look.belts[zone.id],
-        look.phrases.words("months.initials"),
-        line,
-        look.palette,
-        height=20.5,
-    )
-    return look.show(drawing), line
-
-
-def _soil(look: Look, zone_id: str) -> tuple[str, ...]:
-    """The soil in a sentence or two: what it is, how deep, how much water it holds."""
-    soil = look.region.soils[zone_id]
-    figures, say = look.figures, look.phrases.say
-    held = held_mm(look, zone_id)
-    parts = [
-        say(
-            "zone.soil",
-            summary=soil.summary[:1].upper() + soil.summary[1:],
-            depth=figures.depth(soil.rooting_depth_cm),
-            held=figures.rain(held),
-        )
-    ]
-    parts.append(say("zone.restriction", text=soil.restriction))
-    top = soil.layers[0]
-    if top.kind == "mineral" and top.sand_pct is not None:
-        name = texture_class(top.sand_pct, top.silt_pct or 0, top.clay_pct or 0)
-        parts.append(
-            say(
-                "zone.topsoil",
-                texture=look.phrases.named("texture", name.replace(" ", "_")),
-                depth=figures.depth(top.bottom_cm),
-                ph=figures.short(top.ph, 1),
-            )
-        )
-    return tuple(parts)
-
-
 def _weeds(look: Look, zone_id: str) -> str:
     """Weeds whose table range reaches this zone or a neighbour, most constant first."""
     zone = look.zones[zone_id]
@@ -443,38 +320,6 @@ def _damage(look: Look, zone_id: str) -> tuple[Damage, ...]:
         )
         for each in look.region.disturbances
         if each.id in notes
-    )
-
-
-def mix_view(look: Look, zone_id: str) -> MixView:
-    """A zone's mix with live seeds and pure live seed by weight."""
-    mix = look.region.mixes[zone_id]
-    figures, say = look.figures, look.phrases.say
-    rows, weight, seeds = [], 0.0, 0.0
-    for plant_id, live in mix.plants.items():
-        count = look.plants[plant_id].seeds_per_g
-        kg_ha = pls_kg_ha(live, count) if count is not None else None
-        seeds += live
-        weight += kg_ha or 0.0
-        shown = figures.seed_weight(kg_ha) if kg_ha is not None else MINUS
-        rows.append(MixRow(look.plant_name(plant_id), figures.seeds(live), shown))
-    planted = list(mix.live_plants)
-    for each in mix.propagules:
-        rate = ""
-        if each.rate_low is not None and each.rate_high is not None:
-            unit = look.phrases.named("rates", each.rate_unit)
-            rate = f", {figures.span(each.rate_low, each.rate_high)} {unit}"
-        planted.append(f"{each.what}{rate} ({figures.months(each.months)})")
-    return MixView(
-        method=look.phrases.named("methods", mix.method),
-        rows=tuple(rows),
-        total_seeds=figures.seeds(seeds),
-        total_weight=figures.seed_weight(weight),
-        seeds_head=figures.seeds_unit,
-        weight_head=say("mix.weight", unit=figures.yield_unit),
-        other_method=mix.other_method,
-        planted=tuple(planted),
-        none=not rows,
     )
 
 
