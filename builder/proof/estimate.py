@@ -28,7 +28,7 @@ from builder.proof.sessions import Sessions, Sums, bare_key
 Whole = NDArray[np.int64]
 Progress = Callable[[str, float], None]
 
-INNER_FOLDS = 10
+INNER_FOLDS = 5
 LEARNED_AT = (4, 8, 14, None)
 """Answers in the sessions that corrections are learned from; None: all plants."""
 TUNED_AT = (5, 6, 7, 8, 10, 12)

@@ -9,6 +9,7 @@ from builder.key.plots import Plots
 from builder.key.plots_bind import names_of
 from builder.pack import compile_pack
 from builder.problems import errors
+from builder.proof import estimate
 from builder.proof.fit import fit_region
 from builder.proof.known import Known, in_slope_order
 from builder.proof.known_fit import fit_known
@@ -16,7 +17,14 @@ from builder.proof.reading import read_known
 from builder.proof.region_tables import neighbours_of, plain_ids
 from builder.steps.checking import check_region
 
+pytestmark = pytest.mark.usefixtures("few_folds")
 ZONES = ("Low ground", "middle", "high")
+
+
+@pytest.fixture
+def few_folds(monkeypatch):
+    """Fewer inner folds than a real fit, for speed."""
+    monkeypatch.setattr(estimate, "INNER_FOLDS", 4)
 
 
 def plots_of(count=72, plants=14, seed=0):

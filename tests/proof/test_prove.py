@@ -12,7 +12,14 @@ from builder.key.plots import Plots
 from builder.key.prepare import prepare
 from builder.key.weigh import Weights
 from builder.pack import compile_pack
-from builder.proof import baselines, known_proof, prove, simulated_proof, simulator
+from builder.proof import (
+    baselines,
+    estimate,
+    known_proof,
+    prove,
+    simulated_proof,
+    simulator,
+)
 from builder.proof.calls import call_sites, pack_for, record_of, with_settings, without_zone
 from builder.proof.cases import Traits, plot_pairs, proof_cases, setting_cases, zone_pairs
 from builder.proof.kept import keep_proof, read_proof, with_session
@@ -180,7 +187,14 @@ def known_of(tables, count=75):
     return Known(case.plots, region.plant_ids, region.zone_ids, case.zones[:, 0])
 
 
-def test_known_plots_are_proved_out_of_fold_beside_their_rivals(tables):
+@pytest.fixture
+def quick(monkeypatch):
+    """Fewer inner folds and trees, for the plumbing rather than the figures."""
+    monkeypatch.setattr(estimate, "INNER_FOLDS", 3)
+    monkeypatch.setattr(baselines, "TREES", 20)
+
+
+def test_known_plots_are_proved_out_of_fold_beside_their_rivals(tables, quick):
     near = [{1}, {0, 2}, {1}]
     made = known_proof.prove_known(known_of(tables), near, 0, "some plots", lambda s, x: None)
     assert made["tested_on"] == "plots"
@@ -192,7 +206,7 @@ def test_known_plots_are_proved_out_of_fold_beside_their_rivals(tables):
     assert made["verdicts"]["zone"]["n"] == made["n"]
 
 
-def test_without_rivals_the_proof_says_what_to_install(tables, monkeypatch):
+def test_without_rivals_the_proof_says_what_to_install(tables, quick, monkeypatch):
     monkeypatch.setattr(baselines, "available", lambda: False)
     near = [{1}, {0, 2}, {1}]
     made = known_proof.prove_known(known_of(tables, 30), near, 0, "plots", lambda s, x: None)
