@@ -13,6 +13,7 @@ from werkzeug.exceptions import HTTPException
 from builder.desk import (
     accounts,
     built,
+    changing,
     editions,
     flat,
     guards,
@@ -75,7 +76,8 @@ def create_app(settings: Settings) -> Flask:
     app.extensions["shelf"] = Shelf(settings.keydata)
     app.extensions["jobs"] = Jobs(settings.home)
     families = (
-        accounts, overview, tables, proof, built, working, editions, sheets, start, flat, served,
+        accounts, overview, tables, changing, proof, built, working, editions, sheets, start,
+        flat, served,
     )  # fmt: skip
     for family in families:
         app.register_blueprint(family.pages)

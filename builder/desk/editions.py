@@ -14,8 +14,8 @@ from werkzeug.wrappers import Response
 from builder.desk.differences import Difference, differences
 from builder.desk.page import page
 from builder.desk.phrases import counted, read_phrases
+from builder.desk.saving import saver
 from builder.desk.shelf import TABLE_ENDINGS, shelf
-from builder.desk.tables import saver
 from builder.tables.edit import EditRefused, replace_value
 
 EDITION = re.compile(r"[A-Za-z0-9][A-Za-z0-9 ._-]{0,19}")

@@ -12,6 +12,10 @@ from contextlib import contextmanager
 from dataclasses import asdict, dataclass
 from pathlib import Path
 
+from flask import current_app
+
+from builder.desk.shelf import shelf
+
 STEPS_KEPT = 200
 
 
@@ -129,3 +133,8 @@ class Saver:
             write_whole(path, step.before)
             (self.kept / f"{step.number:06}.json").unlink()
             return Undone(step, True)
+
+
+def saver(region_id: str) -> Saver:
+    """What saves and takes back for a region of the running desk."""
+    return Saver(shelf().folder(region_id), current_app.config["STATE"])

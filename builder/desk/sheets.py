@@ -10,8 +10,8 @@ from werkzeug.wrappers import Response as BaseResponse
 
 from builder.desk.page import page
 from builder.desk.phrases import counted, read_phrases
+from builder.desk.saving import saver
 from builder.desk.shelf import shelf
-from builder.desk.tables import saver
 from builder.tables.edit import EditRefused
 from builder.tables.sheets import SheetFault
 from builder.tables.workbook import changed_texts, csv_texts, sheets_of_workbook, workbook_bytes

@@ -1,4 +1,4 @@
-"""Every table as a grid and as forms; saving, undo, adding, copying and removing rows."""
+"""Every table as a grid and as forms."""
 
 from __future__ import annotations
 
@@ -8,11 +8,7 @@ from typing import Any
 
 from flask import (
     Blueprint,
-    Response,
     abort,
-    current_app,
-    flash,
-    jsonify,
     redirect,
     render_template,
     request,
@@ -20,22 +16,19 @@ from flask import (
 )
 from werkzeug.wrappers import Response as BaseResponse
 
-from builder.desk.edits import Change, Refusal, edited, edited_csv
-from builder.desk.fields import Group, Path, form, kind_at, path_of, rows_of, shown
+from builder.desk.fields import Group, form, kind_at, path_of, rows_of, shown
 from builder.desk.matrix import matrix
 from builder.desk.page import page
 from builder.desk.phrases import counted, read_phrases
-from builder.desk.saving import Saver
+from builder.desk.saving import saver
 from builder.desk.shelf import Look, shelf
+from builder.desk.table_rows import CLIMATE, FILES, root_of, row_name
 from builder.desk.trouble import problem_view
 from builder.desk.wording import label_for
-from builder.rows import Items, Node, Row, descend, parse_csv, parse_yaml, read_yaml
-from builder.tables.edit import EditRefused, copy_row, remove_value
+from builder.rows import Items, Node, Row, descend, parse_csv, read_yaml
 from builder.tables.regions import YAML_TABLES
 from builder.tables.shape import Id, Keyed, Many, Part, Record, Text, columns
 
-CLIMATE = "climate"
-FILES = {name: f"{name}.yaml" for name in YAML_TABLES} | {CLIMATE: "climate.csv"}
 COLUMNS_SHOWN = 7
 
 pages = Blueprint("tables", __name__, url_prefix="/r/<region_id>")
@@ -61,18 +54,6 @@ class ListView:
     heads: list[str]
     rows: list[tuple[str, str, list[str]]]
     copies: list[str]
-
-
-def saver(region_id: str) -> Saver:
-    """What saves and takes back for a region."""
-    return Saver(shelf().folder(region_id), current_app.config["STATE"])
-
-
-def _root(look: Look, table: str) -> Row:
-    root, _ = read_yaml(look.folder / FILES[table], FILES[table], look.folder)
-    if root is None:
-        abort(404, "unreadable")
-    return root
 
 
 def _frame(look: Look, table: str) -> dict[str, Any]:
@@ -187,7 +168,7 @@ def table(region_id: str, table: str) -> str:
     frame = _frame(look, table)
     if table == CLIMATE:
         return render_template("climate.html", **frame, **_climate(look))
-    root = _root(look, table)
+    root = root_of(look, table)
     if table == "occurrence" and look.region is not None:
         grid = matrix(look, root)
         said = read_phrases()["tables"]["plants_low_to_high"].format(n=len(grid.rows))
@@ -222,24 +203,16 @@ def _list(look: Look, table: str, root: Row, part: str, kind: Many | Keyed) -> L
         cells = [shown(node.get(name)) if isinstance(node, Row) else "" for name in fields]
         if not fields:
             cells = [shown(node) or ", ".join(node.nodes) if isinstance(node, Row) else shown(node)]
-        rows.append((_row_name(key, node), href, [_short(cell) for cell in cells]))
+        rows.append((row_name(key, node), href, [_short(cell) for cell in cells]))
     say = read_phrases()["tables"]
     of = below.record.__name__ if isinstance(below, Part) else ""
     heads = [label_for(name, of) for name in fields] or [read_phrases()["tables"]["value"]]
-    names = [
-        key if not key.isdigit() else _row_name(key, node) for key, node in rows_of(root, part)
-    ]
+    names = [key if not key.isdigit() else row_name(key, node) for key, node in rows_of(root, part)]
     return ListView(label_for(part), part, counted(len(rows), say["rows_n"]), heads, rows, names)
 
 
 def _short(text: str) -> str:
     return text if len(text) <= 60 else text[:58].rsplit(" ", 1)[0] + " …"
-
-
-def _row_name(key: str, node: Node) -> str:
-    if key.isdigit() and isinstance(node, Row):
-        return shown(node.get("id")) or shown(node.get("code")) or key
-    return key
 
 
 @pages.get("/tables/<table>/<part>/<key>")
@@ -248,20 +221,20 @@ def row(region_id: str, table: str, part: str, key: str) -> str:
     if table not in YAML_TABLES:
         abort(404)
     look = shelf().look(region_id)
-    root = _root(look, table)
+    root = root_of(look, table)
     path = path_of(f"{part}/{key}")
     node = descend(root, path)
     if node is None:
         abort(404)
     kind = kind_at(YAML_TABLES[table], path)
-    group = form(_title(look, table, _row_name(key, node)), kind, node, path)
+    group = form(_title(look, table, row_name(key, node)), kind, node, path)
     return render_template(
         "row.html",
         **_frame(look, table),
         group=group,
         part=part,
         key=key,
-        row_name=_row_name(key, node),
+        row_name=row_name(key, node),
         lines=_lines(look, table, node),
     )
 
@@ -293,169 +266,3 @@ def _climate(look: Look) -> dict[str, Any]:
         for place, each in enumerate(sheet.rows)
     ]
     return {"heads": [label_for(name) for name in sheet.columns], "rows": rows}
-
-
-@pages.post("/save")
-def save(region_id: str) -> BaseResponse:
-    """Saves the values that differ from what the person saw; with `try` only says what is wrong."""
-    table = request.form.get("table", "")
-    if table not in FILES:
-        abort(404)
-    given = zip(
-        request.form.getlist("key"),
-        request.form.getlist("was"),
-        request.form.getlist("text"),
-        strict=False,
-    )
-    changes = [Change(path_of(key), was, _lf(text)) for key, was, text in given if was != _lf(text)]
-    refused: list[Refusal] = []
-
-    def change(text: str) -> str:
-        if table == CLIMATE:
-            new, found = edited_csv(text, changes)
-        else:
-            new, found = edited(YAML_TABLES[table], text, changes)
-        refused.extend(found)
-        return new
-
-    if "try" in request.form:
-        look = shelf().look(region_id)
-        change((look.folder / FILES[table]).read_text(encoding="utf-8"))
-        return jsonify(refused=[_told(refusal) for refusal in refused])
-    say = read_phrases()["edit"]
-    words = counted(len(changes), say["changed_words"], file=FILES[table])
-    try:
-        saved = saver(region_id).save(FILES[table], words, change)
-    except UnicodeDecodeError:
-        abort(409, "not-text")
-    made = len(changes) - len(refused) if saved else 0
-    if request.headers.get("X-Desk-Token"):
-        return _answer(region_id, table, made, refused)
-    if refused:
-        flash(counted(len(refused), say["refused"]) + " " + " ".join(r.reason for r in refused[:3]))
-    flash(counted(made, say["saved"]) if made else say["unchanged"])
-    return redirect(_back(region_id, table))
-
-
-def _lf(text: str) -> str:
-    return text.replace("\r\n", "\n").strip()
-
-
-def _told(refusal: Refusal) -> dict[str, Any]:
-    key = "/".join(map(str, refusal.path))
-    return {"key": key, "reason": refusal.reason, "fix": refusal.fix, "other": refusal.other}
-
-
-def _answer(region_id: str, table: str, made: int, refused: list[Refusal]) -> Response:
-    look = shelf().look(region_id)
-    views = [problem_view(look, p) for p in look.problems if File(p.file).stem == table]
-    said = [
-        {"wrong": v.wrong, "fix": v.fix, "place": v.place, "stops": v.stops} for v in views[:12]
-    ]
-    last = saver(region_id).last()
-    answer = jsonify(
-        saved=made,
-        refused=[_told(refusal) for refusal in refused],
-        problems=said,
-        undo=last.words if last else "",
-    )
-    answer.status_code = 409 if any(refusal.other for refusal in refused) else 200
-    return answer
-
-
-def _back(region_id: str, table: str) -> str:
-    part, key = request.form.get("part"), request.form.get("row")
-    if part and key:
-        return url_for("tables.row", region_id=region_id, table=table, part=part, key=key)
-    return url_for("tables.table", region_id=region_id, table=table)
-
-
-@pages.post("/undo")
-def undo(region_id: str) -> BaseResponse:
-    """Takes the last save back."""
-    say = read_phrases()["edit"]
-    undone = saver(region_id).undo()
-    table = request.form.get("table", "occurrence")
-    if undone.step is None:
-        flash(say["undo_none"])
-    elif not undone.done:
-        flash(say["undo_changed"].format(file=undone.step.file))
-    else:
-        flash(say["undone"].format(words=undone.step.words))
-        table = File(undone.step.file).stem
-    return redirect(
-        url_for(
-            "tables.table", region_id=region_id, table=table if table in FILES else "occurrence"
-        )
-    )
-
-
-@pages.post("/add")
-def add(region_id: str) -> BaseResponse:
-    """Adds a row as a copy of another under a new id."""
-    table, part = request.form.get("table", ""), request.form.get("part", "")
-    if table not in YAML_TABLES:
-        abort(404)
-    say = read_phrases()["edit"]
-    new, like = request.form.get("new", "").strip(), request.form.get("like", "")
-    if not _is_id(new):
-        flash(say["id"])
-        return redirect(url_for("tables.table", region_id=region_id, table=table))
-    words = say["added_words"].format(row=new, file=FILES[table])
-    try:
-        saver(region_id).save(FILES[table], words, lambda text: _copied(text, part, like, new))
-    except EditRefused as refusal:
-        flash(str(refusal))
-        return redirect(url_for("tables.table", region_id=region_id, table=table))
-    flash(say["added"].format(row=new))
-    rows = rows_of(_root(shelf().look(region_id), table), part)
-    key = next((key for key, node in rows if _row_name(key, node) == new), "0")
-    return redirect(url_for("tables.row", region_id=region_id, table=table, part=part, key=key))
-
-
-def _copied(text: str, part: str, like: str, new: str) -> str:
-    root, _ = parse_yaml(text, "table")
-    rows = rows_of(root, part) if root is not None else []
-    if any(_row_name(key, node) == new for key, node in rows):
-        raise EditRefused(f'"{new}" stands here already.')
-    for key, node in rows:
-        if like in (key, _row_name(key, node)):
-            return copy_row(text, path_of(f"{part}/{key}"), new)
-    raise EditRefused("There is no row here to copy.")
-
-
-@pages.post("/remove")
-def remove(region_id: str) -> BaseResponse:
-    """Removes a row the person has ticked that they mean it for."""
-    table, part, key = (request.form.get(name, "") for name in ("table", "part", "row"))
-    if table not in YAML_TABLES:
-        abort(404)
-    say = read_phrases()["edit"]
-    path: Path = path_of(f"{part}/{key}")
-    name = request.form.get("name", key)
-
-    def removed(text: str) -> str:
-        root, _ = parse_yaml(text, "table")
-        node = descend(root, path) if root is not None else None
-        if node is None or _row_name(key, node) != name:
-            raise EditRefused(say["look_again"])
-        return remove_value(text, path)
-
-    if not request.form.get("sure"):
-        return redirect(url_for("tables.row", region_id=region_id, table=table, part=part, key=key))
-    try:
-        words = say["removed_words"].format(row=name, file=FILES[table])
-        saver(region_id).save(FILES[table], words, removed)
-        flash(say["removed"].format(row=name))
-    except EditRefused as refusal:
-        flash(str(refusal))
-    return redirect(url_for("tables.table", region_id=region_id, table=table))
-
-
-def _is_id(text: str) -> bool:
-    return (
-        text.isascii()
-        and text.replace("_", "a").isalnum()
-        and text[:1].isalpha()
-        and text.islower()
-    )
