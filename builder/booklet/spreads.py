@@ -8,6 +8,9 @@ from builder.views.zones import ZoneView
 FIRST_LINES, REST_LINES, MOST_LINES = 20, 52, 59
 """Lines that fit a zone's first page, and its last two set easily and closely, beside their
 drawings; counted on pages."""
+LOW_FROM, LATER_FROM = 27, 29
+"""Lines and neighbours together from which the first page takes the low drawing of heights, and
+from which what to look for moves on to the work; counted on pages."""
 WIDE_NAME = 18
 LINE_MM, PLANT_ROW_MM, ZONE_CHARTS_MM = 3.7, 4.45, 77.0
 
@@ -16,12 +19,14 @@ LINE_MM, PLANT_ROW_MM, ZONE_CHARTS_MM = 3.7, 4.45, 77.0
 class Spread:
     """A zone's pages; a page with much to say is set a little closer.
 
-    long  too much for four pages: wildlife takes a fifth, with room for notes
+    later  what to look for after damage stands with the work, not on the first page
+    long   too much for four pages: wildlife takes a fifth, with room for notes
     """
 
     zone: ZoneView
     first: str
     rest: str
+    later: bool
     long: bool
 
 
@@ -57,11 +62,18 @@ def spread(zone: ZoneView, trim: Trim) -> Spread:
         + _lines("".join(line.head + line.text for line in zone.wildlife))
         + _lines("".join(line.head + line.text for line in zone.soil_life))
     )
+    full = first + len(zone.kin) + lost
+    if full >= LOW_FROM:
+        zone = replace(zone, heights=zone.heights_low)
+    later = full >= LATER_FROM
+    if later:
+        rest += sum(_lines(line.head + line.text) for line in zone.after)
     long = rest > MOST_LINES - 2 * lost
     return Spread(
         zone,
         "tight" if first > FIRST_LINES - lost else "easy",
         "tight" if rest > REST_LINES - 2 * lost and not long else "easy",
+        later,
         long,
     )
 

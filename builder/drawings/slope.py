@@ -156,7 +156,7 @@ def heights(
     parts = [defs([b for i, b in belts.items() if marked in (None, i)], palette, scale)]
     step = _tick_step(high - low)
     left = width * 0.125
-    size = min(height * 0.096, width * 0.03)
+    size = max(width * 0.024, min(height * 0.096, width * 0.03))
     metres = math.ceil(low / step) * step
     while metres <= high:
         parts.append(path(f"M{num(left)} {num(y(metres))}H{num(width)}", palette.hair, width / 400))

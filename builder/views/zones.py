@@ -74,6 +74,7 @@ class ZoneView:
     one_line: str
     tab: Markup
     heights: Markup
+    heights_low: Markup
     band: str
     why_here: str
     limits: str
@@ -115,15 +116,8 @@ def zone_view(look: Look, zone_id: str) -> ZoneView:
         short=look.zone_short(zone_id),
         one_line=look.zone_line(zone_id),
         tab=look.tab(zone_id, 13),
-        heights=look.show(
-            heights(
-                look.region.zones,
-                look.region.elevation_m,
-                say("zone.heights_title", name=zone.short, band=look.figures.heights(*zone.band_m)),
-                zone_id,
-                look.palette,
-            )
-        ),
+        heights=_heights(look, zone, 18.5),
+        heights_low=_heights(look, zone, 11.5),
         band=band_line(look, zone),
         why_here=zone.why_here,
         limits=say("zone.limits", list=", ".join(zone.limits)) if zone.limits else "",
@@ -157,6 +151,16 @@ def zone_view(look: Look, zone_id: str) -> ZoneView:
         months_line=strip_line,
         damage=_damage(look, zone_id),
         mix=mix_view(look, zone_id),
+    )
+
+
+def _heights(look: Look, zone: Zone, tall: float) -> Markup:
+    """The zone among the others at their true heights; tall is the drawing's height. [mm]"""
+    band = look.figures.heights(*zone.band_m)
+    title = look.phrases.say("zone.heights_title", name=zone.short, band=band)
+    region = look.region
+    return look.show(
+        heights(region.zones, region.elevation_m, title, zone.id, look.palette, height=tall)
     )
 
 
