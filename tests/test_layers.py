@@ -20,6 +20,7 @@ ORDER = [
     {"site", "booklet"},
     {"steps"},
     {"desk"},
+    {"bench"},
     {"cli"},  # starts the desk, so it stands right of it
 ]
 RANK = {part: rank for rank, parts in enumerate(ORDER) for part in parts}

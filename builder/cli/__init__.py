@@ -10,7 +10,7 @@ import argparse
 import sys
 
 from builder import __version__
-from builder.cli import pages, plots, records, tables
+from builder.cli import bench, pages, plots, records, tables
 from builder.cli.telling import Told, say_problems
 from builder.steps.refusals import Stopped, ToldByStep
 
@@ -25,7 +25,7 @@ def parser() -> argparse.ArgumentParser:
     )
     top.add_argument("--version", action="version", version=f"beltbook {__version__}")
     commands = top.add_subparsers(title="commands", metavar="COMMAND", dest="command")
-    for family in (tables, pages, plots, records):
+    for family in (tables, pages, plots, records, bench):
         family.add_commands(commands)
     return top
 

@@ -50,9 +50,13 @@ def run_start(given: argparse.Namespace) -> int:
 
 
 def run_docs(given: argparse.Namespace) -> int:
-    """Writes docs/tables.md, checks.md, sources.md and the editors' schemas."""
+    """Writes docs/tables.md, checks.md, sources.md, performance.md and the editors' schemas."""
+    from builder.bench.table import write_page
     from builder.steps.documents import write_docs
 
     written = write_docs(given.keydata, given.out)
+    page = write_page(given.out)
+    if page is not None:
+        written.append(page)
     say("\n".join(map(str, written)) if written else "every page was right already")
     return 0
