@@ -8,6 +8,7 @@ from helpers import three_zone_files, write_region
 from openpyxl import Workbook, load_workbook
 
 from builder.checks import checked_region
+from builder.proof.kept import PROOF_YAML
 from builder.rows import parse_yaml, plain
 from builder.tables.merge import merged_text
 from builder.tables.sheets import SheetFault
@@ -40,7 +41,10 @@ def test_a_region_comes_back_without_loss(tmp_path, region, way):
     empty.mkdir()
     fresh = write_region(empty, changed_texts(empty, sheets))
     assert checked_region(fresh).problems == []
-    for path in folder.rglob("*.yaml"):
+    # What was measured on the tables stays behind: it is made again by a proof.
+    tables = [path for path in folder.rglob("*.yaml") if path.name != PROOF_YAML]
+    assert len(tables) > 9
+    for path in tables:
         again = (fresh / path.relative_to(folder)).read_text(encoding="utf-8")
         first = plain(parse_yaml(path.read_text(encoding="utf-8"), "a")[0])
         assert plain(parse_yaml(again, "b")[0]) == first, path.name
