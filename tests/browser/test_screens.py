@@ -232,6 +232,25 @@ def test_poison_is_told_before_the_name(app, records_file, demo_files):
         assert 0 <= order[0] < order[1], plant
 
 
+def test_a_group_with_a_poison_in_it_is_found_by_name_and_warns_first(app, records_file):
+    show(app, f"site/{records_file[1]['sage']}/plants/find")
+    app.page.locator("input[type=search]").fill("carrot")
+    row = app.page.locator("a.row", has_text="Carrot-family plant")
+    assert row.locator(".care").count() == 1
+    row.tap()
+    app.page.locator(".danger").wait_for()
+    show(app, f"site/{records_file[1]['sage']}/plants/enter/spruce")
+    app.page.get_by_role("heading", name="Spruce of some kind").wait_for()
+    assert app.page.locator(".danger").count() == 0
+
+
+def test_a_long_list_rolls_inside_the_page(app, records_file):
+    show(app, f"site/{records_file[1]['sage']}/plants/find")
+    app.page.get_by_role("button", name="Perennial herb").tap()
+    app.page.locator("a.row .care").first.wait_for()
+    assert app.page.evaluate("document.scrollingElement.scrollHeight - innerHeight") == 0
+
+
 def test_digging_waits_for_its_safety_answer(app, records_file):
     show(app, f"site/{records_file[1]['zone']}/place")
     ask = app.page.locator(".ask", has_text="free water")
@@ -368,9 +387,9 @@ def test_a_site_check_by_keyboard_alone(app, records_file):
         press_to(page, "1–5 %")
         page.keyboard.press("Enter")
     page.locator(".told h2").wait_for()
-    press_to(page, "none")
+    press_to(page, "not found")
     page.keyboard.press("Enter")
-    assert page.evaluate("document.activeElement.textContent.trim()") == "none"
+    assert page.evaluate("document.activeElement.textContent.trim()") == "not found"
     press_to(page, "Zone")
     page.keyboard.press("Enter")
     page.locator(".edge.open").wait_for()
@@ -399,7 +418,7 @@ def test_an_answer_is_read_out_with_what_comes_next(app, records_file):
     spoken = app.page.locator("p.spoken[aria-live]").text_content()
     next_one = app.page.locator(".told h2").inner_text()
     app.page.get_by_role("button", name="Undo").click()
-    assert spoken.startswith(f"{asked}: none.")
+    assert spoken.startswith(f"{asked}: not found.")
     assert next_one in spoken
 
 

@@ -19,7 +19,7 @@ export function AnswerPage({ thing, naming, root }) {
     enter(here, thing, naming && answer.state === 'found' ? { ...answer, named: old?.named ?? call.value.named + 1 } : answer);
     go(naming ? root : `${root}/find`, true);
   };
-  return html`${!group && html`<${Danger} plant=${thing}/>`}<div class="told">
+  return html`<${Danger} plant=${thing}/><div class="told">
       ${group ? html`<${GroupCard} group=${thing} region=${here}/>` : html`<${PlantCard} plant=${thing} why=${t(naming ? 'plants.covers_most' : 'plants.picked')}/>`}
       ${!group && html`<${Guard} plant=${thing} region=${here} root=${root}/>`}
       <div class="push"></div><${UndoLine}/></div>

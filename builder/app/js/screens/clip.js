@@ -57,10 +57,10 @@ function sheetWords(sheet) {
   return sheet.more > 0 ? `${said} ${t('clip.more', { n: sheet.more })}` : said;
 }
 
-/** Before any clipping: the found plants that can hurt a hand. */
+/** Before any clipping: what was found, plant or group, that can hurt a hand. */
 function Handling() {
   const here = region.value;
-  const found = site.value.findings.filter((one) => one.state === 'found' && one.plant_id).map((one) => here.plant.get(one.plant_id)).filter(harmsPeople);
+  const found = site.value.findings.filter((one) => one.state === 'found').map((one) => here.plant.get(one.plant_id) ?? here.group.get(one.group_id)).filter((one) => one && harmsPeople(one));
   return html`<ul class="cautions"><li><${Icon} name="warn"/><span>${t('clip.gloves')}</span></li>
-    ${found.map((plant) => html`<li key=${plant.id}><${Icon} name="warn"/><span><b>${plant.common}.</b> ${plant.cautions.filter((one) => one.who === 'people').map((one) => one.text).join(' ')}</span></li>`)}</ul>`;
+    ${found.map((plant) => html`<li key=${plant.id}><${Icon} name="warn"/><span><b>${plant.common ?? plant.name}.</b> ${plant.cautions.filter((one) => one.who === 'people').map((one) => one.text).join(' ')}</span></li>`)}</ul>`;
 }

@@ -19,15 +19,15 @@ export function Find({ root, naming, head, onDone }) {
   const [form, setForm] = useState(null);
   const [limit, setLimit] = useState(SHOWN);
   const hits = hitsFor(here, text, form);
-  const some = groupsAmong(here, text ? hits : []);
+  const some = groupsAmong(here, text ? hits : [], text);
   const to = (id) => `${root}/${naming ? 'name' : 'enter'}/${id}`;
   const pick = (next) => { setForm(next === form ? null : next); setLimit(SHOWN); };
   return html`<div class="found">${!text && !form && head}<ul aria-label=${t('find.results')}>
       ${some.map((group) => html`<li key=${group.id}><a class="row some" href=${to(group.id)}><${Form} form=${here.plants[group.members[0]].form}/>
-        <span class="what"><b>${group.name}</b><span class="quiet small">${t('find.some')}</span></span><span class="state"><${Icon} name="plus"/></span></a></li>`)}
+        <span class="what"><b>${harmsPeople(group) && html`<span class="care"><${Icon} name="warn"/><span class="spoken">${t('find.caution')}</span></span>`}${group.name}</b><span class="quiet small">${t('find.some')}</span></span><span class="state"><${Icon} name="plus"/></span></a></li>`)}
       ${!text && !form && hits.length > 0 && html`<li class="label head">${t('find.lately')}</li>`}
       ${hits.slice(0, limit).map((hit) => html`<${Row} key=${hit.plant.id} hit=${hit} text=${text} to=${to(hit.plant.id)}/>`)}
-      ${hits.length === 0 && html`<li class="quiet part">${t(text ? 'find.nothing' : 'find.start')}</li>`}
+      ${hits.length === 0 && some.length === 0 && html`<li class="quiet part">${t(text ? 'find.nothing' : 'find.start')}</li>`}
       ${hits.length > limit && html`<li><button type="button" class="btn plain wide" onClick=${() => setLimit(limit + 60)}>${t('find.more', { n: hits.length - limit })}</button></li>`}</ul></div>
     <div class="dock"><div class="scroll-x" role="group" aria-label=${t('find.forms')}>${formsOf(here).map((one) => html`<button key=${one} type="button" class="chip" aria-pressed=${String(one === form)} onClick=${() => pick(one)}>${formName(one)}</button>`)}</div>
       <div class="search"><${Icon} name="find"/><input type="search" enterkeyhint="search" autocomplete="off" autocapitalize="none" spellcheck="false" aria-label=${t('find.box')} placeholder=${t('find.box')} value=${text}

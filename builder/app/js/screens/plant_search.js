@@ -35,9 +35,13 @@ export function findPlants(region, text) {
   return [...hits.values()].sort((a, b) => starts(b) - starts(a));
 }
 
-/** Groups to answer with ("some sagebrush") that the found plants belong to, most of them first. */
-export function groupsAmong(region, hits) {
+/** Groups to answer with ("some sagebrush"): those of that name, then those that two of the found
+ *  plants or more belong to, most of them first. */
+export function groupsAmong(region, hits, text = '') {
+  const wanted = plain(text.trim());
+  const named = wanted.length > 2 ? region.groups.filter((group) => group.use === 'answer' && plain(group.name).includes(wanted)) : [];
   const counts = new Map();
   for (const { plant } of hits) for (const at of plant.groups) counts.set(at, (counts.get(at) ?? 0) + 1);
-  return [...counts].filter(([at, n]) => n > 1 && region.groups[at].use === 'answer').sort((a, b) => b[1] - a[1]).map(([at]) => region.groups[at]);
+  const shared = [...counts].filter(([at, n]) => n > 1 && region.groups[at].use === 'answer').sort((a, b) => b[1] - a[1]).map(([at]) => region.groups[at]);
+  return [...new Set([...named, ...shared])];
 }

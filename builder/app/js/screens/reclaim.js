@@ -27,7 +27,7 @@ export function Reclaim({ parts }) {
   const act = stand && html`<div class="act"><button type="button" class="btn icon-only" aria-label=${t('reclaim.print')} onClick=${() => print()}><${Icon} name="print"/></button>
       <a class="btn go" href=${`#/site/${site.value.id}/reclaim/order`}><${Icon} name="bag"/>${t('order.title')}</a></div>`;
   return html`<${Frame} tab="reclaim" act=${act} edge=${false} class="whole-width" line=${t('reclaim.line')}>
-    <${CalledStrip} stand=${stand}/>${stand && html`<${Notes} zone=${stand.zone}/>`}</${Frame}>`;
+    <${CalledStrip} stand=${stand}/>${stand ? html`<${Notes} zone=${stand.zone}/>` : html`<${Cautions}/><${Defer}/>`}</${Frame}>`;
 }
 
 function Notes({ zone }) {
@@ -38,20 +38,24 @@ function Notes({ zone }) {
   const damages = here.disturbances.filter((one) => one.notes);
   const cell = notes?.by_disturbance?.[chosen];
   if (!notes) return html`<p class="part">${t('reclaim.no_notes')}</p>`;
-  return html`<${Cautions} notes=${notes} zone=${zone}/><${Carried} record=${record} zone=${zone}/>
+  return html`<${Cautions} notes=${notes} zone=${zone}/><${Defer}/><${Carried} record=${record} zone=${zone}/>
     <section class="part"><${Choice} label=${t('reclaim.damage')} options=${damages.map((one) => ({ value: one.id, label: one.name }))} value=${chosen} onPick=${(value) => change({ reclaim: { ...record.reclaim, disturbance: value } }, t('undo.disturbance'))}/></section>
     <${When} zone=${zone} record=${record}/>
     <section class="part"><dl class="notes">${cell ? html`<dt>${t('reclaim.do')}</dt><dd>${cell.do}</dd><dt>${t('reclaim.avoid')}</dt><dd>${cell.avoid}</dd>` : html`<dt>${t('reclaim.do')}</dt><dd class="quiet">${t('reclaim.pick_damage')}</dd>`}
       ${NOTES.filter((name) => notes[name]).map((name) => html`<dt key=${name}>${t(`reclaim.${name}`)}</dt><dd>${notes[name]}</dd>`)}</dl><${Source} what=${t('reclaim.these')} region=${here} keys=${['common practice']}/></section>
-    <${Sow} zone=${zone}/><${Weeds} zone=${zone}/><${Life} notes=${notes}/>
-    <section class="part"><p class="small quiet">${t('reclaim.defer')}</p></section>`;
+    <${Sow} zone=${zone}/><${Weeds} zone=${zone}/><${Life} notes=${notes}/>`;
 }
 
+/** What can kill, of the whole region while no zone is called; then of this zone. */
 function Cautions({ notes, zone }) {
   const here = region.value;
-  const now = here.texts.region.cautions.filter((one) => one.level === 'deadly' && (!one.zones || one.zones.includes(zone.id)));
-  return html`<ul class="cautions" aria-label=${t('reclaim.cautions')}>${notes.cautions && html`<li><${Icon} name="warn"/><span>${notes.cautions}</span></li>`}
+  const now = here.texts.region.cautions.filter((one) => one.level === 'deadly' && (!zone || !one.zones || one.zones.includes(zone.id)));
+  return html`<ul class="cautions" aria-label=${t('reclaim.cautions')}>${notes?.cautions && html`<li><${Icon} name="warn"/><span>${notes.cautions}</span></li>`}
     ${now.map((one) => html`<li key=${one.text}><${Icon} name="warn"/><span>${one.text}${one.when ? html` <span class="quiet">${t('reclaim.caution_when', { when: one.when })}</span>` : ''}</span></li>`)}</ul>`;
+}
+
+function Defer() {
+  return html`<section class="part tight"><p class="small">${t('reclaim.defer')}</p></section>`;
 }
 
 /** What the unit's edges say, where there are any. */

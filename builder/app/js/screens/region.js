@@ -8,7 +8,7 @@ export function makeRegion(pack, texts) {
   const lenses = dressed(pack, texts, 'azonal');
   const zones = [...belts, ...lenses];
   const plants = pack.plants.map((plant) => ({ ...texts.plants[plant.id], ...plant }));
-  const groups = pack.groups.map((group) => ({ ...texts.groups?.[group.id], ...group }));
+  const groups = pack.groups.map((group) => withDanger({ ...texts.groups?.[group.id], ...group }, plants));
   const questions = pack.questions.filter((question) => question.asked !== false).map((question) => worded(question, texts.questions[question.id]));
   return {
     id: pack.region.id, pack, texts, belts, lenses, zones, plants, groups, questions,
@@ -17,6 +17,13 @@ export function makeRegion(pack, texts) {
     disturbances: pack.disturbances.map((one) => ({ ...one, name: texts.disturbances[one.id].name ?? texts.disturbances[one.id] })),
     cover: pack.cover.classes, coverOf: new Map(pack.cover.classes.map((one) => [one.code, one])),
   };
+}
+
+/** A group warns as its worst member does: who cannot tell which it is may hold that one. */
+function withDanger(group, plants) {
+  const said = group.members.map((at) => plants[at]).filter(harmsPeople).flatMap((plant) => plant.cautions ?? []).filter((one) => one.who === 'people' && one.level !== 'care');
+  const worst = said.find((one) => one.level === 'deadly') ?? said[0];
+  return worst ? { ...group, caution: true, cautions: [worst] } : group;
 }
 
 const byId = (rows) => new Map(rows.map((row) => [row.id, row]));
@@ -34,7 +41,7 @@ function worded(question, text) {
   return { ...text, ...question, answers };
 }
 
-/** True where the first thing said about a plant must be its caution: people, deadly or harm. */
+/** True where the first thing said about a plant or group must be its caution: people, deadly or harm. */
 export function harmsPeople(plant) {
   return Boolean(plant.caution);
 }
