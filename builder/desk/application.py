@@ -19,13 +19,18 @@ from builder.desk import (
     guards,
     overview,
     proof,
+    record,
+    record_map,
+    records,
     served,
     sheets,
     start,
     tables,
+    upload,
     working,
 )
 from builder.desk.jobs import Jobs
+from builder.desk.keeping import keep_records
 from builder.desk.phrases import read_phrases
 from builder.desk.shelf import Shelf
 
@@ -40,12 +45,14 @@ class Settings:
     out       folder of the built site
     hosts     names it may be called by
     accounts  name → password hash; empty while it is only reachable from this computer
+    records   URL of the database of records; empty for a file among the desk's own
     """
 
     home: Path
     out: Path
     hosts: list[str] = field(default_factory=lambda: list(guards.LOOPBACK_HOSTS))
     accounts: dict[str, str] = field(default_factory=dict)
+    records: str = ""
 
     @property
     def keydata(self) -> Path:
@@ -75,9 +82,10 @@ def create_app(settings: Settings) -> Flask:
     app.extensions["patience"] = guards.Patience()
     app.extensions["shelf"] = Shelf(settings.keydata)
     app.extensions["jobs"] = Jobs(settings.home)
+    keep_records(app, settings.state, settings.records)
     families = (
         accounts, overview, tables, changing, proof, built, working, editions, sheets, start,
-        flat, served,
+        flat, records, record, record_map, upload, served,
     )  # fmt: skip
     for family in families:
         app.register_blueprint(family.pages)
@@ -93,13 +101,13 @@ def face(name: str) -> Response:
 
 
 def refuse(error: HTTPException) -> tuple[str | dict[str, str], int]:
-    """A refusal in plain words, as a page or, for the desk's own script, as JSON."""
+    """A refusal in plain words, as a page or, for a script or a phone, as JSON."""
     code = error.code or http.HTTPStatus.INTERNAL_SERVER_ERROR
     if error.response is not None:
         return error.response, code  # type: ignore[return-value]
     phrases = read_phrases()["refused"]
     reason = error.description if error.description in phrases else str(code)
     text = phrases.get(reason, phrases["other"])
-    if request.headers.get("X-Desk-Token"):
+    if request.headers.get("X-Desk-Token") or request.endpoint in guards.KEYED:
         return {"refused": text}, code
     return render_template("refused.html", text=text, code=code), code

@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+from collections.abc import Callable
 from pathlib import Path as File
 from typing import Any
 
@@ -9,16 +10,17 @@ from flask import Blueprint, Response, abort, flash, jsonify, redirect, request,
 from werkzeug.wrappers import Response as BaseResponse
 
 from builder.desk.edits import Change, Refusal, edited, edited_csv
-from builder.desk.fields import Path, path_of, rows_of
+from builder.desk.fields import Path, blank_of, kind_at, path_of, rows_of
 from builder.desk.phrases import counted, read_phrases
 from builder.desk.saving import saver
 from builder.desk.shelf import shelf
 from builder.desk.table_rows import CLIMATE, FILES, root_of, row_name
 from builder.desk.trouble import problem_view
-from builder.rows import descend, parse_yaml
-from builder.tables.edit import EditRefused, copy_row, remove_value
+from builder.rows import Items, descend, parse_yaml, plain
+from builder.tables.edit import EditRefused, add_row, copy_row, remove_value, replace_value
 from builder.tables.reading import ID_FORM
 from builder.tables.regions import YAML_TABLES
+from builder.tables.shape import Many, Record
 
 pages = Blueprint("changes", __name__, url_prefix="/r/<region_id>")
 
@@ -29,13 +31,7 @@ def save(region_id: str) -> BaseResponse:
     table = request.form.get("table", "")
     if table not in FILES:
         abort(404)
-    given = zip(
-        request.form.getlist("key"),
-        request.form.getlist("was"),
-        request.form.getlist("text"),
-        strict=False,
-    )
-    changes = [Change(path_of(key), was, _lf(text)) for key, was, text in given if was != _lf(text)]
+    changes = _changes()
     refused: list[Refusal] = []
 
     def change(text: str) -> str:
@@ -178,3 +174,57 @@ def remove(region_id: str) -> BaseResponse:
     except EditRefused as refusal:
         flash(str(refusal))
     return redirect(url_for("tables.table", region_id=region_id, table=table))
+
+
+def _changes() -> list[Change]:
+    """Values of the sent form that differ from what the person saw."""
+    given = zip(
+        request.form.getlist("key"),
+        request.form.getlist("was"),
+        request.form.getlist("text"),
+        strict=False,
+    )
+    return [Change(path_of(key), was, _lf(text)) for key, was, text in given if was != _lf(text)]
+
+
+@pages.post("/more")
+def more(region_id: str) -> BaseResponse:
+    """Adds one to a list inside a row, like its last or blank; what was typed is saved with it."""
+    return _reshape(region_id, with_one_more)
+
+
+@pages.post("/less")
+def less(region_id: str) -> BaseResponse:
+    """Takes one out of a list inside a row; what was typed is saved with it."""
+    return _reshape(region_id, lambda text, _record, path: remove_value(text, path))
+
+
+def _reshape(region_id: str, change: Callable[[str, type[Record], Path], str]) -> BaseResponse:
+    table, at = request.form.get("table", ""), path_of(request.form.get("at", ""))
+    if table not in YAML_TABLES or not at:
+        abort(404)
+    say = read_phrases()["edit"]
+    record = YAML_TABLES[table]
+
+    def changed(text: str) -> str:
+        new, _ = edited(record, text, _changes())
+        return change(new, record, at)
+
+    try:
+        words = say["list_words"].format(file=FILES[table])
+        saver(region_id).save(FILES[table], words, changed)
+    except (EditRefused, KeyError, StopIteration) as refusal:
+        flash(str(refusal) if isinstance(refusal, EditRefused) else say["no_such_value"])
+    return redirect(_back(region_id, table))
+
+
+def with_one_more(text: str, record: type[Record], path: Path) -> str:
+    """The text with one more in a list: a copy of its last, or a blank one."""
+    kind = kind_at(record, path)
+    if not isinstance(kind, Many):
+        raise EditRefused(read_phrases()["edit"]["no_such_value"])
+    root, _ = parse_yaml(text, "table")
+    node = descend(root, path)
+    if isinstance(node, Items) and node.nodes:
+        return add_row(text, path, plain(node.nodes[-1]))
+    return replace_value(text, path, [blank_of(kind.of)])

@@ -8,6 +8,7 @@ from __future__ import annotations
 
 from collections.abc import Iterator
 from dataclasses import dataclass, field
+from typing import Any
 
 from builder.desk.wording import help_for, label_for
 from builder.rows import Items, Node, Row, Value, descend
@@ -142,7 +143,7 @@ def form(title: str, kind: Kind, node: Node | None, path: Path) -> Group:
     parts: list[Group] = []
     for below in _children(kind, node, path):
         (entries if isinstance(below, Entry) else parts).append(below)  # type: ignore[arg-type]
-    return Group(path, title, entries, parts, more=isinstance(kind, Many | Keyed))
+    return Group(path, title, entries, parts, more=isinstance(kind, Many) and len(path) > 1)
 
 
 def _children(kind: Kind, node: Node | None, path: Path) -> Iterator[Entry | Group]:
@@ -273,3 +274,30 @@ def rows_of(root: Row, collection: str) -> list[tuple[str, Node]]:
     """(key, node) of every row of a list or of named rows; the key is what its address holds."""
     node = descend(root, (collection,))
     return [(str(step), below) for step, below in _steps(node) if step != "source"]
+
+
+def blank_of(kind: Kind) -> Any:
+    """A first value of a kind, for the person to change; required fields only."""
+    match kind:
+        case Part():
+            return {
+                name: blank_of(below)
+                for name, below, item in columns(kind.record)
+                if is_required(item)
+            }
+        case Text():
+            return kind.choices[0] if kind.choices else "?"
+        case Number():
+            low = kind.low if kind.low != float("-inf") else min(0.0, kind.high)
+            return int(low) if float(low).is_integer() else low
+        case Flag():
+            return False
+        case Series():
+            return [blank_of(kind.of) for _ in kind.names]
+        case Presence():
+            return [0, 0]
+        case Many():
+            return []
+        case Id() | Ref():
+            return "new"
+    return {}

@@ -18,7 +18,8 @@ from builder.site.policy import app_policy
 
 LOOPBACK_HOSTS = ["127.0.0.1", "localhost"]
 READS = {"GET", "HEAD", "OPTIONS"}
-OPEN_ENDPOINTS = {"account.login", "static", None}
+KEYED = {"upload.receive"}  # phones have neither session nor form; each has a key of its own
+OPEN_ENDPOINTS = {"account.login", "static", None, *KEYED}
 
 MEGABYTE = 1_000_000
 LIMITS = {
@@ -27,7 +28,7 @@ LIMITS = {
     "MAX_FORM_PARTS": 5_000,
 }
 UPLOAD_LIMIT = 32 * MEGABYTE  # a season of plots as a spreadsheet is about 5 MB
-UPLOADS = {"sheets.receive", "flat.receive"}
+UPLOADS = {"sheets.receive", "flat.receive", "records.receive", *KEYED}
 
 DESK_POLICY = (
     "default-src 'none'; script-src 'self'; style-src 'self'; img-src 'self' data:; "
@@ -75,6 +76,8 @@ def refuse_foreign_writes() -> None:
         return
     if request.endpoint in UPLOADS:
         request.max_content_length = UPLOAD_LIMIT
+    if request.endpoint in KEYED:
+        return
     if not same_origin(request):
         abort(403, "foreign-origin")
     given = request.headers.get("X-Desk-Token") or request.form.get("token", "")

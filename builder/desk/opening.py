@@ -3,6 +3,7 @@
 from __future__ import annotations
 
 import getpass
+import os
 from argparse import Namespace
 from collections.abc import Callable
 from pathlib import Path
@@ -12,6 +13,9 @@ from builder.desk.application import Settings
 from builder.desk.guards import LOOPBACK_HOSTS
 from builder.desk.phrases import read_phrases
 from builder.desk.server import LOOPBACK, CannotServe, serve
+
+RECORDS = "BELTBOOK_RECORDS"
+"""Names the database of records by its URL, which may hold a password and so is no option."""
 
 
 class CannotOpen(Exception):  # noqa: N818 - told to the person
@@ -26,7 +30,8 @@ def open_desk(
     set_booklets  folders of regions whose booklets are still to be made, while serving
     """
     home = Path.cwd()
-    settings = Settings(home=home, out=given.out.resolve())
+    database = os.environ.get(RECORDS, "")
+    settings = Settings(home=home, out=given.out.resolve(), records=database)
     words = read_phrases()["opening"]
     if given.account:
         _keep_account(settings, given.account)
@@ -38,7 +43,7 @@ def open_desk(
         if not accounts:
             raise CannotOpen(words["no_account"])
         hosts = [*LOOPBACK_HOSTS, given.open, *given.host]
-        settings = Settings(home, settings.out, hosts, accounts)
+        settings = Settings(home, settings.out, hosts, accounts, database)
         address = given.open
         say(words["tls"])
     try:

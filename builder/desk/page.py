@@ -11,7 +11,7 @@ from builder.desk import charts
 from builder.desk.phrases import read_phrases
 from builder.desk.shelf import Look
 
-PARTS = ("overview", "tables", "proof", "build", "editions", "sheets")
+PARTS = ("overview", "tables", "proof", "build", "editions", "sheets", "records")
 ENDPOINTS = {
     "overview": "overview.region",
     "tables": "tables.first",
@@ -19,6 +19,7 @@ ENDPOINTS = {
     "build": "build.show",
     "editions": "editions.show",
     "sheets": "sheets.show",
+    "records": "records.show",
 }
 
 

@@ -220,3 +220,31 @@ def test_only_the_last_steps_are_kept(tmp_path, monkeypatch):
     for number in range(6):
         saver.save("zones.yaml", "one", lambda _text, number=number: f"{number}\n")
     assert len(list(saver.kept.glob("*.json"))) == 3
+
+
+def test_a_list_inside_a_row_grows_and_shrinks_with_what_was_typed(client, tmp_path):
+    path = tmp_path / "keydata/willow_breaks/plants.yaml"
+    form = {
+        "token": token(client),
+        "table": "plants",
+        "part": "plants",
+        "row": "0",
+        "at": "plants/0/cautions",
+        "key": "plants/0/common",
+        "was": "Blue grama",
+        "text": "Blue grama grass",
+    }
+    there = client.post(f"{REGION}/more", data=form).headers["Location"]
+    page = client.get(there).get_data(as_text=True)
+    assert "common: Blue grama grass" in path.read_text(encoding="utf-8")
+    assert 'data-key="plants/0/cautions/0/text"' in page
+    client.post(f"{REGION}/more", data=form)
+    assert save(client, "plants", ("plants/0/cautions/1/text", "?", "Sharp.")).json["saved"] == 1
+    client.post(f"{REGION}/less", data=form | {"at": "plants/0/cautions/0"})
+    page = client.get(there).get_data(as_text=True)
+    assert ">Sharp.<" in page or 'value="Sharp."' in page
+    assert "cautions/1" not in page
+    before = path.read_bytes()
+    for wrong in ("plants/0/common", "plants/99/cautions", "no/such", "../.."):
+        client.post(f"{REGION}/more", data=form | {"at": wrong})
+    assert path.read_bytes() == before
