@@ -116,8 +116,10 @@ def cells(database: Database, wanted: Wanted) -> Cells:
         if reach[0] is None:
             return Cells(1, {})
         step = max(1, -(-(max(reach[1] - reach[0], reach[3] - reach[2]) + 1) // ACROSS))
-        column, row = (x // step).label("column"), (y // step).label("row")
-        grouped = select(column, row, func.count()).where(where).group_by(column, row)
+        placed = select((x // step).label("column"), (y // step).label("row")).where(where)
+        inside = placed.subquery()
+        column, row = inside.c.column, inside.c.row
+        grouped = select(column, row, func.count()).group_by(column, row)
         counts = {(int(one[0]), int(one[1])): one[2] for one in found.execute(grouped)}
     return Cells(step, counts)
 
