@@ -106,12 +106,17 @@ def _decision_view(one: Decision, known: Known) -> DecisionView:
     words = read_phrases()["records"]["decision"][one.kind]
     zone = known.zones.get(one.zone_id or "", one.zone_id or "")
     said = words.format(person=one.person, zone=zone, revision=one.revision)
-    return DecisionView(said, one.reason, one.at.replace("T", " ")[:16])
+    return DecisionView(said, one.reason, _minute(one.at))
+
+
+def _minute(moment: str) -> str:
+    """A moment to the minute, at the clock it was written by."""
+    return moment.replace("T", " ")[:16]
 
 
 def _side_view(mark: str, mine: Record, theirs: Record) -> SideView:
     words = read_phrases()["records"]["side"]
-    said = words.format(observer=theirs["observer"], when=theirs["changed_at"])
+    said = words.format(observer=theirs["observer"], when=_minute(theirs["changed_at"]))
     return SideView(mark, said, list(_differing(mine, theirs)))
 
 

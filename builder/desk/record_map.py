@@ -17,7 +17,8 @@ from builder.desk.shelf import shelf
 from builder.drawings.ink import SCREEN, num, path, polyline, svg, text
 from builder.records.finding import Cells, Wanted, cells, degrees
 
-WIDTH, MARGIN, TALLEST = 900.0, 56.0, 700.0
+WIDTH, MARGIN, TALLEST = 900.0, 60.0, 640.0
+HEAD, FOOT = 12.0, 28.0
 LEAST_SPAN_DEG = 0.002
 STEPS_DEG = (0.0005, 0.001, 0.002, 0.005, 0.01, 0.02, 0.05, 0.1, 0.2, 0.5, 1, 2, 5, 10, 30, 60)
 MOST_LINES = 7
@@ -54,15 +55,15 @@ class Frame:
         room = WIDTH - 2 * MARGIN
         self.down = min(
             room / ((self.east - self.west) * narrow),
-            (TALLEST - 2 * MARGIN) / (self.north - self.south),
+            (TALLEST - HEAD - FOOT) / (self.north - self.south),
         )
         self.across = self.down * narrow
-        self.height = (self.north - self.south) * self.down + 2 * MARGIN
+        self.height = (self.north - self.south) * self.down + HEAD + FOOT
 
     def at(self, point: Point) -> Point:
         """A place in degrees east and north, on the drawing."""
         x, y = point
-        return MARGIN + (x - self.west) * self.across, MARGIN + (self.north - y) * self.down
+        return MARGIN + (x - self.west) * self.across, HEAD + (self.north - y) * self.down
 
 
 def _span(values: list[float]) -> Point:
@@ -106,11 +107,11 @@ def _graticule(frame: Frame) -> Iterable[str]:
     say = read_phrases()["records"]["sides_of"]
     widest = max(frame.east - frame.west, frame.north - frame.south)
     step = next((one for one in STEPS_DEG if widest / one <= MOST_LINES), STEPS_DEG[-1])
-    left, foot = MARGIN, frame.height - MARGIN
+    left, foot = MARGIN, frame.height - FOOT
     right = frame.at((frame.east, 0))[0]
     for east in _lines(frame.west, frame.east, step):
         x = frame.at((east, 0))[0]
-        yield path(f"M{num(x)} {num(MARGIN)}V{num(foot)}", "var(--hair)", 1)
+        yield path(f"M{num(x)} {num(HEAD)}V{num(foot)}", "var(--hair)", 1)
         name = say["east" if east >= 0 else "west"].format(deg=f"{abs(east):g}")
         yield text(x, foot + 18, name, 13, "var(--contour)", "middle")
     for north in _lines(frame.south, frame.north, step):
