@@ -7,7 +7,6 @@ browser   browser.phone(profile) -> Phone: one browser process with a profile th
 
 from __future__ import annotations
 
-import shutil
 from pathlib import Path
 
 import pytest
@@ -19,17 +18,6 @@ from builder.steps.checking import check_region
 
 ROOT = Path(__file__).parent.parent.parent
 DEMO = "sorrel_plateau"
-
-
-@pytest.fixture(scope="session")
-def engine():
-    """The driver, started once."""
-    if shutil.which("chromium") is None:
-        pytest.fail("chromium is missing; .ci/setup test installs it")
-    from playwright.sync_api import sync_playwright
-
-    with sync_playwright() as playwright:
-        yield playwright
 
 
 @pytest.fixture

@@ -7,7 +7,6 @@ from pathlib import Path
 
 import numpy as np
 import pytest
-from playwright.sync_api import sync_playwright
 
 from builder.key.compile import Fitted, arrays_of
 from builder.key.weigh import Weights
@@ -107,16 +106,15 @@ def make_site(pack, rng):
 
 
 @pytest.fixture(scope="session")
-def core_page():
+def core_page(engine):
     """A page of real Chromium that can import the phone's key."""
-    with sync_playwright() as play:
-        flags = ["--no-sandbox", "--disable-gpu", "--disable-quic"]
-        browser = play.chromium.launch(executable_path=shutil.which("chromium"), args=flags)
-        page = browser.new_page()
-        page.route(f"{HOST}**", serve_core)
-        page.goto(HOST)
-        yield page
-        browser.close()
+    flags = ["--no-sandbox", "--disable-gpu", "--disable-quic"]
+    browser = engine.chromium.launch(executable_path=shutil.which("chromium"), args=flags)
+    page = browser.new_page()
+    page.route(f"{HOST}**", serve_core)
+    page.goto(HOST)
+    yield page
+    browser.close()
 
 
 def serve_core(route):
