@@ -1,6 +1,11 @@
 """What is kept of records: merged as phones merge, whole or not at all, decided, never changed."""
 
+import json
+import subprocess
+import sys
 import threading
+import time
+from pathlib import Path
 
 import pytest
 from sqlalchemy import select, update
@@ -14,19 +19,16 @@ from builder.records.review import review
 from builder.records.store import Decision, RecordStore, Unsigned
 from tests.records.helpers import CALL, file_text, found, record
 
+ROOT = Path(__file__).parents[2]
 HERE = Wanted("willow_breaks")
 
 
 @pytest.fixture
-def database(tmp_path):
+def in_file(tmp_path):
+    """A database in a SQLite file."""
     made = Database(f"sqlite:///{tmp_path}/records.sqlite")
     yield made
     made.close()
-
-
-@pytest.fixture
-def store(database):
-    return RecordStore(database)
 
 
 def taken(store, *sites, **more):
@@ -224,23 +226,23 @@ def test_a_store_of_another_version_is_refused(tmp_path):
         Database(url)
 
 
-def test_a_key_is_kept_only_as_its_hash_and_can_be_revoked(database, tmp_path):
-    key = make_device(database, "Blue phone")
-    (one,) = devices(database)
-    assert device_of(database, key) == one.id
+def test_a_key_is_kept_only_as_its_hash_and_can_be_revoked(in_file, tmp_path):
+    key = make_device(in_file, "Blue phone")
+    (one,) = devices(in_file)
+    assert device_of(in_file, key) == one.id
     for wrong in ("", ".", f"{one.id}.", f"{key}x", f"ffffffff.{key.partition('.')[2]}", "\ud800"):
-        assert device_of(database, wrong) is None
-    database.close()
+        assert device_of(in_file, wrong) is None
+    in_file.close()
     kept = b"".join(path.read_bytes() for path in tmp_path.iterdir())
     assert key.partition(".")[2].encode() not in kept
-    assert revoke(database, one.id)
-    assert revoke(database, one.id) is False
-    assert device_of(database, key) is None
+    assert revoke(in_file, one.id)
+    assert revoke(in_file, one.id) is False
+    assert device_of(in_file, key) is None
 
 
-def test_lists_queue_and_map_read_an_index_in_its_order(database):
+def test_lists_queue_and_map_read_an_index_in_its_order(in_file):
     # A hundred thousand records are listed in time only while no list sorts them all.
-    with database.reading() as look:
+    with in_file.reading() as look:
         for query in (
             "region_id = 'r' ORDER BY date DESC, id DESC",
             "region_id = 'r' AND open IS 1 ORDER BY date DESC, id DESC",
@@ -251,3 +253,29 @@ def test_lists_queue_and_map_read_an_index_in_its_order(database):
             said = " ".join(str(row) for row in plan)
             assert "SEARCH sites USING INDEX" in said
             assert "TEMP B-TREE" not in said
+
+
+HAND_IN = """
+import json, sys
+from builder.records.database import Database
+from builder.records.exchange import Records
+from builder.records.store import RecordStore
+site = json.loads(sys.argv[2])
+store = RecordStore(Database(sys.argv[1]))
+print("begins", flush=True)
+store.take_in(Records(sites=[{**site, "id": f"s{n}"} for n in range(50_000)]))
+"""
+
+
+@pytest.mark.parametrize("after_s", [0.0, 0.4, 1.2])
+def test_a_desk_killed_in_the_middle_leaves_nothing_half(in_file, tmp_path, after_s):
+    store = RecordStore(in_file)
+    taken(store, record())
+    command = [sys.executable, "-c", HAND_IN, str(in_file.engine.url), json.dumps(record())]
+    with subprocess.Popen(command, stdout=subprocess.PIPE, cwd=ROOT) as desk:
+        desk.stdout.readline()
+        time.sleep(after_s)
+        desk.kill()
+    assert store.count() in ({"willow_breaks": 1}, {"willow_breaks": 50_001})
+    assert store.record("a1") == record()
+    assert taken(store, record(id="b")).added == ["b"]
