@@ -6,26 +6,32 @@ import subprocess
 import sys
 import time
 from functools import partial
+from pathlib import Path
+from typing import Any
+from unittest.mock import patch
 
 from builder.bench.measure import Goal, Measure, Reference, Setting, Taken, seconds
-from builder.booklet import write_booklet
+from builder.booklet import make, write_booklet
 from builder.booklet.bare import heard_html, set_bare
+from builder.booklet.impose import imposed
+from builder.steps.checking import check_region, region_of
+from builder.tables.start import start_region
 
-FEW_ZONES = 2
 
-
-def _zones(setting: Setting) -> list[str] | None:
-    """All zones, or few of them when quick."""
-    return list(setting.region.zone_ids[:FEW_ZONES]) if setting.quick else None
+def _folder(setting: Setting) -> Path:
+    """The demo region; a region of three zones when quick."""
+    if not setting.quick:
+        return setting.demo
+    folder = setting.folder / "keydata" / "three_zones"
+    return folder if folder.is_dir() else start_region(folder, "Three zones")
 
 
 def cold(setting: Setting) -> Taken:
     """beltbook booklet as a command of its own: start, check, compile, set, write."""
-    out = setting.folder / "cold.pdf"
-    zones = _zones(setting)
-    command = [sys.executable, "-m", "builder", "booklet", str(setting.demo), "--out", str(out)]
-    command += ["--zones", *zones] if zones else []
+    folder, out = _folder(setting), setting.folder / "cold.pdf"
+    command = [sys.executable, "-m", "builder", "booklet", str(folder), "--out", str(out)]
     rates = []
+    pages = 0
     for _ in range(setting.runs(2)):
         start = time.perf_counter()
         ran = subprocess.run(command, capture_output=True, text=True, check=True)
@@ -36,16 +42,15 @@ def cold(setting: Setting) -> Taken:
 
 def again(setting: Setting) -> Taken:
     """The booklet made a second time in one process; the same HTML by WeasyPrint alone."""
-    out = setting.folder / "again.pdf"
-    zones = _zones(setting)
+    region, out = region_of(check_region(_folder(setting))), setting.folder / "again.pdf"
     with heard_html() as heard:
-        first = write_booklet(setting.region, out, zones=zones)
+        first = write_booklet(region, out)
     before = out.read_bytes()
-    work = partial(write_booklet, setting.region, out, zones=zones)
+    work = partial(write_booklet, region, out)
     rates = tuple(first.pages / taken for taken in seconds(work, setting.runs(2)))
     same = "the same bytes" if out.read_bytes() == before else "OTHER BYTES than the first time"
     bare = []
-    for _ in range(1 if setting.quick else 2):
+    for _ in range(setting.runs(2)):
         start = time.perf_counter()
         pages = set_bare(heard)
         bare.append(pages / (time.perf_counter() - start))
@@ -54,23 +59,26 @@ def again(setting: Setting) -> Taken:
 
 
 def imposition(setting: Setting) -> Taken:
-    """Pages laid on A4 sheets: time between setting the pages and writing the sheets."""
-    out = setting.folder / "sheets.pdf"
+    """Pages laid on A4 sheets and written, once they are set."""
+    region, out = region_of(check_region(_folder(setting))), setting.folder / "sheets.pdf"
     taken = []
-    pages = 0
-    for _ in range(setting.runs(2)):
-        begun = [0.0, 0]
 
-        def tell(stage: str, done: int, of: int, begun: list[float] = begun) -> None:
-            if stage == "write" and done == of:
-                begun[0], begun[1] = time.perf_counter(), of
+    def timed(*given: Any) -> bytes:
+        start = time.perf_counter()
+        done = imposed(*given)
+        taken.append(1000 * (time.perf_counter() - start))
+        return done
 
-        write_booklet(
-            setting.region, out, "a4-sheets", list(setting.region.zone_ids[:FEW_ZONES]), "en", tell
-        )
-        pages = int(begun[1])
-        taken.append(1000 * (time.perf_counter() - begun[0]) / pages)
-    return Taken(tuple(taken), None, f"{pages} pages, marks drawn and file written included.")
+    pages = [0]
+
+    def tell(stage: str, done: int, of: int) -> None:
+        if stage == "write":
+            pages[0] = of
+
+    with patch.object(make, "imposed", timed):
+        write_booklet(region, out, "a4-sheets", progress=tell)
+    each = tuple(one / pages[0] for one in taken)
+    return Taken(each, None, f"{pages[0]} pages onto A4, file written; one run.")
 
 
 MEASURES = (

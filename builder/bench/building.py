@@ -23,13 +23,16 @@ from builder.bench.measure import (
     seconds,
 )
 from builder.site import SiteRegion, build_site
+from builder.site.build import site_files
 from builder.steps.building import build, compile_region
 from builder.steps.checking import check_region
 
-FONTS = (".woff2", ".woff")
-REGIONS = "regions/"
-NOT_FIRST = ("field.html", "app/vendor/licences.txt")
-"""Files that a first visit does not load."""
+FIRST = (
+    "index.html", "manifest.webmanifest", "regions.json", "app/js/before.js", "app/js/main.js",
+    "app/css/app.css", "app/icons/icon.svg", "app/words/languages.json", "app/words/en.json",
+)  # fmt: skip
+"""What a first visit loads before the first page stands, fonts and a region apart."""
+FONTS = ".woff2"
 
 
 def read_and_check(setting: Setting) -> Taken:
@@ -136,24 +139,23 @@ def _packed(content: bytes) -> float:
 
 
 def shell(setting: Setting) -> Taken:
-    """What a first visit loads of the app itself: pages, scripts, styles and English words."""
-    from builder.site.build import site_files
-
+    """What a first visit loads of the app itself: page, scripts, style and English words."""
     files = site_files([setting.demo_site])
-    skipped = [name for name in files if name.startswith("app/words/") and "/en." not in name]
-    first = {
-        name: content
+    sizes = {name: _packed(files[name]) for name in FIRST}
+    later = [
+        content
         for name, content in files.items()
-        if not name.startswith((REGIONS, "app/icons/"))
-        and not name.endswith(FONTS)
-        and name not in (*NOT_FIRST, *skipped, "app/css/book.css")
-    }
+        if name not in FIRST and name.startswith("app/") and not name.endswith(FONTS)
+    ]
     fonts = sum(len(content) for name, content in files.items() if name.endswith(FONTS)) / 1000
-    most = sorted(first, key=lambda name: -_packed(first[name]))[:3]
-    listed = ", ".join(f"{name} {_packed(first[name]):.1f}" for name in most)
-    note = f"{len(first)} files; largest: {listed} kB. Fonts apart: {fonts:.0f} kB."
-    raw = sum(map(len, first.values())) / 1000
-    return Taken((sum(map(_packed, first.values())),), Reference("raw files", (raw,)), note)
+    most = sorted(FIRST, key=lambda name: -sizes[name])[:3]
+    listed = ", ".join(f"{name} {sizes[name]:.1f}" for name in most)
+    note = (
+        f"{len(FIRST)} files; largest: {listed} kB. Apart: fonts {fonts:.0f} kB, and "
+        f"{sum(map(_packed, later)):.0f} kB in {len(later)} files stored for later pages."
+    )
+    raw = sum(len(files[name]) for name in FIRST) / 1000
+    return Taken((sum(sizes.values()),), Reference("raw files", (raw,)), note)
 
 
 def _size(content: bytes) -> Taken:

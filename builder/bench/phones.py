@@ -90,14 +90,20 @@ def _served(folder: Path) -> Iterator[str]:
         server.shutdown()
 
 
-@contextmanager
-def _phone() -> Iterator[Any]:
-    """A page of a fresh browser. NotHere without one."""
+def _browser_path() -> str:
+    """The browser to run. NotHere without one, or without what drives it."""
     if importlib.util.find_spec("playwright") is None:
         raise NotHere('playwright is not installed: pip install "beltbook[test]"')
     path = next((found for name in BROWSERS if (found := shutil.which(name))), None)
     if path is None:
         raise NotHere("chromium is not installed")
+    return path
+
+
+@contextmanager
+def _phone() -> Iterator[Any]:
+    """A page of a fresh browser."""
+    path = _browser_path()
     from playwright.sync_api import Error, sync_playwright
 
     with sync_playwright() as play:
@@ -125,6 +131,7 @@ def _written(setting: Setting, name: str, region: SiteRegion) -> Path:
 
 def usable(setting: Setting) -> Taken:
     """From the tap on the icon until the first page stands and can be tapped, all from cache."""
+    _browser_path()
     out = _written(setting, "demo", setting.demo_site)
     with _phone() as page, _served(out) as address:
         page.add_init_script(WATCH % STARTED)
@@ -144,6 +151,7 @@ def usable(setting: Setting) -> Taken:
 
 def answer_to_paint(setting: Setting) -> Taken:
     """From the tap on an answer until the next prompt is painted, 40 zones x 400 plants."""
+    _browser_path()
     out = _written(setting, "large", setting.large_site)
     region = region_of(setting.large_checked)
     with _phone() as page, _served(out) as address:
@@ -181,6 +189,7 @@ def _leading(region: Region, count: int) -> list[str]:
 
 def scoring(setting: Setting) -> Taken:
     """Belief, verdict and the ranking of every prompt for one site check, 40 x 400."""
+    _browser_path()
     region = region_of(setting.large_checked)
     plots, _ = region_plots(region, setting.size(60, 12))
     pack = json.loads(setting.large_site.pack)

@@ -25,11 +25,14 @@ Table = dict[str, Any]
 def synthetic_region(source: Path, out: Path, zones: int, plants: int, seed: int = 0) -> Path:
     """Writes a region of so many zones and plants, made from another's tables. Returns `out`.
 
-    source  folder of a region; its own zones and plants come first
+    source         folder of a region; its own zones and plants come first
+    zones, plants  how many; ValueError for fewer than the source has
     """
     tables = {name: _read(source / f"{name}.yaml") for name in YAML_TABLES}
     rng = np.random.default_rng(seed)
     base_zones, base_plants = tables["zones"]["zones"], tables["plants"]["plants"]
+    if zones < len(base_zones) or plants < len(base_plants):
+        raise ValueError(f"{source.name} has {len(base_zones)} zones, {len(base_plants)} plants")
     zone_names = _names([one["id"] for one in base_zones], zones)
     plant_names = _names([one["id"] for one in base_plants], plants)
     tables["zones"]["zones"] = _zones(base_zones, zone_names, rng)
