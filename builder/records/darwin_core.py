@@ -22,6 +22,7 @@ from builder.records.known import (
     Knowledge,
     Known,
     belief_of,
+    ground_of,
     members,
     position_of,
     standing_zone,
@@ -70,7 +71,7 @@ def write_archive(records: Records, knowledge: Knowledge, names: bool = False) -
         known = knowledge.of(site)
         rows[EVENTS.file].append(_event(site, known))
         rows[OCCURRENCES.file] += _occurrences(site, known)
-        rows[MEASUREMENTS.file] += _measurements(site)
+        rows[MEASUREMENTS.file] += _measurements(site, known)
     made = io.BytesIO()
     with zipfile.ZipFile(made, "w", zipfile.ZIP_DEFLATED) as packed:
         packed.writestr(zipfile.ZipInfo("meta.xml", ZIP_TIME), meta_xml())
@@ -107,7 +108,7 @@ def _cell(value: Any) -> str:
 
 
 def _event(site: Record, known: Known) -> tuple[Any, ...]:
-    position, height = position_of(site, known), site["place"]["height_m"]
+    position, height = position_of(site, known), ground_of(site, known)["height_m"]
     zone = standing_zone(site)
     where: tuple[Any, ...] = (None,) * 4
     if position is not None:
@@ -192,11 +193,11 @@ def _qualifier(finding: Record, known: Known) -> str | None:
     return "one of: " + "; ".join(plant.scientific for plant in plants) if plants else None
 
 
-def _measurements(site: Record) -> Iterator[tuple[Any, ...]]:
-    place = site["place"]
+def _measurements(site: Record, known: Known) -> Iterator[tuple[Any, ...]]:
+    ground = ground_of(site, known)
     rows: list[tuple[str, Any, str | None]] = [
-        ("slope", place["slope_pct"], "percent"),
-        ("aspect", place["aspect_deg"], "degree from north"),
+        ("slope", ground["slope_pct"], "percent"),
+        ("aspect", ground["aspect_deg"], "degree from north"),
         ("disturbance", site["disturbance"], None),
         ("vegetation zone called", text_or_none((site["call"] or {}).get("zone_id")), None),
         ("belief in the zone called", belief_of(site), "share"),

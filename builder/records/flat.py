@@ -13,7 +13,7 @@ from typing import Any
 
 from builder.records.clean import Record
 from builder.records.exchange import Records, shown_site
-from builder.records.known import Knowledge, Known, belief_of, position_of
+from builder.records.known import Knowledge, Known, belief_of, ground_of, position_of
 
 RUN_BY_SPREADSHEETS = ("=", "+", "-", "@", "\t", "\r", "\n", "\uff1d", "\uff0b", "\uff0d", "\uff20")
 SITE_COLUMNS = (
@@ -63,7 +63,7 @@ def write_csv(records: Records, knowledge: Knowledge, names: bool = False) -> st
 
 def site_cells(site: Record, known: Known) -> list[Any]:
     """What the columns of a site check hold, in their order."""
-    position, place = position_of(site, known), site["place"]
+    position = position_of(site, known)
     kept, overruled = site["call"] or {}, site["overruled"] or {}
     answers = "; ".join(f"{name}={value}" for name, value in sorted(site["questions"].items()))
     where: list[Any] = [None, None, None, None]
@@ -74,7 +74,7 @@ def site_cells(site: Record, known: Known) -> list[Any]:
         site["id"],
         *(site[name] for name in SITE_COLUMNS[1:11]),
         *where,
-        *(place[name] for name in ("height_m", "slope_pct", "aspect_deg")),
+        *ground_of(site, known).values(),
         site["disturbance"],
         site["whole_plot_searched"],
         *(text_or_none(kept.get(name)) for name in ("verdict", "zone_id")),

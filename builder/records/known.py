@@ -143,6 +143,13 @@ def position_of(site: Record, known: Known) -> Position | None:
     return Position(middle, east, float(math.ceil(reach)), True)
 
 
+def ground_of(site: Record, known: Known) -> Record:
+    """Height, slope and aspect; nothing where the position is rounded, which they would undo."""
+    hidden = is_sensitive(site, known) and known.rounding_deg > 0
+    names = ("height_m", "slope_pct", "aspect_deg")
+    return {name: None if hidden else site["place"][name] for name in names}
+
+
 def _middle(degrees: float, step: float) -> float:
     return round((math.floor(degrees / step) + 0.5) * step, 7)
 

@@ -16,6 +16,7 @@ from builder.records.known import (
     Knowledge,
     Known,
     belief_of,
+    ground_of,
     position_of,
     standing_zone,
 )
@@ -119,7 +120,7 @@ def sheet_of(site: Record, known: Known) -> Sheet:
 
 
 def _facts(site: Record, known: Known) -> list[tuple[str, str]]:
-    say, place = read_sentences()["report"], site["place"]
+    say, place = read_sentences()["report"], ground_of(site, known)
     height, overruled = place["height_m"], site["overruled"] or {}
     own = overruled.get("zone_id")
     disturbance = site["disturbance"] or ""

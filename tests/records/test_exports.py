@@ -113,6 +113,7 @@ def test_positions_of_sensitive_plants_are_rounded(guarded):
 def test_no_export_tells_where_a_sensitive_plant_stands(guarded):
     site = record(findings=[found("skunkbush", "1")])
     site["place"] |= {"latitude_deg": 45.7212345, "longitude_deg": -108.5123456}
+    site["place"] |= {"height_m": 1234.5, "slope_pct": 37.25, "aspect_deg": 211.5}
     records, knowledge = Records(sites=[site]), Knowledge([guarded])
     packed, _ = archive(site, known=guarded)
     texts = [
@@ -123,6 +124,7 @@ def test_no_export_tells_where_a_sensitive_plant_stands(guarded):
     for text in texts:
         assert "45.721" not in text
         assert "108.512" not in text
+        assert not any(ground in text for ground in ("1234", "1,234", "37.25", "211.5"))
 
 
 def test_without_tables_every_position_is_rounded():
