@@ -20,10 +20,6 @@ def _because(reason: str) -> Callable[[Setting], Taken]:
 MEASURES = tuple(
     Measure(name, what, unit, _because(reason), goal)
     for name, what, unit, goal, reason in (
-        ("other-list", "Desk: list, search, map of 100,000 records", "ms", Goal(200),
-         "no measure of the desk's records is written yet"),
-        ("other-upload", "Desk: upload of 1,000 records", "s", Goal(5),
-         "no measure of the desk's records is written yet"),
         ("other-demo", "Demo from nothing", "s", Goal(60), f"{FRESH} with: make demo"),
         ("other-tests", "Tests from nothing, browser included", "min", Goal(4),
          f"{FRESH} with: make test"),

@@ -180,7 +180,8 @@ def _occurrence(
             if copy or zone_copy:
                 share, cover = found
                 share = int(np.clip(round(share * rng.uniform(0.6, 1.2)), 1, 100))
-                cover = round(float(np.clip(cover * rng.lognormal(0, 0.4), 0.1, 95)), 1)
+                cover = float(np.clip(cover * rng.lognormal(0, 0.4), 0.1, 95))
+                cover = round(cover) if cover >= 1 else round(cover, 1)
                 found = [share, cover]
             row[zone] = found
         if row:
