@@ -12,6 +12,8 @@ help:
 demo: .venv/.ready-demo
 	@exec .venv/bin/beltbook desk --demo
 
+# Small matrices: threads that wait for each other cost more than they bring.
+test: export OMP_NUM_THREADS = 1
 test: .venv/.ready-test
 	@exec .venv/bin/python -m pytest
 

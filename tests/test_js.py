@@ -1,4 +1,4 @@
-"""Runs the app's own tests, tests/js/*.test.js, on Node: the JavaScript half reads the same goldens."""
+"""Runs the app's own tests, tests/js/*.test.js, on Node: both halves read the same goldens."""
 
 import re
 import shutil
