@@ -19,6 +19,8 @@ from builder.records.finding import Cells, Wanted, cells, degrees
 
 WIDTH, MARGIN, TALLEST = 900.0, 60.0, 640.0
 HEAD, FOOT = 12.0, 28.0
+CELL_GIVEN = "here"
+CELL = f"cell={CELL_GIVEN}"  # in the address all dots share; a search cannot hold it unquoted
 LEAST_SPAN_DEG = 0.002
 STEPS_DEG = (0.0005, 0.001, 0.002, 0.005, 0.01, 0.02, 0.05, 0.1, 0.2, 0.5, 1, 2, 5, 10, 30, 60)
 MOST_LINES = 7
@@ -85,9 +87,10 @@ def drawn(found: Cells, wanted: Wanted, title: str) -> Markup:
     outline = polyline([frame.at(point) for point in hull(corners)], close=True)
     parts.append(path(outline, "var(--contour)", 2))
     most = max(found.counts.values())
+    base = escape(url_for("records.show", **asked(wanted, cell=CELL_GIVEN)))
     for (column, row), count in sorted(found.counts.items(), key=lambda one: -one[1]):
         middle = frame.at(degrees((column + 0.5, row + 0.5), found.step))
-        href = url_for("records.show", **asked(wanted, cell=f"{column}-{row}-{found.step}"))
+        href = base.replace(CELL, f"cell={column}-{row}-{found.step}")
         parts.append(_dot(middle, count, most, href))
     made = svg(WIDTH, frame.height, title, "".join(parts), SCREEN, "map")
     return Markup(made.replace('role="img"', 'role="group"', 1))  # its dots are links
@@ -98,7 +101,7 @@ def _dot(middle: Point, count: int, most: int, href: str) -> str:
     radius = DOT[0] + share * (DOT[1] - DOT[0])
     label = counted(count, read_phrases()["records"]["here"])
     return (
-        f'<a href="{escape(href)}" aria-label="{escape(label)}"><title>{escape(label)}</title>'
+        f'<a href="{href}" aria-label="{escape(label)}"><title>{escape(label)}</title>'
         f'<circle cx="{num(middle[0])}" cy="{num(middle[1])}" r="{num(radius)}"'
         ' fill="var(--pen)" fill-opacity=".55" stroke="var(--sheet)"/></a>'
     )

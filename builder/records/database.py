@@ -76,6 +76,7 @@ Index(
     *(SITES.c[name] for name in ("region_id", "date", "id", "words", "cell_x", "cell_y", "open")),
 ).ddl_if(dialect="sqlite")
 Index("sites_on_map", SITES.c.region_id, SITES.c.cell_x, SITES.c.cell_y)
+Index("sites_by_row", SITES.c.region_id, SITES.c.cell_y)
 BODIES = Table(
     "bodies",
     META,

@@ -5,7 +5,7 @@ from __future__ import annotations
 from dataclasses import dataclass
 from typing import Any
 
-from sqlalchemy import Boolean, ColumnElement, and_, func, literal, select
+from sqlalchemy import Boolean, ColumnElement, Select, UnaryExpression, and_, func, literal, select
 from sqlalchemy.ext.compiler import compiles
 from sqlalchemy.sql.functions import FunctionElement
 
@@ -107,21 +107,27 @@ def find(database: Database, wanted: Wanted, page: int = 0) -> Found:
 def cells(database: Database, wanted: Wanted) -> Cells:
     """How many of the wanted records lie in each cell of a map that holds the whole region."""
     where = and_(conditions(wanted), SITES.c.cell_x.is_not(None))
-    ours = SITES.c.region_id == wanted.region_id
     x, y = SITES.c.cell_x, SITES.c.cell_y
+    ends = [_end(wanted.region_id, column) for column in (x, x.desc(), y, y.desc())]
     with database.reading() as found:
-        reach = found.execute(
-            select(func.min(x), func.max(x), func.min(y), func.max(y)).where(ours)
-        ).one()
+        reach = [found.scalar(one) for one in ends]
         if reach[0] is None:
             return Cells(1, {})
-        step = max(1, -(-(max(reach[1] - reach[0], reach[3] - reach[2]) + 1) // ACROSS))
+        spans = (reach[1] - reach[0], reach[3] - reach[2])
+        step = max(1, -(-(max(spans) + 1) // ACROSS))
         placed = select((x // step).label("column"), (y // step).label("row")).where(where)
         inside = placed.subquery()
         column, row = inside.c.column, inside.c.row
         grouped = select(column, row, func.count()).group_by(column, row)
         counts = {(int(one[0]), int(one[1])): one[2] for one in found.execute(grouped)}
     return Cells(step, counts)
+
+
+def _end(region_id: str, order: Any) -> Select[Any]:
+    """The first of a region's cells in an order: one step into an index."""
+    ours = and_(SITES.c.region_id == region_id, SITES.c.cell_x.is_not(None))
+    column = order.element if isinstance(order, UnaryExpression) else order
+    return select(column).where(ours, column.is_not(None)).order_by(order).limit(1)
 
 
 def degrees(cell: tuple[float, float], step: int) -> tuple[float, float]:

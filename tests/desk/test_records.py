@@ -89,6 +89,13 @@ def test_the_map_needs_nothing_from_elsewhere_and_leads_to_records(client, store
     assert sum(">Far</a>" in one for one in seen) == 1
 
 
+def test_a_search_stays_as_it_is_on_the_map(client, store):
+    keep(store, record(name="cell=here"))
+    page = client.get(f"{LIST}/map?q=cell%3Dhere").get_data(as_text=True)
+    (href,) = re.findall(r'href="([^"]*cell=\d[^"]*)"', page)
+    assert "1 of 1" in client.get(href.replace("&amp;", "&")).get_data(as_text=True)
+
+
 def test_an_outline_holds_every_point():
     square = [(0, 0), (2, 0), (2, 2), (0, 2)]
     assert hull([*square, (1, 1), (1, 0), (0, 0)]) == [(0, 0), (2, 0), (2, 2), (0, 2)]
