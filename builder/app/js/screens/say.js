@@ -70,10 +70,13 @@ export const massWords = (kg) => (units.value === 'us'
   ? t('unit.lb', { n: number(rounded(converted({ value: kg, unit: 'kg', to: 'lb' }), 2), 2) })
   : t('unit.kg', { n: number(rounded(kg, 2), 2) }));
 
-/** An area. @param {number} ha */
-export const areaWords = (ha) => (units.value === 'us'
-  ? t('unit.acre', { n: number(rounded(converted({ value: ha, unit: 'ha', to: 'acre' }), 1), 1) })
-  : t('unit.ha', { n: number(rounded(ha, 1), 1) }));
+/** An area in the person's own unit, for a box. @param {number} ha */
+export const areaShown = (ha) => rounded(units.value === 'us' ? converted({ value: ha, unit: 'ha', to: 'acre' }) : ha, 2);
+
+/** A typed area in hectares. @param {number|null} typed */
+export const areaFrom = (typed) => (typed === null || units.value !== 'us' ? typed : converted({ value: typed, unit: 'acre', to: 'ha' }));
+
+export const areaSign = () => t(units.value === 'us' ? 'unit.acre_sign' : 'unit.ha_sign');
 
 /** A depth in the ground. @param {number} cm */
 export const depthWords = (cm) => (units.value === 'us' ? t('unit.inch', { n: number(converted({ value: cm, unit: 'cm', to: 'in' }), 1) }) : t('unit.cm', { n: rounded(cm, 0) }));
