@@ -10,6 +10,7 @@ import { EdgeMini, EdgeShut } from './parts/edge_shut.js';
 import { ModeKey } from './parts/bar.js';
 import { VerdictTab } from './parts/tab.js';
 import { Hills } from './parts/hills.js';
+import { Invented, Untested } from './parts/table_marks.js';
 import { rowCall, startSite } from './records.js';
 import { start } from './start.js';
 
@@ -24,7 +25,7 @@ export function Sites() {
       <div class="top"><${Hills}/><${ModeKey}/><h1 tabindex="-1">${t('sites.title')}</h1>
         <p>${t('sites.tables', { region: here.name, edition: here.edition })}<br/>${t('sites.kept', { n: sites.value.length })}</p>
         ${start.value.bookOnly && html`<p class="care">${t('app.probes')}</p>`}
-        ${here.pack.region.invented && html`<p class="stamp">${t('sites.invented')}</p>`}</div>
+        ${sites.value.some((row) => hasOdds(here, row)) && html`<${Untested}/>`}<${Invented}/></div>
       ${sites.value.length === 0 && html`<${Empty}/>`}
       ${wanted !== null && found.length === 0 && html`<p class="part quiet">${t('sites.none_found', { text: wanted })}</p>`}
       ${byUnit(found).map((unit) => html`<${Unit} key=${unit.key} unit=${unit} region=${here}/>`)}
@@ -37,6 +38,12 @@ export function Sites() {
     </main>
     <${Foot} current="sites"/></div>`;
 }
+
+/** True where the row of a site check says how likely its zone is. */
+const hasOdds = (here, row) => {
+  const call = row.region_id === here.id ? rowCall(here, row) : null;
+  return call?.answers > 0 && call.verdict === 'zone';
+};
 
 function Empty() {
   return html`<section class="part stack empty"><h2>${t('sites.empty')}</h2><p>${t('sites.empty_how')}</p>

@@ -6,6 +6,7 @@ import { call, region, site } from './state.js';
 import { oddsWords, percentWords } from './say.js';
 import { Icon } from './parts/icon.js';
 import { Tab } from './parts/tab.js';
+import { Untested } from './parts/table_marks.js';
 
 /** @returns {{zone: object, weights: Map<string, number>, share: number, own: boolean}|null} null before anything is asked, and when thin */
 export function standing() {
@@ -31,5 +32,5 @@ export function CalledStrip({ stand }) {
     <p class="deep"><a class="btn go" href=${`#/site/${site.value.id}/plants`}><${Icon} name="plants"/>${t('called.ask')}</a></p></section>`;
   const { zone, share, own } = stand;
   return html`<a class="called" href=${`#/site/${site.value.id}/zone`}><span class="fill" style=${{ width: `${share * 100}%`, '--b': zone.colour }}></span><${Tab} zone=${zone}/>
-    <span class="what"><b>${zone.short}</b><small>${own ? t('called.own') : t('called.line', { share: percentWords(share), odds: oddsWords(share), n: call.value.answers })}</small></span><${Icon} name="next"/></a>`;
+    <span class="what"><b>${zone.short}</b><small>${own ? t('called.own') : t('called.line', { share: percentWords(share), odds: oddsWords(share), n: call.value.answers })}</small></span><${Icon} name="next"/></a>${!own && html`<div class="part tight"><${Untested}/></div>`}`;
 }

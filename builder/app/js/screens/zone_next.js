@@ -5,7 +5,7 @@ import { call, region, site } from './state.js';
 import { Icon } from './parts/icon.js';
 import { Keep } from './keep.js';
 import { PatchShares } from './patches.js';
-import { Untested } from './zone_pane.js';
+import { Untested } from './parts/table_marks.js';
 
 /** @param {{answer: object, asked: boolean}} props */
 export function VerdictPart({ answer, asked }) {

@@ -7,6 +7,7 @@ import { oddsWords } from './say.js';
 import { heightMark } from './height_mark.js';
 import { EdgeEven, EdgeOpen } from './parts/edge_open.js';
 import { Reasons } from './parts/reasons.js';
+import { isUntested, Untested } from './parts/table_marks.js';
 import { Keep } from './keep.js';
 
 const beside = signal({ site: null, id: null });
@@ -43,17 +44,13 @@ function OffSlope({ region: here, answer }) {
 
 function Called({ region: here, answer }) {
   const zone = here.zone.get(answer.zone_id);
-  return html`<p class="odds"><b>${sentence(oddsWords(answer.belief[zone.id]))}</b> ${t('verdict.odds', { zone: zone.letter })}</p><${Untested}/>
+  const odds = oddsWords(answer.belief[zone.id]);
+  return html`<p class="odds">${isUntested() ? html`${t('verdict.by_tables')} <b>${odds}</b>` : html`<b>${sentence(odds)}</b>`} ${t('verdict.odds', { zone: zone.letter })}</p><${Untested}/>
     <p class="gist">${zone.one_line}</p><${Keep}/>`;
 }
 
 function Misfit({ region: here }) {
   return html`<h2>${t('verdict.misfit', { n: here.zones.length })}</h2><p class="small">${t('verdict.misfit_why')}</p>`;
-}
-
-/** Beside every belief, where no real plot has tested the tables. */
-export function Untested() {
-  return region.value.pack.proof?.tested_on === 'plots' ? null : html`<p class="untested">${t('proof.untested')}</p>`;
 }
 
 /** Edge and reasons, for the left pane. */
