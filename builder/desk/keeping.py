@@ -6,7 +6,7 @@ import threading
 from pathlib import Path
 
 from flask import Flask, current_app
-from sqlalchemy.exc import DBAPIError
+from sqlalchemy.exc import SQLAlchemyError
 from werkzeug.exceptions import ServiceUnavailable
 from werkzeug.wrappers import Response
 
@@ -45,12 +45,12 @@ class Keeping:
 def keep_records(app: Flask, state: Path, url: str) -> None:
     """Gives a desk its store. url: of a database; empty for a file among the desk's own"""
     app.extensions["records"] = Keeping(state, url)
-    for fault in (DBAPIError, StoreRefused):
+    for fault in (SQLAlchemyError, StoreRefused):
         app.register_error_handler(fault, _away)
 
 
 def _away(fault: Exception) -> Response:
-    current_app.logger.error("%s", fault)
+    current_app.logger.error("%s", fault, exc_info=fault)
     return current_app.make_response(current_app.handle_http_exception(ServiceUnavailable(AWAY)))
 
 

@@ -30,6 +30,7 @@ from sqlalchemy import (
     select,
     text,
 )
+from sqlalchemy.exc import ArgumentError
 
 from builder.records.sentences import read_sentences
 
@@ -134,10 +135,17 @@ class StoreRefused(Exception):  # noqa: N818 - told to the person
 
 
 class Database:
-    """One database, its tables made when they are not there."""
+    """One database, its tables made when they are not there.
+
+    Raises StoreRefused when there is no such kind of database, no driver for it, or when another
+    version of the program wrote it.
+    """
 
     def __init__(self, url: str) -> None:
-        self.engine = _engine(url)
+        try:
+            self.engine = _engine(url)
+        except (ArgumentError, ImportError) as fault:
+            raise StoreRefused(read_sentences()["store"]["no_such"]) from fault
         self._prepare()
 
     def _prepare(self) -> None:

@@ -9,6 +9,7 @@ import zipfile
 import pytest
 from sqlalchemy.exc import OperationalError
 
+from builder.desk.application import Settings, create_app
 from builder.desk.keeping import Keeping
 from builder.desk.record_map import hull
 from builder.records.exchange import Records
@@ -119,6 +120,24 @@ def test_the_record_page_shows_everything(client, store):
     assert client.get(f"{LIST}/one/none").status_code == 404
 
 
+def test_photos_are_shown_with_their_record_alone(client, store):
+    said = {
+        "id": "p",
+        "site_id": "a1",
+        "type": "image/png",
+        "caption": "<b>Rim</b>",
+        "taken_at": "",
+    }
+    photo = said | {"bytes": b"\x89PNG\r\n\x1a\n"}
+    store.take_in(Records(sites=[record(), record(id="b")], photos=[photo]))
+    assert "&lt;b&gt;Rim" in client.get(ONE).text
+    shown = client.get(f"{ONE}/photo/p")
+    assert (shown.data, shown.mimetype) == (photo["bytes"], "image/png")
+    assert shown.headers["X-Content-Type-Options"] == "nosniff"
+    for other in (f"{LIST}/one/b/photo/p", f"{ONE}/photo/q", f"{LIST}/one/none/photo/p"):
+        assert client.get(other).status_code == 404
+
+
 def decide(client, **changes):
     form = {
         "token": token(client), "revision": "1", "person": "Ana Ruiz", "reason": "Pines stand.",
@@ -192,6 +211,14 @@ def test_a_write_without_the_form_token_is_refused(client, store, path):
     assert client.post(path, data={"token": "guess"}).status_code == 403
     headers = {"Origin": "http://evil.example"}
     assert client.post(path, data={"token": token(client)}, headers=headers).status_code == 403
+
+
+def test_a_database_that_cannot_be_opened_is_told(app):
+    there = create_app(Settings(app.config["HOME"], app.config["OUT"], records="nosuch://x"))
+    answer = there.test_client().get(LIST)
+    assert answer.status_code == 503
+    assert b"The records cannot be reached" in answer.data
+    assert there.test_client().get(f"{REGION}/proof").status_code == 200
 
 
 def test_a_store_that_cannot_be_reached_is_told(client, monkeypatch):

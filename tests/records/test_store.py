@@ -226,6 +226,12 @@ def test_a_store_of_another_version_is_refused(tmp_path):
         Database(url)
 
 
+@pytest.mark.parametrize("url", ["nonsense", "nosuch://x/y", "mysql+nosuch://x/y"])
+def test_a_url_nobody_can_open_is_told(url):
+    with pytest.raises(StoreRefused, match="No database goes by that URL"):
+        Database(url)
+
+
 def test_a_key_is_kept_only_as_its_hash_and_can_be_revoked(in_file, tmp_path):
     key = make_device(in_file, "Blue phone")
     (one,) = devices(in_file)
