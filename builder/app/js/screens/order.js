@@ -9,6 +9,7 @@ import { Frame } from './parts/frame.js';
 import { Choice, Field, Stepper } from './parts/choice.js';
 import { readNumber } from './parts/read_number.js';
 import { Icon } from './parts/icon.js';
+import { Invented } from './parts/table_marks.js';
 import { mixOf, windowsOf } from './pack_reading.js';
 import { remarkWords } from './order_words.js';
 import { Tag } from './order_tag.js';
@@ -43,7 +44,7 @@ export function Order({ stand }) {
     setSteps(steps + 1);
   };
   return html`<${Frame} tab="reclaim" act=${act} edge=${false} class="whole-width" title=${t('order.title')} line=${`${record.unit_name || record.name}. ${stand.zone.short}`} back=${back}>
-    <section class="part lead0"><${Stepper} less=${t('order.less')} more=${t('order.more')} onLess=${() => step(-AREA_STEP)} onMore=${() => step(AREA_STEP)}>
+    <section class="part lead0"><${Invented}/><${Stepper} less=${t('order.less')} more=${t('order.more')} onLess=${() => step(-AREA_STEP)} onMore=${() => step(AREA_STEP)}>
       <${Field} key=${steps} label=${t('order.area')} mode="decimal" unit=${areaSign()} value=${sized ? areaShown(kept.area_ha) : ''} limits=${AREA_LIMITS} onChange=${(text) => put({ area_ha: areaFrom(readNumber(text, ...AREA_LIMITS)) })}/></${Stepper}>
       <${Choice} label=${t('order.method')} options=${(methods.length ? methods : [mix.method]).map((value) => ({ value, label: t(`method.${value}`) }))} value=${kept.method} onPick=${(method) => put({ method })} row/></section>
     <section class="part"><h2 class="sides">${t('order.bags')}<span class="label">${t('order.to_buy')}</span></h2>

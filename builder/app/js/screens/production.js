@@ -42,6 +42,9 @@ export function expected(here, stand, rainShare, warmer = null) {
   return { normal: range(1, 0), year: known ? range(rainShare ?? 1, warmer ?? 0) : null };
 }
 
+/** True where a disturbance is marked, on Place or on Reclaim, that changes what grows. */
+const isDisturbed = (here, record) => [record.disturbance, record.reclaim.disturbance].some((id) => here.disturbances.find((one) => one.id === id)?.disturbs);
+
 function Expected({ stand, record }) {
   const here = region.value;
   const own = here.pack.production[stand.zone.id];
@@ -56,6 +59,7 @@ function Expected({ stand, record }) {
         ${measured && html` ${t('production.you_have')} <b class="mine">${measured.take === null ? yieldWords(measured.mean) : t('production.give_or_take', { mean: number(yieldShown(measured.mean)), take: number(yieldShown(measured.take)) })}</b>.`}</p>
       ${place && isProvisional({ rain_source: from }) && html`<p class="small care">${t('production.provisional')}</p>`}
       <${RangeBar} zone=${stand.zone} range=${[low, high]} normal=${year ? normal : null} middle=${year ? null : own.normal_kg_ha} measured=${measured}/>
+      ${isDisturbed(here, record) && html`<p class="small care">${t('production.undisturbed', { zone: stand.zone.short })}</p>`}
       <p class="small quiet">${t('production.counted', { counted: own.counted })} ${t('production.not_forage')}</p>
       <${Source} what=${t('production.these')} region=${here} keys=${[own.source]}/></section>
     <${Rain} record=${record} own=${own}/><${Measured} record=${record} zone=${stand.zone}/>

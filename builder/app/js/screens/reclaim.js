@@ -8,6 +8,7 @@ import { Icon } from './parts/icon.js';
 import { Later } from './parts/later.js';
 import { monthsWords, YearWork } from './parts/year.js';
 import { Source } from './parts/source.js';
+import { Invented } from './parts/table_marks.js';
 import { CalledStrip, standing } from './standing_zone.js';
 import { mixOf, notesOf, weedsFor, windowsOf, yearOf } from './pack_reading.js';
 import { carriedZone } from './records.js';
@@ -92,7 +93,7 @@ function Sow({ zone }) {
   const here = region.value;
   const mix = mixOf(here, zone.id);
   if (!mix) return null;
-  return html`<section class="part"><h2 class="sides">${t('reclaim.mix')}<span class="label">${t('order.per_m2')}</span></h2>
+  return html`<section class="part"><h2 class="sides">${t('reclaim.mix')}<span class="label">${t('order.per_m2')}</span></h2><${Invented}/>
     ${mix.plants.length === 0 && html`<p>${t('reclaim.no_seed')}</p>`}
     <ul class="plain-list">${mix.plants.map(({ id, seeds_m2 }) => html`<li key=${id} class="two-sides"><span>${here.plant.get(id).common}</span><b>${seeds_m2}</b></li>`)}</ul>
     ${mix.plants.length > 0 && html`<p class="small">${t('reclaim.rate_is', { method: t(`method.${mix.method}`) })} ${mix.other_method ? t('reclaim.other', { other: sentence(mix.other_method) }) : ''}</p>`}

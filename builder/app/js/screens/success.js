@@ -7,6 +7,7 @@ import { Frame } from './parts/frame.js';
 import { Choice, Field, Typed } from './parts/choice.js';
 import { readNumber } from './parts/wheel.js';
 import { standardsOf, normalsOf } from './pack_reading.js';
+import { Invented } from './parts/table_marks.js';
 import { Trajectory } from './trajectory.js';
 
 const MEASURES = { cover: '%', production: 'kg/ha', density: 'per m²' };
@@ -27,7 +28,7 @@ function ByStandard({ stand }) {
   const rule = ruleOf({ region: here.pack.success_rule, zone: standardsOf(here, stand.zone.id) ?? {}, rain_mm, measure: kept.measure, against: kept.against });
   const unit = MEASURES[kept.measure];
   return html`<${Frame} tab="reclaim" edge=${false} class="whole-width" title=${t('success.title')} line=${record.unit_name || record.name} back=${`#/site/${record.id}/reclaim`}>
-    <section class="part lead0"><${Choice} label=${t('success.measure')} options=${Object.keys(MEASURES).map((value) => ({ value, label: t(`success.${value}`) }))} value=${kept.measure} onPick=${(measure) => put({ measure })} row/>
+    <section class="part lead0"><${Invented}/><${Choice} label=${t('success.measure')} options=${Object.keys(MEASURES).map((value) => ({ value, label: t(`success.${value}`) }))} value=${kept.measure} onPick=${(measure) => put({ measure })} row/>
       <${Choice} label=${t('success.against')} options=${['reference', 'standard'].map((value) => ({ value, label: t(`success.${value}`) }))} value=${kept.against} onPick=${(against) => put({ against })} row/>
       ${kept.against === 'reference' && html`<p class="small">${referenceWords(here, stand.zone, record)}</p>`}</section>
     <section class="part stack"><${Numbers} label=${t('success.values', { unit })} values=${kept.values} onValues=${(values) => put({ values })}/>

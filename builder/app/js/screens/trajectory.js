@@ -6,6 +6,7 @@ import { change, region, site } from './state.js';
 import { Frame } from './parts/frame.js';
 import { Field, Typed } from './parts/choice.js';
 import { readNumber } from './parts/read_number.js';
+import { Invented } from './parts/table_marks.js';
 
 const MOST_YEARS = 200;
 
@@ -18,7 +19,7 @@ export function Trajectory({ zone, success }) {
   const rule = ruleOf({ region: here.pack.success_rule, zone: success, rain_mm: null });
   const course = kept.years_since === null ? null : trajectoryCheck({ lines: success.trajectory, plots: kept.plots, year: kept.years_since, rule: { ...rule, least: 2 } });
   return html`<${Frame} tab="reclaim" edge=${false} class="whole-width" title=${t('success.title')} line=${record.unit_name || record.name} back=${`#/site/${record.id}/reclaim`}>
-    <section class="part lead0"><${Field} label=${t('success.years_since')} mode="decimal" limits=${[0, MOST_YEARS]} value=${kept.years_since ?? ''} onChange=${(text) => put({ years_since: readNumber(text, 0, MOST_YEARS) })}/></section>
+    <section class="part lead0"><${Invented}/><${Field} label=${t('success.years_since')} mode="decimal" limits=${[0, MOST_YEARS]} value=${kept.years_since ?? ''} onChange=${(text) => put({ years_since: readNumber(text, 0, MOST_YEARS) })}/></section>
     ${success.trajectory.map((row, i) => html`<${Line} key=${`${zone.id} ${row.measure}`} row=${row} course=${course?.[i]} values=${kept.plots[row.measure] ?? []} onValues=${(values) => put({ plots: { ...kept.plots, [row.measure]: values } })}/>`)}
     <section class="part small quiet stack"><p>${here.texts.region.success_rule}</p><p>${t('reclaim.defer')}</p></section></${Frame}>`;
 }
