@@ -2,6 +2,7 @@
 
 from __future__ import annotations
 
+import os
 import threading
 from pathlib import Path
 
@@ -29,10 +30,15 @@ class Keeping:
         """The database, made when it is not there."""
         with self.lock:
             if self.opened is None:
-                if not self.url:
-                    self.state.mkdir(parents=True, exist_ok=True, mode=0o700)
-                self.opened = Database(self.url or f"sqlite:///{self.state / FILE}")
+                self.opened = Database(self.url or f"sqlite:///{self._file()}")
             return self.opened
+
+    def _file(self) -> Path:
+        """The desk's own file, which nobody else on this computer may read."""
+        self.state.mkdir(parents=True, exist_ok=True, mode=0o700)
+        path = self.state / FILE
+        os.close(os.open(path, os.O_CREAT | os.O_RDWR, 0o600))
+        return path
 
     def close(self) -> None:
         """Lets go of the database."""

@@ -73,12 +73,12 @@ def write_archive(records: Records, knowledge: Knowledge, names: bool = False) -
         rows[OCCURRENCES.file] += _occurrences(site, known)
         rows[MEASUREMENTS.file] += _measurements(site, known)
     made = io.BytesIO()
-    with zipfile.ZipFile(made, "w", zipfile.ZIP_DEFLATED) as packed:
-        packed.writestr(zipfile.ZipInfo("meta.xml", ZIP_TIME), meta_xml())
+    with zipfile.ZipFile(made, "w") as packed:
+        packed.writestr(zipfile.ZipInfo("meta.xml", ZIP_TIME), meta_xml(), zipfile.ZIP_DEFLATED)
         for sheet in SHEETS:
             lines = [sheet.terms, *rows[sheet.file]]
             text = "".join("\t".join(map(_cell, line)) + "\n" for line in lines)
-            packed.writestr(zipfile.ZipInfo(sheet.file, ZIP_TIME), text)
+            packed.writestr(zipfile.ZipInfo(sheet.file, ZIP_TIME), text, zipfile.ZIP_DEFLATED)
     return made.getvalue()
 
 

@@ -213,6 +213,13 @@ def test_a_write_without_the_form_token_is_refused(client, store, path):
     assert client.post(path, data={"token": token(client)}, headers=headers).status_code == 403
 
 
+def test_records_are_readable_by_nobody_else(app, store):
+    keep(store, record())
+    files = list((app.config["STATE"]).glob("records.sqlite*"))
+    assert len(files) >= 1
+    assert {path.stat().st_mode & 0o077 for path in files} == {0}
+
+
 def test_a_database_that_cannot_be_opened_is_told(app):
     there = create_app(Settings(app.config["HOME"], app.config["OUT"], records="nosuch://x"))
     answer = there.test_client().get(LIST)
