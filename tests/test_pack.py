@@ -6,6 +6,7 @@ from pathlib import Path
 
 import numpy as np
 import pytest
+from helpers import three_zone_files, write_region
 
 from builder.key.compile import compile_key
 from builder.key.prepare import prepare
@@ -93,6 +94,37 @@ def test_texts_of_each_language_hold_the_same_ids(region):
         assert other["zones"] != english["zones"]
     with pytest.raises(KeyError):
         compile_texts(region, "xx")
+
+
+def test_two_cautions_of_a_plant_are_not_made_one_in_another_language(region):
+    import dataclasses
+
+    words = region.words["es"].plant_cautions
+    plant = next(one for one in region.plants if one.id in words)
+    second = dataclasses.replace(plant.cautions[0], text="Its sap blisters the skin.")
+    twice = dataclasses.replace(plant, cautions=(*plant.cautions, second))
+    plants = tuple(twice if one is plant else one for one in region.plants)
+    changed = dataclasses.replace(region, plants=plants)
+    told = compile_texts(changed, "es")["plants"][plant.id]["cautions"]
+    assert [one["text"] for one in told] == [one.text for one in twice.cautions]
+    once = compile_texts(region, "es")["plants"][plant.id]["cautions"]
+    assert [one["text"] for one in once] == [words[plant.id]]
+
+
+def test_notes_and_mix_carry_the_source_their_tables_give(region, tmp_path):
+    texts = compile_texts(region, "en")
+    for zone_id, mix in region.mixes.items():
+        assert texts["seed"][zone_id]["sources"] == [region.source_of(mix).text]
+        notes = texts["reclaim"]["zones"][zone_id]
+        assert notes["sources"] == ["common practice"]
+        assert {tuple(cell["sources"]) for cell in notes["by_disturbance"].values()} == {
+            ("common practice",)
+        }
+    files = three_zone_files()
+    files["reclaim.yaml"] = files["reclaim.yaml"].replace("source: common practice", "source: demo")
+    other = load_region(write_region(tmp_path / "other", files)).region
+    told = compile_texts(other, "en")["reclaim"]["zones"]
+    assert {tuple(notes["sources"]) for notes in told.values()} == {("demo",)}
 
 
 def test_evidence_survives_the_short_form(region, content):

@@ -7,8 +7,9 @@
                  lookalike_tell, best_season, cautions [who, level, text], source
     groups, disturbances   by id: {name}; cover: {class code: label}
     questions    by id: ask, why, act, answers {value: label}; rules by id: why, act
-    production, soils, seed  by zone: the words beside their figures
-    reclaim      general [id, text]; zones: notes and by_disturbance {id: do, avoid, expect}
+    production, soils, seed  by zone: the words beside their figures; seed with its sources
+    reclaim      general [id, text]; zones: notes with their sources, and by_disturbance
+                 {id: do, avoid, expect, sources}
     sources      by key: text, read
 
 Longer notes fall back to English; `fallback` names them.
@@ -38,8 +39,10 @@ def compile_texts(region: Region, language: str) -> dict[str, Any]:
         name = words.plants.get(plant.id)
         texts["plants"][plant.id]["common"] = name or plant.scientific
     for plant_id, caution in words.plant_cautions.items():
-        for one in texts["plants"][plant_id]["cautions"]:
-            one["text"] = caution
+        told = texts["plants"][plant_id]["cautions"]
+        # The words file holds one text a plant: beside two cautions it would hide one of them.
+        if len(told) == 1:
+            told[0]["text"] = caution
     for kind, names in (("disturbances", words.disturbances), ("groups", words.groups)):
         for name_id, name in names.items():
             texts[kind][name_id]["name"] = name
@@ -92,10 +95,10 @@ def _english(region: Region) -> dict[str, Any]:
             zone: {"summary": one.summary, "restriction": one.restriction}
             for zone, one in region.soils.items()
         },
-        "seed": {zone: _seed(one) for zone, one in region.mixes.items()},
+        "seed": {zone: _seed(region, one) for zone, one in region.mixes.items()},
         "reclaim": {
             "general": [{"id": one.id, "text": one.text} for one in region.reclaim.general],
-            "zones": {zone: _notes(one) for zone, one in region.reclaim.zones.items()},
+            "zones": {zone: _notes(region, one) for zone, one in region.reclaim.zones.items()},
         },
         "sources": {
             name: {"text": one.text, "read": one.read} for name, one in region.sources.items()
@@ -140,8 +143,10 @@ def _plant(region: Region, plant: Plant) -> dict[str, Any]:
     return made
 
 
-def _seed(mix: Any) -> dict[str, Any]:
+def _seed(region: Region, mix: Any) -> dict[str, Any]:
+    rates = [("plants", plant_id) for plant_id in mix.plants]
     return {
+        "sources": _sources(region, mix, [("method",), *rates]),
         "other_method": mix.other_method,
         "fertiliser": mix.fertiliser,
         "source_rule": mix.source_rule,
@@ -150,7 +155,13 @@ def _seed(mix: Any) -> dict[str, Any]:
     }
 
 
-def _notes(notes: ZoneNotes) -> dict[str, Any]:
+def _sources(region: Region, record: Any, paths: list[tuple[str, ...]]) -> list[str]:
+    """Every source that stands behind the paths below a record, each once, in order of paths."""
+    found = (region.source_of(record, *path) for path in paths)
+    return list(dict.fromkeys(one.text for one in found if one is not None))
+
+
+def _notes(region: Region, notes: ZoneNotes) -> dict[str, Any]:
     names = (
         "topsoil",
         "seedbed",
@@ -163,10 +174,16 @@ def _notes(notes: ZoneNotes) -> dict[str, Any]:
     )
     return {
         **{name: getattr(notes, name) for name in names},
+        "sources": _sources(region, notes, [(name,) for name in names]),
         "wildlife": dict(notes.wildlife),
         "soil_life": dict(notes.soil_life),
         "by_disturbance": {
-            name: {"do": cell.do, "avoid": cell.avoid, "expect": cell.expect}
+            name: {
+                "do": cell.do,
+                "avoid": cell.avoid,
+                "expect": cell.expect,
+                "sources": _sources(region, cell, [("do",), ("avoid",)]),
+            }
             for name, cell in notes.by_disturbance.items()
         },
     }

@@ -43,7 +43,7 @@ function Notes({ zone }) {
     <section class="part"><${Choice} label=${t('reclaim.damage')} options=${damages.map((one) => ({ value: one.id, label: one.name }))} value=${chosen} onPick=${(value) => change({ reclaim: { ...record.reclaim, disturbance: value } }, t('undo.disturbance'))}/></section>
     <${When} zone=${zone} record=${record}/>
     <section class="part"><dl class="notes">${cell ? html`<dt>${t('reclaim.do')}</dt><dd>${cell.do}</dd><dt>${t('reclaim.avoid')}</dt><dd>${cell.avoid}</dd>` : html`<dt>${t('reclaim.do')}</dt><dd class="quiet">${t('reclaim.pick_damage')}</dd>`}
-      ${NOTES.filter((name) => notes[name]).map((name) => html`<dt key=${name}>${t(`reclaim.${name}`)}</dt><dd>${notes[name]}</dd>`)}</dl><${Source} what=${t('reclaim.these')} region=${here} keys=${['common practice']}/></section>
+      ${NOTES.filter((name) => notes[name]).map((name) => html`<dt key=${name}>${t(`reclaim.${name}`)}</dt><dd>${notes[name]}</dd>`)}</dl><${Source} what=${t('reclaim.these')} region=${here} keys=${[...(notes.sources ?? []), ...(cell?.sources ?? [])]}/></section>
     <${Sow} zone=${zone}/><${Weeds} zone=${zone}/><${Life} notes=${notes}/>`;
 }
 
@@ -97,6 +97,7 @@ function Sow({ zone }) {
     ${mix.plants.length === 0 && html`<p>${t('reclaim.no_seed')}</p>`}
     <ul class="plain-list">${mix.plants.map(({ id, seeds_m2 }) => html`<li key=${id} class="two-sides"><span>${here.plant.get(id).common}</span><b>${seeds_m2}</b></li>`)}</ul>
     ${mix.plants.length > 0 && html`<p class="small">${t('reclaim.rate_is', { method: t(`method.${mix.method}`) })} ${mix.other_method ? t('reclaim.other', { other: sentence(mix.other_method) }) : ''}</p>`}
+    <${Source} what=${t('reclaim.these_rates')} region=${here} keys=${mix.sources ?? []}/>
     <p class="deep"><a class="btn" href=${`#/site/${site.value.id}/reclaim/topsoil`}><${Icon} name="pit"/>${t('topsoil.title')}</a><a class="btn" href=${`#/site/${site.value.id}/reclaim/test`}><${Icon} name="test"/>${t('success.title')}</a></p></section>`;
 }
 

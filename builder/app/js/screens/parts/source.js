@@ -8,6 +8,7 @@ import { Icon } from './icon.js';
 export function Source({ what, region, keys }) {
   const [open, setOpen] = useState(false);
   const rows = [...new Set(keys.filter(Boolean))];
+  if (rows.length === 0) return null;
   return html`<div class="source"><button type="button" class="link small" aria-expanded=${String(open)} onClick=${() => setOpen(!open)}><${Icon} name="source"/>${t('source.key', { what })}</button>
     ${open && html`<ul>${rows.map((key) => html`<li key=${key} class="small">${provenance(region, key)}</li>`)}</ul>`}</div>`;
 }
