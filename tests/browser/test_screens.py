@@ -18,7 +18,10 @@ FOUND = [
     ("poa_fendleriana", "2"),
     ("symphoricarpos_oreophilus", "1"),
 ]
-BOOK = ["", "/plants", "/chart", "/covers", "/soil", "/sources", "/zone/mtnsage", "/zone/wetmeadow"]
+BOOK = [
+    "", "/cautions", "/plants", "/chart", "/covers", "/soil", "/sources", "/zone/mtnsage",
+    "/zone/wetmeadow",
+]  # fmt: skip
 SITE = [
     "place", "plants", "plants/first", "plants/find", "plants/listed", "zone", "production",
     "production/clip", "reclaim", "reclaim/order", "reclaim/test", "reclaim/topsoil",

@@ -1,6 +1,6 @@
 /** One plant or group that the person picked: its card and the answer keys. */
 import { html } from 'htm/preact';
-import { lookAlikes } from '../core/index.js';
+import { lookAlikes, visible } from '../core/index.js';
 import { t } from './words.js';
 import { call, go, region, site } from './state.js';
 import { enter, findingOf, leaveOut } from './findings.js';
@@ -21,6 +21,7 @@ export function AnswerPage({ thing, naming, root }) {
   };
   return html`<${Danger} plant=${thing}/><div class="told">
       ${group ? html`<${GroupCard} group=${thing} region=${here}/>` : html`<${PlantCard} plant=${thing} why=${t(naming ? 'plants.covers_most' : 'plants.picked')}/>`}
+      ${!group && visible(here.pack, record, thing.id) === 'gone' && html`<p class="hint"><${Icon} name="plants"/><span>${t('listed.off_season_why')}</span></p>`}
       ${!group && html`<${Guard} plant=${thing} region=${here} root=${root}/>`}
       <div class="push"></div><${UndoLine}/></div>
     <div class="answer"><${CoverKeys} region=${here} finding=${old} none=${!naming} onAnswer=${given}/>

@@ -15,11 +15,12 @@ const PlantsPage = Later(() => import('./book_plants.js'), 'PlantsPage');
 const PlantPage = Later(() => import('./book_plants.js'), 'PlantPage');
 const Chart = Later(() => import('./book_chart.js'), 'Chart');
 const Covers = Later(() => import('./book_covers.js'), 'Covers');
+const Dangers = Later(() => import('./book_cautions.js'), 'Cautions');
 const Feel = Later(() => import('./book_feel.js'), 'Feel');
 
-const CONTENTS = [['plants', 'plants'], ['chart', 'zone'], ['covers', 'place'], ['soil', 'pit'], ['sources', 'source']];
+const CONTENTS = [['cautions', 'warn'], ['plants', 'plants'], ['chart', 'zone'], ['covers', 'place'], ['soil', 'pit'], ['sources', 'source']];
 
-/** @param {{parts: string[]}} props [] · ['zone', id] · ['plant', id] · ['plants'] · ['chart'] · ['covers'] · ['soil'] · ['sources'] */
+/** @param {{parts: string[]}} props [] · ['zone', id] · ['plant', id] · ['plants'] · ['chart'] · ['covers'] · ['soil'] · ['cautions'] · ['sources'] */
 export function Book({ parts: [page = 'contents', id] }) {
   const here = region.value;
   const zone = here.zone.get(id);
@@ -31,6 +32,7 @@ export function Book({ parts: [page = 'contents', id] }) {
   if (page === 'chart') return html`<${Page} title=${t('book.chart')} line=${t('book.chart_line')} back="#/book"><${Chart}/></${Page}>`;
   if (page === 'covers') return html`<${Page} title=${t('book.covers')} line=${t('book.covers_line')} back="#/book" still><${Covers}/></${Page}>`;
   if (page === 'soil') return html`<${Page} title=${t('feel.title')} line=${t('feel.line')} back="#/book"><${Feel}/></${Page}>`;
+  if (page === 'cautions') return html`<${Page} title=${t('book.cautions')} line=${line} back="#/book" still><${Dangers}/></${Page}>`;
   if (page === 'sources') return html`<${Page} title=${t('book.sources')} line=${line} back="#/book" still><${Sources}/></${Page}>`;
   return html`<${Page} title=${t('book.title')} line=${line} edge=${html`<${EdgeIndex} region=${here} current=${null}/>`}><${Contents}/></${Page}>`;
 }

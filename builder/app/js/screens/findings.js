@@ -1,4 +1,5 @@
 /** Findings of the open site check: look up, enter, take out. One finding for each plant or group. */
+import { visible } from '../core/index.js';
 import { change, say, site } from './state.js';
 import { findingWords } from './say.js';
 import { t } from './words.js';
@@ -8,6 +9,11 @@ const idOf = (finding) => finding.plant_id ?? finding.group_id;
 /** The finding for a plant or group, or undefined. */
 export function findingOf(record, id) {
   return record.findings.find((finding) => idOf(finding) === id);
+}
+
+/** True where a plant was looked for in vain in a month in which nobody could see it: the key leaves that out. */
+export function isOffSeason(region, record, finding) {
+  return finding.state === 'not_found' && Boolean(finding.plant_id) && visible(region.pack, record, finding.plant_id) === 'gone';
 }
 
 /** How many plants were named as covering most. */
@@ -24,7 +30,7 @@ export function enter(region, thing, answer) {
   const others = site.value.findings.filter((one) => idOf(one) !== thing.id);
   const told = t('undo.entry', { name: nameOf(region, finding), answer: findingWords(region, finding) });
   change({ findings: renamed([...others, finding]) }, told);
-  say(told);
+  say(isOffSeason(region, site.value, finding) ? `${told}. ${t('listed.off_season')}` : told);
 }
 
 const keptName = (old, answer) => (answer.state === 'found' ? old?.named ?? null : null);

@@ -3,7 +3,7 @@ import { html } from 'htm/preact';
 import { t } from './words.js';
 import { region, site } from './state.js';
 import { findingWords } from './say.js';
-import { nameOf } from './findings.js';
+import { isOffSeason, nameOf } from './findings.js';
 import { Hoop } from './parts/hoop.js';
 import { Icon } from './parts/icon.js';
 import { SearchedAll } from './searched.js';
@@ -16,7 +16,7 @@ export function Listed({ root }) {
   return html`<div class="found"><h2 class="head">${t('listed.title')}</h2>
     ${rows.length === 0 && html`<p class="quiet">${t('listed.empty')}</p>`}
     <ul>${rows.map((one) => html`<li key=${one.plant_id ?? one.group_id}><a class="row" href=${`${root}/enter/${one.plant_id ?? one.group_id}`}>
-      <${Picture} finding=${one} region=${here}/><span class="what">${nameOf(here, one)}${one.named ? html` <span class="label">${t('listed.named', { n: one.named })}</span>` : ''}</span>
+      <${Picture} finding=${one} region=${here}/><span class="what">${nameOf(here, one)}${one.named ? html` <span class="label">${t('listed.named', { n: one.named })}</span>` : ''}${isOffSeason(here, site.value, one) ? html`<span class="small quiet">${t('listed.off_season')}</span>` : ''}</span>
       <b class="mine">${findingWords(here, one)}</b></a></li>`)}</ul>
     <${SearchedAll}/><${UndoLine}/></div>`;
 }
