@@ -89,9 +89,9 @@ def _long(table: Table, shown: str) -> tuple[pd.DataFrame | None, list[Problem]]
         return None, [problem_at(Place(shown, table.header, 1), "plots-header", wrong, LONG_FIX)]
     rows = pd.DataFrame(
         {
-            PLOT: frame[PLOT].str.strip(),
-            PLANT: frame[PLANT].str.strip(),
-            "cover": frame[cover].str.strip(),
+            PLOT: _stripped(frame[PLOT]),
+            PLANT: _stripped(frame[PLANT]),
+            "cover": _stripped(frame[cover]),
             "line": table.lines,
         }
     )
@@ -112,6 +112,13 @@ def _long(table: Table, shown: str) -> tuple[pd.DataFrame | None, list[Problem]]
         problems += _some([problem_at(place, check, wrong, fix) for place in places])
     rows["column"] = column(cover) + 1
     return rows[(rows[PLOT] != "") & (rows[PLANT] != "")].reset_index(drop=True), problems
+
+
+def _stripped(column: pd.Series) -> NDArray[np.object_]:
+    """A column's cells without blanks about them; a word that stands often is looked at once."""
+    code, words = pd.factorize(column)
+    stripped: NDArray[np.object_] = np.array([word.strip() for word in words], object)
+    return np.asarray(stripped[code])
 
 
 def _wide(table: Table, shown: str) -> tuple[pd.DataFrame | None, list[Problem]]:
