@@ -14,7 +14,6 @@ import threading
 from collections.abc import Iterator
 from contextlib import contextmanager
 from pathlib import Path
-from statistics import median
 from typing import TYPE_CHECKING, Any
 
 from builder.bench.measure import Goal, Measure, NotHere, Setting, Taken
@@ -64,14 +63,14 @@ TAP = """(at) => new Promise((done, fail) => {
 SCORE = """async (text) => {
   const key = await import('/core/index.js');
   const { pack, sites } = JSON.parse(text);
-  const timed = (work) => sites.map((site) => {
+  const timed = () => sites.map((site) => {
     const start = performance.now();
-    work(site);
+    key.call(pack, site);
     return performance.now() - start;
   });
-  const score = (site) => { key.verdictOf(pack, site); key.prompts(pack, site); };
-  timed(score);
-  return { both: timed(score), call: timed((site) => key.call(pack, site)) };
+  timed();
+  timed();
+  return timed();
 }"""
 
 
@@ -188,7 +187,7 @@ def _leading(region: Region, count: int) -> list[str]:
 
 
 def scoring(setting: Setting) -> Taken:
-    """Belief, verdict and the ranking of every prompt for one site check, 40 x 400."""
+    """A whole call: belief, verdict, reasons and the ranking of every prompt, 40 x 400."""
     _browser_path()
     region = region_of(setting.large_checked)
     plots, _ = region_plots(region, setting.size(60, 12))
@@ -198,8 +197,8 @@ def scoring(setting: Setting) -> Taken:
         page.goto(f"{address}core/")
         _slow(page)
         made = page.evaluate(SCORE, given)
-    note = f"{SLOWER} times slower, {ZONES_PLANTS}, one run a site; with reasons"
-    return Taken(tuple(made["both"]), None, f"{note} {median(made['call']):.1f} ms.")
+    note = f"{SLOWER} times slower, {ZONES_PLANTS}, one run a site, reasons included."
+    return Taken(tuple(made), None, note)
 
 
 def _sites(region: Region, plots: Plots) -> list[dict[str, Any]]:
