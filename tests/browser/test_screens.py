@@ -367,6 +367,77 @@ def test_a_subspecies_is_not_ordered_by_its_species_name(app, records_file):
     assert app.page.get_by_role("button", name="Print the order").count() == 0
 
 
+def test_an_area_is_typed_and_a_bad_one_is_named_at_its_field(app, records_file):
+    show(app, f"site/{records_file[1]['sage']}/reclaim/order")
+    page = app.page
+    area = page.locator(".slide").get_by_role("textbox")
+    live = page.locator(".bag .kg small").first
+    area.fill("10")
+    whole = float(live.inner_text().split()[0])
+    area.fill("2,5")
+    assert float(live.inner_text().split()[0]) == pytest.approx(whole / 4, abs=0.005)
+    area.fill("2,5 ha")
+    page.get_by_text("Type a number from 0.01 to 100,000.").wait_for()
+    assert live.inner_text() == ""
+    assert page.get_by_role("button", name="Print the order").count() == 0
+    page.get_by_role("button", name="More area").click()
+    assert area.input_value() == "0.5"
+    assert float(live.inner_text().split()[0]) == pytest.approx(whole / 20, abs=0.005)
+
+
+def test_no_bag_is_red_before_its_tag_or_the_print_key_is_touched(app, records_file):
+    show(app, f"site/{records_file[1]['edge']}/reclaim/order")
+    page = app.page
+    bags = page.locator(".bag").count()
+    assert bags > 1
+    assert page.locator(".bag.held, .bag .hold").count() == 0
+    assert page.locator(".bag", has_text="Tag not typed yet").count() == bags
+    page.get_by_role("button", name="Print the order").click()
+    page.locator(".bag.held").first.wait_for()
+    assert page.locator(".bag.held").count() == bags
+    assert page.get_by_role("button", name="Print the order").count() == 0
+
+
+def test_every_page_with_odds_says_that_no_real_plot_tested_it(app, records_file):
+    site_id = records_file[1]["sage"]
+    for page in (f"site/{site_id}/production", f"site/{site_id}/reclaim", "sites"):
+        show(app, page)
+        assert app.page.get_by_text("not tested on real plots").count() == 1, page
+    for page in ("reclaim", "reclaim/order", "reclaim/test"):
+        show(app, f"site/{site_id}/{page}")
+        assert app.page.get_by_text("Invented district").count() == 1, page
+
+
+def test_a_disturbed_site_is_told_what_its_range_is_of(app, records_file):
+    told = "says nothing yet of this disturbed ground"
+    show(app, f"site/{records_file[1]['sage']}/production")
+    assert app.page.get_by_text(told).count() == 1
+    show(app, f"site/{records_file[1]['sage']}/place")
+    app.page.get_by_role("button", name="Undisturbed ground").first.click()
+    show(app, f"site/{records_file[1]['sage']}/production")
+    assert app.page.get_by_text(told).count() == 0
+
+
+def test_a_plant_looked_for_out_of_its_season_says_that_it_does_not_weigh(app, records_file):
+    """Low larkspur is known from April to June; the site check is of July."""
+    site_id = records_file[1]["sage"]
+    show(app, f"site/{site_id}/plants/enter/delphinium_nuttallianum")
+    assert app.page.locator(".told .hint", has_text="Not in season now").count() == 1
+    app.page.get_by_role("button", name="not found").click()
+    app.page.locator("input[type=search]").wait_for()
+    show(app, f"site/{site_id}/plants/listed")
+    told = app.page.locator(".row", has_text="does not weigh")
+    assert told.count() == 1
+    assert "larkspur" in told.inner_text().lower()
+
+
+def test_the_book_holds_every_caution_of_the_region(app, demo_files):
+    texts = json.loads(demo_files["regions/sorrel_plateau/texts.en.json"])
+    show(app, "book/cautions")
+    said = app.page.locator("main").inner_text()
+    assert [one["id"] for one in texts["region"]["cautions"] if one["text"] not in said] == []
+
+
 def test_a_site_check_by_keyboard_alone(app, records_file):
     """From the list to a new record, three plants named, one answer, and the zone: no pointer used."""
     page = app.page
