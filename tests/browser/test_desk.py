@@ -122,7 +122,8 @@ def test_a_form_tells_a_problem_as_it_is_typed_and_works_without_script(desk, pa
     assert "1 change saved." in plain.locator(".note").inner_text()
     assert "centre_m: 1080" in (tmp_path / "keydata/willow_breaks/zones.yaml").read_text()
     plain.locator('[data-key="zones/0/centre_m"]').fill("1090")
-    plain.keyboard.press("Enter")  # saves, whatever other buttons stand in the form
+    with plain.expect_navigation():
+        plain.keyboard.press("Enter")  # saves, whatever other buttons stand in the form
     assert "1 change saved." in plain.locator(".note").inner_text()
     assert "centre_m: 1090" in (tmp_path / "keydata/willow_breaks/zones.yaml").read_text()
     context.close()
