@@ -386,8 +386,10 @@ def test_an_area_is_typed_and_a_bad_one_is_named_at_its_field(app, records_file)
 
 
 def test_no_bag_is_red_before_its_tag_or_the_print_key_is_touched(app, records_file):
+    show(app, "sites")
     show(app, f"site/{records_file[1]['edge']}/reclaim/order")
     page = app.page
+    page.locator(".bag").first.wait_for()
     bags = page.locator(".bag").count()
     assert bags > 1
     assert page.locator(".bag.held, .bag .hold").count() == 0
@@ -402,16 +404,20 @@ def test_every_page_with_odds_says_that_no_real_plot_tested_it(app, records_file
     site_id = records_file[1]["sage"]
     for page in (f"site/{site_id}/production", f"site/{site_id}/reclaim", "sites"):
         show(app, page)
-        assert app.page.get_by_text("not tested on real plots").count() == 1, page
+        told = app.page.get_by_text("not tested on real plots")
+        told.first.wait_for()
+        assert told.count() == 1, page
     for page in ("reclaim", "reclaim/order", "reclaim/test"):
         show(app, f"site/{site_id}/{page}")
-        assert app.page.get_by_text("Invented district").count() == 1, page
+        mark = app.page.get_by_text("Invented district")
+        mark.first.wait_for()
+        assert mark.count() == 1, page
 
 
 def test_a_disturbed_site_is_told_what_its_range_is_of(app, records_file):
     told = "says nothing yet of this disturbed ground"
     show(app, f"site/{records_file[1]['sage']}/production")
-    assert app.page.get_by_text(told).count() == 1
+    app.page.get_by_text(told).wait_for()
     show(app, f"site/{records_file[1]['sage']}/place")
     app.page.get_by_role("button", name="Undisturbed ground").first.click()
     show(app, f"site/{records_file[1]['sage']}/production")
@@ -434,6 +440,7 @@ def test_a_plant_looked_for_out_of_its_season_says_that_it_does_not_weigh(app, r
 def test_the_book_holds_every_caution_of_the_region(app, demo_files):
     texts = json.loads(demo_files["regions/sorrel_plateau/texts.en.json"])
     show(app, "book/cautions")
+    app.page.locator(".cautions").first.wait_for()
     said = app.page.locator("main").inner_text()
     assert [one["id"] for one in texts["region"]["cautions"] if one["text"] not in said] == []
 
