@@ -316,6 +316,21 @@ def test_each_verdict_opens_the_edge_in_its_own_way(app, records_file):
     assert seen["thin"][".even"] == 12
 
 
+def test_no_bag_is_red_before_its_tag_or_the_print_key_is_touched(app, records_file):
+    show(app, "sites")
+    show(app, f"site/{records_file[1]['edge']}/reclaim/order")
+    page = app.page
+    page.locator(".bag").first.wait_for()
+    bags = page.locator(".bag").count()
+    assert bags > 1
+    assert page.locator(".bag.held, .bag .hold").count() == 0
+    assert page.locator(".bag", has_text="Tag not typed yet").count() == bags
+    page.get_by_role("button", name="Print the order").click()
+    page.locator(".bag.held").first.wait_for()
+    assert page.locator(".bag.held").count() == bags
+    assert page.get_by_role("button", name="Print the order").count() == 0
+
+
 def test_three_looks_are_read_together_and_kept(app, records_file):
     edge = records_file[1]["edge"]
     page = app.page
@@ -383,21 +398,6 @@ def test_an_area_is_typed_and_a_bad_one_is_named_at_its_field(app, records_file)
     page.get_by_role("button", name="More area").click()
     assert area.input_value() == "0.5"
     assert float(live.inner_text().split()[0]) == pytest.approx(whole / 20, abs=0.005)
-
-
-def test_no_bag_is_red_before_its_tag_or_the_print_key_is_touched(app, records_file):
-    show(app, "sites")
-    show(app, f"site/{records_file[1]['edge']}/reclaim/order")
-    page = app.page
-    page.locator(".bag").first.wait_for()
-    bags = page.locator(".bag").count()
-    assert bags > 1
-    assert page.locator(".bag.held, .bag .hold").count() == 0
-    assert page.locator(".bag", has_text="Tag not typed yet").count() == bags
-    page.get_by_role("button", name="Print the order").click()
-    page.locator(".bag.held").first.wait_for()
-    assert page.locator(".bag.held").count() == bags
-    assert page.get_by_role("button", name="Print the order").count() == 0
 
 
 def test_every_page_with_odds_says_that_no_real_plot_tested_it(app, records_file):
