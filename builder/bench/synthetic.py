@@ -13,7 +13,7 @@ from typing import Any
 
 import numpy as np
 
-from builder.rows import block_text, flow_text, plain, read_yaml, scalar_text
+from builder.rows import block_text, flow_text, read_shipped, scalar_text
 from builder.tables.regions import YAML_TABLES
 
 ZONAL, AZONAL = "ABCDEFGHJKLMNOPQRSTUV", "WXYZ"
@@ -28,7 +28,7 @@ def synthetic_region(source: Path, out: Path, zones: int, plants: int, seed: int
     source         folder of a region; its own zones and plants come first
     zones, plants  how many; ValueError for fewer than the source has
     """
-    tables = {name: _read(source / f"{name}.yaml") for name in YAML_TABLES}
+    tables = {name: read_shipped(source / f"{name}.yaml") for name in YAML_TABLES}
     rng = np.random.default_rng(seed)
     base_zones, base_plants = tables["zones"]["zones"], tables["plants"]["plants"]
     if zones < len(base_zones) or plants < len(base_plants):
@@ -60,14 +60,6 @@ def synthetic_region(source: Path, out: Path, zones: int, plants: int, seed: int
     climate = (source / "climate.csv").read_text(encoding="utf-8")
     (out / "climate.csv").write_text(_climate(climate, zone_names), encoding="utf-8")
     return out
-
-
-def _read(path: Path) -> Table:
-    root, problems = read_yaml(path, path.name)
-    if root is None or problems:
-        raise ValueError(f"{path.name} cannot be read")
-    table: Table = plain(root)
-    return table
 
 
 def _names(ids: list[str], wanted: int) -> list[tuple[str, str, int]]:

@@ -13,7 +13,7 @@ from markupsafe import Markup
 
 from builder.key.bulk import VERDICTS
 from builder.proof.charts import bars_chart, calibration_chart, confusion_chart, pair_bar
-from builder.rows import plain, read_yaml
+from builder.rows import read_shipped
 
 HERE = Path(__file__).parent
 FIGURES = (
@@ -58,12 +58,7 @@ class Page:
 @cache
 def words() -> dict[str, Any]:
     """The sentences of the report."""
-    path = HERE / "words" / "en.yaml"
-    root, problems = read_yaml(path, str(path))
-    if root is None or problems:
-        raise ValueError(f"{path}: {problems}")
-    said: dict[str, Any] = plain(root)
-    return said
+    return read_shipped(HERE / "words" / "en.yaml")
 
 
 def report_html(proof: dict[str, Any]) -> str:

@@ -6,7 +6,7 @@ from functools import cache
 from pathlib import Path
 from typing import Any
 
-from builder.rows import plain, read_yaml
+from builder.rows import read_shipped
 
 FILE = Path(__file__).resolve().parent / "words" / "en.yaml"
 
@@ -14,11 +14,7 @@ FILE = Path(__file__).resolve().parent / "words" / "en.yaml"
 @cache
 def read_sentences() -> dict[str, Any]:
     """Sentences by use. Raises ValueError when the file is wrong: it ships with the program."""
-    row, problems = read_yaml(FILE)
-    if problems or row is None:
-        raise ValueError(f"{FILE.name}: {problems}")
-    read: dict[str, Any] = plain(row)
-    return read
+    return read_shipped(FILE)
 
 
 class FileRefused(Exception):  # noqa: N818 - told to the person

@@ -8,6 +8,7 @@ that YAML turns into something else (yes, no, on, off, dates, 012, 1:30, 1_000, 
 from builder.rows.csv_rows import Sheet, csv_text, parse_csv, read_csv
 from builder.rows.files import read_text
 from builder.rows.nodes import Items, Node, Row, Scalar, Value, descend, plain
+from builder.rows.shipped import read_shipped
 from builder.rows.writing import block_text, flow_text, scalar_text, wrapped
 from builder.rows.yaml_rows import is_turned, parse_yaml, read_yaml
 
@@ -27,6 +28,7 @@ __all__ = [
     "parse_yaml",
     "plain",
     "read_csv",
+    "read_shipped",
     "read_text",
     "read_yaml",
     "scalar_text",

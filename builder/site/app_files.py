@@ -8,7 +8,7 @@ import re
 from collections.abc import Iterable, Mapping
 from pathlib import Path
 
-from builder.rows import plain, read_yaml
+from builder.rows import read_shipped
 from builder.site.icons import icons
 from builder.site.join import joined
 from builder.site.slim import slim_script, slim_style
@@ -89,10 +89,7 @@ def _words(app: Path) -> dict[str, bytes]:
     """The words of each language as JSON, and the list of languages with their own names."""
     files, languages = {}, {}
     for path in sorted((app / "words").glob("*.yaml")):
-        root, problems = read_yaml(path, path.name)
-        if root is None or problems:
-            raise ValueError(f"{path.name}: {problems[0].wrong if problems else 'empty'}")
-        words = plain(root)
+        words = read_shipped(path)
         languages[path.stem] = words["language"]
         files[f"{path.stem}.json"] = _json(words)
     files["languages.json"] = _json(languages)

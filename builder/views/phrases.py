@@ -4,7 +4,7 @@ from functools import cache
 from pathlib import Path
 from typing import Any
 
-from builder.rows import plain, read_yaml
+from builder.rows import read_shipped
 
 FOLDER = Path(__file__).parent / "words"
 FIRST = "en"
@@ -67,17 +67,10 @@ def phrases(language: str = FIRST, folder: Path = FOLDER) -> Phrases:
     if language not in languages(folder):
         known = ", ".join(languages(folder))
         raise ValueError(f'there are no words for "{language}"; known: {known}')
-    return Phrases(language, _tree(language, folder), _tree(FIRST, folder))
+    own, first = (read_shipped(folder / f"{name}.yaml") for name in (language, FIRST))
+    return Phrases(language, own, first)
 
 
 def languages(folder: Path = FOLDER) -> list[str]:
     """Languages that have a words file."""
     return sorted(path.stem for path in folder.glob("*.yaml"))
-
-
-def _tree(language: str, folder: Path) -> dict[str, Any]:
-    row, problems = read_yaml(folder / f"{language}.yaml")
-    if row is None or problems:
-        raise ValueError(f"{folder / language}.yaml cannot be read: {problems}")
-    tree: dict[str, Any] = plain(row)
-    return tree
